@@ -1,0 +1,29 @@
+#pragma once
+
+#include <optional>
+#include <vector>
+
+#include "loqsmith/base/outcome.hpp"
+#include "loqsmith/calibration/calibration.hpp"
+
+namespace loqsmith {
+
+/// Fits the curve by QR (never normal equations) to the points marked `used`.
+/// A level with concentration 0 enters unweighted fits only (with a weight it
+/// is left out with the note "zero-level-unweighted-only") and never counts as
+/// a level. All levels count as accepted until accept_levels() says otherwise.
+///
+/// @return not applicable: fewer distinct levels than the model has
+///         coefficients plus one, all responses equal, slope not positive,
+///         settings that this version does not compute.
+Outcome<Calibration> fit_calibration(std::vector<StandardPoint> points,
+                                     const CalibrationSettings& settings);
+
+/// Which levels are accepted: used, and mean back-calculation within
+/// `percent` (`lowest_percent` at the lowest level; the same where absent).
+/// No limit: every used level. Failing lowest or highest levels narrow the
+/// accepted range without a new fit.
+void accept_levels(Calibration& calibration, std::optional<double> percent,
+                   std::optional<double> lowest_percent);
+
+}  // namespace loqsmith

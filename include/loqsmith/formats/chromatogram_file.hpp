@@ -1,0 +1,59 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <string_view>
+#include <vector>
+
+#include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/chromatogram/trace_selector.hpp"
+
+namespace loqsmith {
+
+/// What the method says about reading files (`<traces>` of the method).
+struct ReadPolicy {
+  /// Unit for files that state none: "minute", "second", or empty (refuse).
+  std::string time_unit_if_none;
+  /// A wrong checksum inside a file refuses it; otherwise it is a warning.
+  bool checksum_required = true;
+};
+
+/// One run (mzML) or outermost experiment step (AnIML) of a file.
+struct FileRun {
+  std::string id;
+  std::string name;
+  std::string sample_name;  ///< empty: the file does not say
+  std::string start_time;   ///< as written in the file; empty: not stated
+};
+
+/// What a chromatogram file holds.
+struct FileContents {
+  std::string format;  ///< "mzML 1.1", "indexed mzML 1.1", "AnIML 0.90"
+  std::vector<FileRun> runs;
+  std::vector<Trace> traces;
+  std::vector<RefusedTrace> refused;
+  std::vector<std::string> skipped;   ///< series that are no trace, and why
+  std::vector<std::string> warnings;  ///< of the file as a whole
+};
+
+/// Reads an mzML or AnIML document; the root element decides which.
+///
+/// @param bytes   the whole file
+/// @param name    for messages
+/// @param wanted  nothing: every trace is decoded; otherwise only traces that
+///                one of these selectors matches (the rest is left out)
+/// @throws InputError where the file as a whole must be refused. A trace that
+///         must be refused alone stands in `refused`.
+FileContents read_chromatogram_file(
+    std::string_view bytes, const std::string& name, const ReadPolicy& policy,
+    const std::vector<TraceSelector>* wanted = nullptr);
+
+/// The one trace of the file (of its run `run`, when not empty) that the
+/// selector means.
+/// @throws InputError for none (lists what there is), several (lists the
+///         candidates), or one that was refused (with its own problem).
+const Trace& select_trace(const FileContents& contents,
+                          const TraceSelector& selector, const std::string& run,
+                          const std::string& name);
+
+}  // namespace loqsmith

@@ -1,0 +1,58 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "loqsmith/base/outcome.hpp"
+#include "loqsmith/chromatogram/peak.hpp"
+#include "loqsmith/chromatogram/sequence.hpp"
+#include "loqsmith/judgement/rows.hpp"
+#include "loqsmith/judgement/settings.hpp"
+
+namespace loqsmith {
+
+/// What was measured of one analyte in one injection (conditioning ones are
+/// not handed in).
+struct MeasuredInjection {
+  const Injection* injection = nullptr;
+  /// No peak: the file or trace could not be read ("file-refused: ...",
+  /// "trace-missing: ..."), or measure_peak() had no number.
+  Outcome<Peak> peak = NotApplicable{"not measured"};
+  /// Nothing: the analyte has no internal standard.
+  std::optional<Outcome<Peak>> internal_standard;
+};
+
+/// From responses to verdicts: responses (area, height or ratio to the
+/// internal standard), calibration, limits, checks, and one result for each
+/// injection of every role that is quantified. A pure function.
+///
+/// @param template_reason  why the analyte could not be learned; empty: it was.
+///                         Then every result is withheld with that reason.
+AnalyteJudgement judge_analyte(
+    const AnalyteSettings& settings, const UnitSettings& units,
+    const InternalStandardSettings* internal_standard, const Sequence& sequence,
+    const std::vector<MeasuredInjection>& injections,
+    const std::string& template_reason);
+
+/// What `night` found about the files; the checks that every run makes.
+struct SequenceFacts {
+  struct FileFact {
+    int injection = 0;
+    std::string problem;          ///< refused file or trace; empty: read
+    std::string data_hash;        ///< over the trace data used; empty: none
+    std::string start_time;       ///< from the file; empty: not stated
+    std::string sample_name;      ///< from the file; empty: not stated
+    std::vector<std::string> warnings;
+  };
+  std::vector<FileFact> files;              ///< in run order
+  std::vector<std::string> unlisted_files;  ///< in the folder, in no row
+};
+
+/// unlisted-file, same-data-twice, order-differs, name-differs, time-differs,
+/// expired-lot, file-refused, file-warning: one row for each finding, and one
+/// passing row for each of these checks that found nothing.
+std::vector<CheckRow> always_checked(const Sequence& sequence,
+                                     const SequenceFacts& facts);
+
+}  // namespace loqsmith

@@ -1,0 +1,74 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "loqsmith/base/outcome.hpp"
+#include "loqsmith/calibration/calibration.hpp"
+#include "loqsmith/chromatogram/role.hpp"
+#include "loqsmith/judgement/settings.hpp"
+#include "loqsmith/limits/governing.hpp"
+
+namespace loqsmith {
+
+/// One row of results.csv. Limits are this sample's own.
+struct ResultRow {
+  int injection = 0;
+  std::string sample;
+  Role role = Role::Sample;
+  std::string analyte;
+  std::string set;  ///< calibration set, "1" where there is only one
+  bool found = false;
+  std::optional<double> retention_minutes;
+  std::optional<double> response;
+  std::optional<double> signal_to_noise;
+  std::optional<double> vial_concentration;
+  double dilution = 1.0;
+  std::optional<double> result;  ///< full precision, never censored
+  std::string unit;
+  std::optional<double> calibration_uncertainty;  ///< expanded, 95 %
+  std::optional<double> detection_limit;
+  std::optional<double> quantitation_limit;
+  std::string detection_procedure;
+  std::string quantitation_procedure;
+  Status status = Status::Withheld;
+  std::string reported;  ///< the text that may leave the laboratory
+  std::string qualifier;
+  std::vector<std::string> reasons;  ///< most serious first
+};
+
+/// One row of checks.csv.
+struct CheckRow {
+  std::string check;
+  std::string analyte;           ///< empty: all
+  std::optional<int> injection;  ///< nothing: none in particular
+  std::optional<double> value;
+  std::optional<double> low;
+  std::optional<double> high;
+  std::string unit;
+  std::optional<bool> passed;  ///< nothing: not checked, the note says why
+  std::string action;          ///< "withhold", "flag"; empty: none
+  std::string affects;
+  std::string note;
+};
+
+/// One calibration set of one analyte with its limits.
+struct CalibrationSet {
+  std::string set;
+  Outcome<Calibration> calibration = NotApplicable{"no standards"};
+  /// All standards; where there is no calibration, as they were offered.
+  std::vector<StandardPoint> standards;
+  LimitsOfAnalyte limits;
+};
+
+/// All that is said of one analyte.
+struct AnalyteJudgement {
+  std::string analyte;
+  std::string concentration_unit;
+  std::vector<CalibrationSet> sets;
+  std::vector<ResultRow> results;  ///< in run order
+  std::vector<CheckRow> checks;
+};
+
+}  // namespace loqsmith

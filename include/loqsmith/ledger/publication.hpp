@@ -1,0 +1,66 @@
+#pragma once
+
+#include <chrono>
+#include <filesystem>
+#include <memory>
+#include <string>
+#include <utility>
+#include <vector>
+
+#include "loqsmith/ledger/ledger.hpp"
+
+namespace loqsmith {
+
+/// OUT, opened for writing: creates the folder where needed (Halt 73), takes
+/// the lock for each step, runs recovery first. All failures are Halt: 74 for
+/// input, output and a damaged ledger, 75 for locks not to be had in time.
+struct PublicationPlace {
+  std::filesystem::path out;
+  LedgerActor actor;
+  Clock clock;
+  std::chrono::seconds wait{0};
+};
+
+/// Creates OUT and mends what an interrupted run left, as the architecture
+/// says. @return what was found, one sentence each, for the terminal; empty
+/// where there was nothing.
+std::vector<std::string> recover(const PublicationPlace& place);
+
+/// A run at work. Holds the owner lock of its staging folder until destroyed;
+/// destroyed without publish(), the next writer records it as abandoned.
+class RunAtWork {
+ public:
+  /// Step 1: recovery, run number, line `run-begun`, staging folder.
+  /// `sequence` may hold '/' (a path below ROOT).
+  /// @param folder  where the sequence lies; a name already used for another
+  ///                folder is refused: InputError.
+  /// @throws Halt 75 when the same sequence is at work elsewhere.
+  static RunAtWork begin(
+      const PublicationPlace& place, const std::string& sequence,
+      const std::string& folder,
+      const std::vector<std::pair<std::string, std::string>>& detail);
+
+  RunAtWork(RunAtWork&&) noexcept;
+  RunAtWork& operator=(RunAtWork&&) noexcept;
+  RunAtWork(const RunAtWork&) = delete;
+  RunAtWork& operator=(const RunAtWork&) = delete;
+  ~RunAtWork();
+
+  int run_number() const;
+  const LedgerPlace& begun() const;  ///< its run-begun line
+  const std::filesystem::path& staging() const;
+  const std::vector<std::string>& recovered() const;
+
+  /// Steps 3 and 4: writes manifest.json over everything in staging, flushes
+  /// all files and folders, appends `run-published`, renames into place.
+  /// @return the published folder.
+  std::filesystem::path publish(
+      const std::vector<std::pair<std::string, std::string>>& detail);
+
+ private:
+  struct State;
+  explicit RunAtWork(std::unique_ptr<State> state);
+  std::unique_ptr<State> state_;
+};
+
+}  // namespace loqsmith

@@ -1,0 +1,53 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "loqsmith/base/outcome.hpp"
+#include "loqsmith/calibration/calibration.hpp"
+#include "loqsmith/limits/settings.hpp"
+#include "loqsmith/signal/settings.hpp"
+
+namespace loqsmith {
+
+/// One blank's signed response over the template window.
+struct BlankResponse {
+  int injection = 0;
+  BlankKind kind = BlankKind::Solvent;  ///< never All
+  double response = 0.0;
+  bool after_high = false;  ///< right after an injection above half the range
+  std::string prep;
+};
+
+/// One low spike's signed, uncensored found concentration, in the vial.
+struct SpikeResult {
+  int injection = 0;
+  double nominal_vial = 0.0;
+  double found_vial = 0.0;
+  std::string prep;
+};
+
+/// Peak height of one standard with a found peak.
+struct StandardHeight {
+  int injection = 0;
+  double concentration = 0.0;
+  double height = 0.0;
+};
+
+/// Everything that is known of one analyte in one calibration set.
+struct LimitEvidence {
+  std::vector<BlankResponse> blanks;  ///< in run order
+  std::vector<SpikeResult> spikes;
+  std::vector<StandardHeight> heights;
+  std::optional<Calibration> calibration;
+  /// Noise in height units as the measure defines it (h, or sd), median over
+  /// the sources used for the lowest standards; nothing: not measured.
+  std::optional<double> noise;
+  NoiseSettings::Measure noise_measure = NoiseSettings::Measure::HalfPeakToPeak;
+  bool bounds_own = false;           ///< integration bounds="own"
+  bool baseline_biased = false;      ///< asymmetric least squares or snip
+  bool carry_over_passed = false;    ///< the carry-over check is present and passed
+};
+
+}  // namespace loqsmith

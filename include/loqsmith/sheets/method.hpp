@@ -1,0 +1,36 @@
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "loqsmith/chromatogram/trace_selector.hpp"
+#include "loqsmith/judgement/settings.hpp"
+
+namespace loqsmith {
+
+/// A default that was used because the method leaves the attribute out.
+struct DefaultUsed {
+  std::string element;    ///< "integration", "analyte[atrazine]/calibration"
+  std::string attribute;  ///< "baseline"
+  std::string value;      ///< "valley"
+};
+
+/// method.xml, whole and merged.
+struct Method {
+  std::string id;
+  std::string revision;
+  std::string title;
+  UnitSettings units;
+  std::string time_unit_if_none;  ///< "minute", "second", empty: refuse
+  bool checksum_required = true;
+  std::vector<TraceSelector> traces;
+  std::vector<InternalStandardSettings> internal_standards;
+  std::vector<AnalyteSettings> analytes;  ///< in the method's order
+  std::vector<DefaultUsed> defaults_used;
+
+  const TraceSelector* trace(const std::string& trace_id) const;
+  const InternalStandardSettings* internal_standard(
+      const std::string& standard_id) const;
+};
+
+}  // namespace loqsmith

@@ -1,0 +1,55 @@
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "loqsmith/base/outcome.hpp"
+#include "loqsmith/chromatogram/role.hpp"
+#include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/signal/settings.hpp"
+
+namespace loqsmith {
+
+/// What one standard, check standard or control shows of a target.
+struct TeacherPeak {
+  int injection = 0;
+  Role role = Role::Standard;
+  double retention_minutes = 0.0;   ///< interpolated apex
+  double left_minutes = 0.0;        ///< apex minus left foot, > 0
+  double right_minutes = 0.0;       ///< right foot minus apex, > 0
+  double width_half_minutes = 0.0;  ///< > 0
+  double height = 0.0;              ///< above the baseline between the feet
+  double height_over_noise = 0.0;   ///< multiples of the noise sd
+  bool saturated = false;           ///< flat top
+  bool left_overlapped = false;     ///< a neighbour's valley is the left foot
+  bool right_overlapped = false;
+};
+
+/// Where the target is to be looked for and over what window it is measured.
+struct WindowTemplate {
+  double left_minutes = 0.0;  ///< distance of the feet from the apex, medians
+  double right_minutes = 0.0;
+  double width_half_minutes = 0.0;  ///< median
+  bool weak = false;          ///< no teacher at 50 noise sd: reason weak-template
+  std::vector<int> teachers;  ///< injections whose feet entered, in run order
+  /// Retention time in run order; piecewise linear, constant beyond the last.
+  std::vector<std::pair<int, double>> drift;  ///< injection, minutes
+};
+
+/// The peak nearest the method's retention time within its window.
+/// @return not applicable: no peak in the window, trace does not cover it.
+Outcome<TeacherPeak> observe_teacher(const Trace& trace,
+                                     const TargetSettings& target,
+                                     int injection, Role role);
+
+/// Medians over the peaks fit to teach: height at least 50 noise standard
+/// deviations, not saturated, not overlapped; if there is none, the highest
+/// unsaturated standards from 10 up (an overlapped one gives its free side's
+/// foot and the valley), then `weak`.
+/// @return not applicable where nothing may teach, with the reason.
+Outcome<WindowTemplate> learn_template(const std::vector<TeacherPeak>& seen);
+
+/// Where the target is expected in an injection, from the drift.
+double expected_minutes(const WindowTemplate& window, int injection);
+
+}  // namespace loqsmith

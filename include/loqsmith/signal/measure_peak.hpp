@@ -1,0 +1,45 @@
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "loqsmith/base/outcome.hpp"
+#include "loqsmith/chromatogram/peak.hpp"
+#include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/signal/learn.hpp"
+#include "loqsmith/signal/noise.hpp"
+#include "loqsmith/signal/settings.hpp"
+
+namespace loqsmith {
+
+/// Measures a target in one trace over the template window, placed at the
+/// found apex, or at the expected time where no peak is found.
+///
+/// The straight baseline runs through the mean of the points just outside each
+/// foot, over half a width at half height and at least 5 points. A neighbour's
+/// valley inside the window bounds it (`overlap` = "drop", reason
+/// "overlapped"). The area is trapezoids of signal minus baseline over uneven
+/// times; nothing is smoothed for it.
+///
+/// @param noise         of the source that the settings name; may be absent
+/// @param noise_source  "blank 3" or "same trace"
+/// @return not applicable (a reason word, then words): "window-not-covered",
+///         "too-few-points" (under 5), "no-signal".
+Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
+                           const WindowTemplate& window, double expected,
+                           const Outcome<NoiseEstimate>& noise,
+                           const std::string& noise_source);
+
+/// What a figure draws of one measured peak: a stretch of the trace around it
+/// and its baseline.
+struct PeakCurve {
+  std::vector<double> minutes;
+  std::vector<double> signal;
+  double baseline_start = 0.0;  ///< signal of the baseline at the feet
+  double baseline_end = 0.0;
+};
+PeakCurve peak_curve(const Trace& trace, const Peak& peak,
+                     const WindowTemplate& window,
+                     double margin_widths = 4.0);
+
+}  // namespace loqsmith
