@@ -29,7 +29,7 @@ struct InputFile {
   std::string path;    ///< relative to the folder
   std::string sha256;  ///< lower-case hex; empty where it could not be read
   std::uint64_t bytes = 0;
-  std::string format;                 ///< "mzML 1.1", ...
+  std::string format;  ///< "mzML 1.1", ...
   std::vector<std::string> warnings;
 };
 
@@ -58,7 +58,7 @@ struct PublishedRun {
   std::string processor_class;  ///< e.g. "x86-64 avx2 fma"
   std::string begun;            ///< RFC 3339 UTC
   std::string finished;
-  std::string ledger_head;  ///< "12:sha256" of this run's run-begun line
+  std::string ledger_head;        ///< "12:sha256" of this run's run-begun line
   std::vector<InputFile> inputs;  ///< sheets first, then files by path
   std::vector<std::pair<int, InputProblem>> problems;  ///< injection, problem
   std::vector<TargetRecord> targets;
