@@ -91,7 +91,7 @@ std::string nearest_name(std::string_view name,
   return best;
 }
 
-std::string quoted(std::string_view text) {
+std::string in_quotes(std::string_view text) {
   constexpr std::size_t kMost = 80;
   constexpr std::string_view kHex = "0123456789ABCDEF";
   std::string result = "\"";

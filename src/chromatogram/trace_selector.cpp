@@ -107,7 +107,7 @@ bool matches(const TraceSelector& selector, const TraceHeader& header) {
 
 std::string describe(const TraceSelector& selector) {
   std::string text = "kind " + kind_word(selector.kind);
-  if (!selector.name.empty()) text += ", name with " + quoted(selector.name);
+  if (!selector.name.empty()) text += ", name with " + in_quotes(selector.name);
   if (selector.precursor_mz) {
     text += ", precursor " + shortest(*selector.precursor_mz);
   }

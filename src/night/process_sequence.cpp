@@ -1,1 +1,179 @@
-namespace loqsmith {}
+#include "loqsmith/night/process_sequence.hpp"
+
+#include <algorithm>
+#include <iterator>
+#include <optional>
+#include <utility>
+
+#include "loqsmith/base/input_error.hpp"
+#include "loqsmith/judgement/judge_analyte.hpp"
+#include "loqsmith/ledger/publication.hpp"
+#include "loqsmith/night/build_info.hpp"
+#include "loqsmith/night/learn_sequence.hpp"
+#include "loqsmith/night/measure_sequence.hpp"
+#include "loqsmith/night/sequence_folder.hpp"
+#include "loqsmith/night/stage_run.hpp"
+
+namespace loqsmith {
+namespace {
+
+namespace fs = std::filesystem;
+
+// The sequence folder is read only, so OUT may not lie in it.
+void refuse_out_inside(const fs::path& folder, const fs::path& out) {
+  const fs::path real_out = fs::weakly_canonical(out);
+  const auto [end, unused] = std::mismatch(folder.begin(), folder.end(),
+                                           real_out.begin(), real_out.end());
+  if (end == folder.end()) {
+    throw Halt(ExitStatus::WrongUse,
+               out.string() + " lies in the sequence folder, which is only "
+                              "read; name another place with --out");
+  }
+}
+
+std::string name_of(const ProcessOptions& options) {
+  if (!options.as.empty()) return options.as;
+  const fs::path real = fs::weakly_canonical(options.folder);
+  return real.filename().string();
+}
+
+// The judgement of one analyte from what was measured of it.
+AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
+                       const Measured& measured,
+                       const AnalyteSettings& analyte) {
+  const Method& method = folder.sheets.method;
+  const auto place = [&](const std::string& id) {
+    const auto found = std::find_if(
+        learned.targets.begin(), learned.targets.end(),
+        [&](const TargetSettings& target) { return target.id == id; });
+    return static_cast<std::size_t>(found - learned.targets.begin());
+  };
+  const InternalStandardSettings* standard =
+      analyte.internal_standard.empty()
+          ? nullptr
+          : method.internal_standard(analyte.internal_standard);
+  const std::size_t own = place(analyte.target.id);
+  std::vector<MeasuredInjection> injections;
+  const std::vector<Injection>& rows = folder.sheets.sequence.injections;
+  for (std::size_t i = 0; i < rows.size(); ++i) {
+    if (rows[i].role == Role::Conditioning) continue;
+    const std::vector<Outcome<Peak>>& peaks = measured.injections[i].peaks;
+    MeasuredInjection injection{&rows[i], peaks[own], std::nullopt};
+    if (standard != nullptr) {
+      injection.internal_standard = peaks[place(standard->target.id)];
+    }
+    injections.push_back(std::move(injection));
+  }
+  std::string not_learned;
+  if (!learned.windows[own]) not_learned = learned.windows[own].reason();
+  return judge_analyte(analyte, method.units, standard,
+                       folder.sheets.sequence, injections, not_learned);
+}
+
+SequenceFacts facts_of(const SequenceFolder& folder,
+                       const Measured& measured) {
+  SequenceFacts facts;
+  facts.unlisted_files = folder.unlisted_files;
+  for (const InjectionMeasured& injection : measured.injections) {
+    facts.files.push_back(injection.fact);
+  }
+  return facts;
+}
+
+// Everything that was found, in the shape in which it is published.
+PublishedRun assemble(const SequenceFolder& folder, const Learned& learned,
+                      Measured measured) {
+  PublishedRun run;
+  run.sequence = folder.sheets.sequence;
+  run.method = folder.sheets.method;
+  run.inputs = folder.sheet_files;
+  run.inputs.insert(run.inputs.end(), measured.inputs.begin(),
+                    measured.inputs.end());
+  for (std::size_t i = 0; i < learned.targets.size(); ++i) {
+    run.targets.push_back({learned.targets[i].id, learned.windows[i]});
+  }
+  for (const AnalyteSettings& analyte : folder.sheets.method.analytes) {
+    run.analytes.push_back(judge(folder, learned, measured, analyte));
+  }
+  run.sequence_checks =
+      always_checked(folder.sheets.sequence, facts_of(folder, measured));
+  for (InjectionMeasured& injection : measured.injections) {
+    for (std::size_t i = 0; i < injection.peaks.size(); ++i) {
+      run.peaks.push_back({injection.injection, learned.targets[i].id,
+                           std::move(injection.peaks[i])});
+    }
+    for (InputProblem& problem : injection.problems) {
+      run.problems.emplace_back(injection.injection, std::move(problem));
+    }
+    std::move(injection.curves.begin(), injection.curves.end(),
+              std::back_inserter(run.curves));
+  }
+  return run;
+}
+
+std::string sheet_hash(const SequenceFolder& folder, const std::string& name) {
+  for (const InputFile& file : folder.sheet_files) {
+    if (file.path == name) return file.sha256;
+  }
+  return {};
+}
+
+std::vector<std::pair<std::string, std::string>> begun_detail(
+    const SequenceFolder& folder) {
+  const Method& method = folder.sheets.method;
+  return {{"method", method.id},
+          {"revision", method.revision},
+          {"method_sha256", sheet_hash(folder, "method.xml")},
+          {"sequence_sha256", sheet_hash(folder, "sequence.csv")},
+          {"levels_sha256", sheet_hash(folder, "levels.csv")}};
+}
+
+void describe_problems(const PublishedRun& run, ProcessOutcome& outcome) {
+  for (const auto& [injection, problem] : run.problems) {
+    outcome.messages.push_back("injection " + std::to_string(injection) + ": " +
+                               describe(problem));
+  }
+}
+
+}  // namespace
+
+ProcessOutcome process_sequence(const ProcessOptions& options) {
+  ProcessOutcome outcome;
+  const std::string name = name_of(options);
+  const SequenceFolder folder = open_sequence_folder(options.folder, name);
+  refuse_out_inside(folder.path, options.out);
+  const PublicationPlace place{options.out, options.actor, options.clock,
+                               options.wait};
+  RunAtWork work = RunAtWork::begin(place, name, folder.path.string(),
+                                    begun_detail(folder));
+  outcome.messages = work.recovered();
+  const std::string begun = options.clock();
+
+  const auto start = std::chrono::steady_clock::now();
+  const Learned learned = learn_sequence(folder, options.jobs);
+  const auto learned_at = std::chrono::steady_clock::now();
+  Measured measured =
+      measure_sequence(folder, learned, options.jobs, options.progress);
+  const auto measured_at = std::chrono::steady_clock::now();
+
+  PublishedRun run = assemble(folder, learned, std::move(measured));
+  run.run_number = work.run_number();
+  run.program_version = program_version();
+  run.build = build_description();
+  run.processor_class = processor_class();
+  run.begun = begun;
+  run.finished = options.clock();
+  run.ledger_head = describe(work.begun());
+  stage_run(work.staging(), folder, run, options.report);
+  const bool person = needs_a_person(run);
+  outcome.published =
+      work.publish({{"needs_a_person", person ? "yes" : "no"}});
+  outcome.status = person ? ExitStatus::NeedsPerson : ExitStatus::Done;
+  describe_problems(run, outcome);
+  outcome.learn_seconds = learned_at - start;
+  outcome.measure_seconds = measured_at - learned_at;
+  outcome.publish_seconds = std::chrono::steady_clock::now() - measured_at;
+  return outcome;
+}
+
+}  // namespace loqsmith

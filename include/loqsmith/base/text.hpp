@@ -18,7 +18,7 @@ std::string nearest_name(std::string_view name,
 
 /// The text in double quotes, control characters and bytes that are no UTF-8
 /// written as \xHH, cut after 80 characters: for messages about hostile input.
-std::string quoted(std::string_view text);
+std::string in_quotes(std::string_view text);
 
 /// True when every byte belongs to well-formed UTF-8 (no surrogates, no
 /// overlong forms, nothing above U+10FFFF).

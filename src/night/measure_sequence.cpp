@@ -1,0 +1,238 @@
+#include "loqsmith/night/measure_sequence.hpp"
+
+#include <algorithm>
+#include <map>
+#include <mutex>
+#include <optional>
+#include <string>
+
+#include "loqsmith/base/digest.hpp"
+#include "loqsmith/base/input_error.hpp"
+#include "loqsmith/night/figure_choice.hpp"
+#include "loqsmith/night/file_visit.hpp"
+#include "loqsmith/night/parallel.hpp"
+
+namespace loqsmith {
+namespace {
+
+struct NoiseFor {
+  Outcome<NoiseEstimate> noise;
+  std::string source;
+};
+
+NoiseFor noise_for(const Learned& learned, std::size_t target,
+                   const Trace& trace, int injection, double expected) {
+  const TargetSettings& settings = learned.targets[target];
+  if (settings.noise.source == NoiseSettings::Source::Blank) {
+    const BlankNoise* blank =
+        nearest_blank(learned.blank_noise[target], injection);
+    if (blank != nullptr) {
+      return {blank->noise, "blank " + std::to_string(blank->injection)};
+    }
+  }
+  const WindowTemplate& window = *learned.windows[target];
+  Outcome<NoiseEstimate> noise = measure_noise_beside(
+      trace, expected - window.left_minutes, expected + window.right_minutes,
+      window.width_half_minutes, settings.noise);
+  if (noise && settings.noise.source == NoiseSettings::Source::Blank) {
+    noise.value().reasons.emplace_back("noise-from-same-trace");
+  }
+  return {std::move(noise), "same trace"};
+}
+
+// All that is needed while one injection is measured.
+class InjectionAtWork {
+ public:
+  InjectionAtWork(const SequenceFolder& folder, const Learned& learned,
+                  const FigureChoice& figures, const FileVisit& visit,
+                  const Injection& injection)
+      : folder_(folder),
+        learned_(learned),
+        figures_(figures),
+        visit_(visit),
+        injection_(injection) {
+    result_.injection = injection.number;
+    result_.fact.injection = injection.number;
+  }
+
+  InjectionMeasured measure() {
+    state_file_facts();
+    if (injection_.role == Role::Conditioning) {
+      result_.problems = visit_.problems;
+      return std::move(result_);
+    }
+    for (std::size_t i = 0; i < learned_.targets.size(); ++i) {
+      result_.peaks.push_back(measure_target(i));
+    }
+    result_.fact.data_hash = any_trace_ ? hash_.finish_hex() : std::string{};
+    return std::move(result_);
+  }
+
+ private:
+  void state_file_facts() {
+    result_.fact.warnings = visit_.contents.warnings;
+    if (!visit_.problems.empty()) {
+      result_.fact.problem = describe(visit_.problems.front());
+    }
+    if (const FileRun* run = run_of(visit_.contents, injection_)) {
+      result_.fact.start_time = run->start_time;
+      result_.fact.sample_name = run->sample_name;
+    }
+  }
+
+  Outcome<Peak> measure_target(std::size_t index) {
+    const TargetSettings& target = learned_.targets[index];
+    if (!visit_.problems.empty()) {
+      if (result_.problems.empty()) result_.problems = visit_.problems;
+      return NotApplicable{"file-refused: " + result_.fact.problem};
+    }
+    const Trace* trace = find_trace(target.trace);
+    if (trace == nullptr) {
+      return NotApplicable{"trace-missing: " + trace_problem_[target.trace]};
+    }
+    const Outcome<WindowTemplate>& window = learned_.windows[index];
+    if (!window) return NotApplicable{"not-learned: " + window.reason()};
+    const double expected =
+        expected_minutes(*window, injection_.number) + shift_for(target.id);
+    const NoiseFor noise =
+        noise_for(learned_, index, *trace, injection_.number, expected);
+    Outcome<Peak> peak = measure_peak(*trace, target, *window, expected,
+                                      noise.noise, noise.source);
+    if (peak) {
+      note_shift(target.id, *peak, expected);
+      draw(target.id, *trace, *window, *peak);
+    }
+    return peak;
+  }
+
+  const Trace* find_trace(const std::string& id) {
+    if (const auto known = traces_.find(id); known != traces_.end()) {
+      return known->second;
+    }
+    const Trace* trace = nullptr;
+    try {
+      trace = &select_trace(visit_.contents, *folder_.sheets.method.trace(id),
+                            injection_.run, visit_.input.path);
+      add_to_hash(*trace);
+      for (const std::string& warning : trace->warnings) {
+        result_.fact.warnings.push_back("trace " + id + ": " + warning);
+      }
+    } catch (const InputError& error) {
+      result_.problems.insert(result_.problems.end(), error.problems().begin(),
+                              error.problems().end());
+      trace_problem_[id] = describe(error.problems().front());
+      if (result_.fact.problem.empty()) {
+        result_.fact.problem = trace_problem_[id];
+      }
+    }
+    traces_[id] = trace;
+    return trace;
+  }
+
+  void add_to_hash(const Trace& trace) {
+    const auto add = [&](const std::vector<double>& values) {
+      hash_.add({reinterpret_cast<const char*>(values.data()),
+                 values.size() * sizeof(double)});
+    };
+    add(trace.minutes);
+    add(trace.signal);
+    any_trace_ = true;
+  }
+
+  // The shift of this injection's own internal standard, for its analytes.
+  double shift_for(const std::string& target) const {
+    for (const AnalyteSettings& analyte : folder_.sheets.method.analytes) {
+      if (analyte.target.id != target) continue;
+      const auto shift = standard_shift_.find(analyte.internal_standard);
+      return shift == standard_shift_.end() ? 0.0 : shift->second;
+    }
+    return 0.0;
+  }
+
+  void note_shift(const std::string& target, const Peak& peak,
+                  double expected) {
+    if (peak.found &&
+        folder_.sheets.method.internal_standard(target) != nullptr) {
+      standard_shift_[target] = peak.retention_minutes - expected;
+    }
+  }
+
+  void draw(const std::string& target, const Trace& trace,
+            const WindowTemplate& window, const Peak& peak) {
+    const std::string caption = figures_.caption(target, injection_.number);
+    if (caption.empty()) return;
+    result_.curves.push_back({.analyte = target,
+                              .injection = injection_.number,
+                              .caption = caption,
+                              .peak = peak,
+                              .curve = peak_curve(trace, peak, window)});
+  }
+
+  const SequenceFolder& folder_;
+  const Learned& learned_;
+  const FigureChoice& figures_;
+  const FileVisit& visit_;
+  const Injection& injection_;
+  InjectionMeasured result_;
+  std::map<std::string, const Trace*> traces_;
+  std::map<std::string, std::string> trace_problem_;
+  std::map<std::string, double> standard_shift_;
+  Sha256 hash_;
+  bool any_trace_ = false;
+};
+
+void refuse_if_changed(FileVisit& visit, const Learned& learned) {
+  const auto known = learned.hashes.find(visit.input.path);
+  if (known == learned.hashes.end() || known->second == visit.input.sha256) {
+    return;
+  }
+  visit.problems.assign(
+      1, {.file = visit.input.path,
+          .found = "other contents than a moment before (it changed while it "
+                   "was read)",
+          .expected = "a finished file",
+          .mend = "process the sequence again when nothing writes to it"});
+}
+
+}  // namespace
+
+Measured measure_sequence(
+    const SequenceFolder& folder, const Learned& learned, unsigned jobs,
+    const std::function<void(std::size_t, std::size_t)>& progress) {
+  const std::vector<FileTask> tasks = file_tasks(folder.sheets.sequence);
+  const FigureChoice figures(folder.sheets);
+  std::vector<std::vector<InjectionMeasured>> by_file(tasks.size());
+  Measured measured;
+  measured.inputs.resize(tasks.size());
+  std::mutex progress_mutex;
+  std::size_t done = 0;
+  for_each_index(tasks.size(), jobs, [&](std::size_t i) {
+    FileVisit visit = visit_file(folder, tasks[i].file);
+    refuse_if_changed(visit, learned);
+    for (const Injection* injection : tasks[i].injections) {
+      by_file[i].push_back(
+          InjectionAtWork(folder, learned, figures, visit, *injection)
+              .measure());
+    }
+    measured.inputs[i] = visit.input;
+    const std::lock_guard<std::mutex> guard(progress_mutex);
+    ++done;
+    if (progress) progress(done, tasks.size());
+  });
+  for (std::vector<InjectionMeasured>& file : by_file) {
+    for (InjectionMeasured& injection : file) {
+      measured.injections.push_back(std::move(injection));
+    }
+  }
+  std::sort(measured.injections.begin(), measured.injections.end(),
+            [](const InjectionMeasured& a, const InjectionMeasured& b) {
+              return a.injection < b.injection;
+            });
+  std::sort(measured.inputs.begin(), measured.inputs.end(),
+            [](const InputFile& a, const InputFile& b) {
+              return a.path < b.path;
+            });
+  return measured;
+}
+
+}  // namespace loqsmith
