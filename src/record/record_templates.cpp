@@ -1,0 +1,43 @@
+#include "loqsmith/record/record_sections.hpp"
+
+namespace loqsmith {
+namespace {
+
+void record_window(JsonWriter& json, const WindowTemplate& window) {
+  json.member("left_minutes", window.left_minutes);
+  json.member("right_minutes", window.right_minutes);
+  json.member("width_half_minutes", window.width_half_minutes);
+  json.member("weak", window.weak);
+  json.begin_array("teachers");
+  for (const int injection : window.teachers) {
+    json.value(std::int64_t{injection});
+  }
+  json.end_array();
+  json.begin_array("drift");
+  for (const auto& [injection, minutes] : window.drift) {
+    json.begin_object();
+    member_whole(json, "injection", injection);
+    json.member("minutes", minutes);
+    json.end_object();
+  }
+  json.end_array();
+}
+
+}  // namespace
+
+void record_templates(JsonWriter& json, const PublishedRun& run) {
+  json.begin_array("templates");
+  for (const TargetRecord& record : run.targets) {
+    json.begin_object();
+    json.member("target", record.target);
+    if (record.window) {
+      record_window(json, *record.window);
+    } else {
+      json.member("not_applicable", record.window.reason());
+    }
+    json.end_object();
+  }
+  json.end_array();
+}
+
+}  // namespace loqsmith
