@@ -228,10 +228,9 @@ Measured measure_sequence(
             [](const InjectionMeasured& a, const InjectionMeasured& b) {
               return a.injection < b.injection;
             });
-  std::sort(measured.inputs.begin(), measured.inputs.end(),
-            [](const InputFile& a, const InputFile& b) {
-              return a.path < b.path;
-            });
+  std::sort(
+      measured.inputs.begin(), measured.inputs.end(),
+      [](const InputFile& a, const InputFile& b) { return a.path < b.path; });
   return measured;
 }
 

@@ -26,7 +26,8 @@ void for_each_index(std::size_t count, unsigned jobs,
     }
   };
   const std::size_t helpers =
-      std::min<std::size_t>(std::max(1U, jobs), std::max<std::size_t>(1, count)) -
+      std::min<std::size_t>(std::max(1U, jobs),
+                            std::max<std::size_t>(1, count)) -
       1;
   {
     std::vector<std::jthread> threads;

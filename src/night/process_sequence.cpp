@@ -26,8 +26,9 @@ void refuse_out_inside(const fs::path& folder, const fs::path& out) {
                                            real_out.begin(), real_out.end());
   if (end == folder.end()) {
     throw Halt(ExitStatus::WrongUse,
-               out.string() + " lies in the sequence folder, which is only "
-                              "read; name another place with --out");
+               out.string() +
+                   " lies in the sequence folder, which is only "
+                   "read; name another place with --out");
   }
 }
 
@@ -66,12 +67,11 @@ AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
   }
   std::string not_learned;
   if (!learned.windows[own]) not_learned = learned.windows[own].reason();
-  return judge_analyte(analyte, method.units, standard,
-                       folder.sheets.sequence, injections, not_learned);
+  return judge_analyte(analyte, method.units, standard, folder.sheets.sequence,
+                       injections, not_learned);
 }
 
-SequenceFacts facts_of(const SequenceFolder& folder,
-                       const Measured& measured) {
+SequenceFacts facts_of(const SequenceFolder& folder, const Measured& measured) {
   SequenceFacts facts;
   facts.unlisted_files = folder.unlisted_files;
   for (const InjectionMeasured& injection : measured.injections) {
@@ -128,6 +128,14 @@ std::vector<std::pair<std::string, std::string>> begun_detail(
           {"levels_sha256", sheet_hash(folder, "levels.csv")}};
 }
 
+void count_results(const PublishedRun& run, ProcessOutcome& outcome) {
+  for (const AnalyteJudgement& analyte : run.analytes) {
+    for (const ResultRow& row : analyte.results) {
+      ++outcome.results_by_status[status_name(row.status)];
+    }
+  }
+}
+
 void describe_problems(const PublishedRun& run, ProcessOutcome& outcome) {
   for (const auto& [injection, problem] : run.problems) {
     outcome.messages.push_back("injection " + std::to_string(injection) + ": " +
@@ -144,8 +152,8 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   refuse_out_inside(folder.path, options.out);
   const PublicationPlace place{options.out, options.actor, options.clock,
                                options.wait};
-  RunAtWork work = RunAtWork::begin(place, name, folder.path.string(),
-                                    begun_detail(folder));
+  RunAtWork work =
+      RunAtWork::begin(place, name, folder.path.string(), begun_detail(folder));
   outcome.messages = work.recovered();
   const std::string begun = options.clock();
 
@@ -166,9 +174,9 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   run.ledger_head = describe(work.begun());
   stage_run(work.staging(), folder, run, options.report);
   const bool person = needs_a_person(run);
-  outcome.published =
-      work.publish({{"needs_a_person", person ? "yes" : "no"}});
+  outcome.published = work.publish({{"needs_a_person", person ? "yes" : "no"}});
   outcome.status = person ? ExitStatus::NeedsPerson : ExitStatus::Done;
+  count_results(run, outcome);
   describe_problems(run, outcome);
   outcome.learn_seconds = learned_at - start;
   outcome.measure_seconds = measured_at - learned_at;

@@ -73,11 +73,12 @@ void check_paths(const SequenceFolder& folder, Problems& problems) {
   for (const Injection& injection : folder.sheets.sequence.injections) {
     const std::string why = unsafe_path(folder.path, injection.file);
     if (why.empty()) continue;
-    problems.add({.file = "sequence.csv",
-                  .line = injection.line,
-                  .found = in_quotes(injection.file) + " (" + why + ")",
-                  .expected = "a path below the sequence folder",
-                  .mend = "put the file into the folder and name it from there"});
+    problems.add(
+        {.file = "sequence.csv",
+         .line = injection.line,
+         .found = in_quotes(injection.file) + " (" + why + ")",
+         .expected = "a path below the sequence folder",
+         .mend = "put the file into the folder and name it from there"});
   }
 }
 
@@ -88,9 +89,8 @@ std::vector<std::string> unlisted(const SequenceFolder& folder) {
     known.insert(fs::path(injection.file).lexically_normal().generic_string());
   }
   std::vector<std::string> files = files_below(folder.path);
-  std::erase_if(files, [&](const std::string& file) {
-    return known.contains(file);
-  });
+  std::erase_if(files,
+                [&](const std::string& file) { return known.contains(file); });
   return files;
 }
 

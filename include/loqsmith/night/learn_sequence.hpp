@@ -23,8 +23,9 @@ struct BlankNoise {
 struct Learned {
   /// Internal standards, then analytes, in the method's order.
   std::vector<TargetSettings> targets;
-  std::vector<Outcome<WindowTemplate>> windows;      ///< one a target
-  std::vector<std::vector<BlankNoise>> blank_noise;  ///< one a target, run order
+  std::vector<Outcome<WindowTemplate>> windows;  ///< one a target
+  std::vector<std::vector<BlankNoise>>
+      blank_noise;  ///< one a target, run order
   /// SHA-256 of the files read in this pass: a file that has another one when
   /// it is measured is refused.
   std::map<std::string, std::string> hashes;

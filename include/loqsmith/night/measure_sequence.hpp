@@ -15,7 +15,8 @@ namespace loqsmith {
 /// One injection, measured.
 struct InjectionMeasured {
   int injection = 0;
-  std::vector<Outcome<Peak>> peaks;  ///< one a target of Learned; conditioning: none
+  std::vector<Outcome<Peak>>
+      peaks;  ///< one a target of Learned; conditioning: none
   SequenceFacts::FileFact fact;
   std::vector<InputProblem> problems;
   std::vector<FigureCurve> curves;
@@ -29,9 +30,8 @@ struct Measured {
 /// The measuring pass: every injection of every role but conditioning, over
 /// the windows learned. One task a file; the outcome does not depend on
 /// `jobs`.
-Measured measure_sequence(const SequenceFolder& folder, const Learned& learned,
-                          unsigned jobs,
-                          const std::function<void(std::size_t, std::size_t)>&
-                              progress);
+Measured measure_sequence(
+    const SequenceFolder& folder, const Learned& learned, unsigned jobs,
+    const std::function<void(std::size_t, std::size_t)>& progress);
 
 }  // namespace loqsmith

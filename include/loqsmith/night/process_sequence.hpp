@@ -3,6 +3,7 @@
 #include <chrono>
 #include <filesystem>
 #include <functional>
+#include <map>
 #include <string>
 #include <vector>
 
@@ -26,8 +27,9 @@ struct ProcessOptions {
 
 struct ProcessOutcome {
   ExitStatus status = ExitStatus::Done;
-  std::filesystem::path published;      ///< empty: nothing was published
-  std::vector<std::string> messages;    ///< for people, one sentence each
+  std::filesystem::path published;    ///< empty: nothing was published
+  std::vector<std::string> messages;  ///< for people, one sentence each
+  std::map<std::string, std::size_t> results_by_status;
   std::chrono::duration<double> learn_seconds{0};
   std::chrono::duration<double> measure_seconds{0};
   std::chrono::duration<double> publish_seconds{0};
