@@ -162,8 +162,8 @@ Detector flame_detector() {
   detector.run_minutes = 6.0;
   detector.step = 0x1p-9;  // 2 fA
   detector.offset = 12.0;  // pA
-  detector.noise_sd = 0.05;
-  detector.wave_amplitude = 0.04;
+  detector.noise_sd = 0.11;
+  detector.wave_amplitude = 0.08;
   detector.wave_period_minutes = 9.0;
   detector.slope_per_minute = 0.02;
   return detector;
