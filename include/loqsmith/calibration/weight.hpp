@@ -1,0 +1,22 @@
+#pragma once
+
+#include <optional>
+
+#include "loqsmith/calibration/calibration.hpp"
+
+namespace loqsmith {
+
+/// The weight function at a concentration: 1, 1/x or 1/x^2. A mean response
+/// factor is the line through zero with weight 1/x^2, whatever weight the
+/// settings name.
+/// @return nothing where the weight has no value (x not above zero with 1/x or
+///         1/x^2) or where this version does not compute it.
+std::optional<double> calibration_weight(const CalibrationSettings& settings,
+                                         double concentration);
+
+/// Standard deviation of single responses at a concentration, as the fit sees
+/// it: residual_sd / sqrt(w), the weight taken at the lowest level of the fit
+/// for everything below it, where it would otherwise have no value at zero.
+double response_sd_at(const Calibration& calibration, double concentration);
+
+}  // namespace loqsmith

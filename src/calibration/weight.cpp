@@ -1,0 +1,39 @@
+#include "loqsmith/calibration/weight.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+namespace loqsmith {
+namespace {
+
+std::optional<double> inverse_power(double concentration, bool squared) {
+  if (!(concentration > 0.0)) return std::nullopt;
+  return squared ? 1.0 / (concentration * concentration) : 1.0 / concentration;
+}
+
+}  // namespace
+
+std::optional<double> calibration_weight(const CalibrationSettings& settings,
+                                         double concentration) {
+  if (settings.model == CalibrationSettings::Model::ResponseFactor)
+    return inverse_power(concentration, true);
+  switch (settings.weight) {
+    case CalibrationSettings::Weight::None:
+      return 1.0;
+    case CalibrationSettings::Weight::InverseX:
+      return inverse_power(concentration, false);
+    case CalibrationSettings::Weight::InverseXSquared:
+      return inverse_power(concentration, true);
+    case CalibrationSettings::Weight::InverseVariance:
+      return std::nullopt;
+  }
+  return std::nullopt;
+}
+
+double response_sd_at(const Calibration& calibration, double concentration) {
+  const double at = std::max(concentration, calibration.lowest);
+  const double weight = calibration_weight(calibration.settings, at).value();
+  return calibration.residual_sd / std::sqrt(weight);
+}
+
+}  // namespace loqsmith
