@@ -110,9 +110,9 @@ TEST(FitCalibration, QuadraticBackCalculation) {
 }
 
 TEST(FitCalibration, LineThroughZero) {
-  const auto curve =
+  const auto line =
       fit_calibration(seven_levels(), {.intercept = Intercept::Zero});
-  ASSERT_TRUE(curve);
+  ASSERT_TRUE(line);
   EXPECT_TRUE(same_bits(curve->intercept, 0.0));
   EXPECT_TRUE(agrees_to_digits(line->slope, 10.05322333, 10));
   EXPECT_TRUE(
