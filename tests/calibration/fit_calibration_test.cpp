@@ -113,7 +113,7 @@ TEST(FitCalibration, LineThroughZero) {
   const auto line =
       fit_calibration(seven_levels(), {.intercept = Intercept::Zero});
   ASSERT_TRUE(line);
-  EXPECT_TRUE(same_bits(curve->intercept, 0.0));
+  EXPECT_TRUE(same_bits(line->intercept, 0.0));
   EXPECT_TRUE(agrees_to_digits(line->slope, 10.05322333, 10));
   EXPECT_TRUE(
       agrees_to_digits(std::sqrt(line->covariance[1][1]), 0.04565960401, 10));
