@@ -39,10 +39,10 @@ AnalyteJudgement judge_analyte(
 struct SequenceFacts {
   struct FileFact {
     int injection = 0;
-    std::string problem;          ///< refused file or trace; empty: read
-    std::string data_hash;        ///< over the trace data used; empty: none
-    std::string start_time;       ///< from the file; empty: not stated
-    std::string sample_name;      ///< from the file; empty: not stated
+    std::string problem;      ///< refused file or trace; empty: read
+    std::string data_hash;    ///< over the trace data used; empty: none
+    std::string start_time;   ///< from the file; empty: not stated
+    std::string sample_name;  ///< from the file; empty: not stated
     std::vector<std::string> warnings;
   };
   std::vector<FileFact> files;              ///< in run order

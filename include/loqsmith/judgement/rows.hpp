@@ -53,12 +53,21 @@ struct CheckRow {
   std::string note;
 };
 
+/// A standard that gave no response; it stands in standards.csv with its note.
+struct UnmeasuredStandard {
+  int injection = 0;
+  std::string level;
+  double concentration = 0.0;  ///< nominal, in the vial
+  std::string note;            ///< "file-refused", "internal-standard-missing"
+};
+
 /// One calibration set of one analyte with its limits.
 struct CalibrationSet {
   std::string set;
   Outcome<Calibration> calibration = NotApplicable{"no standards"};
   /// All standards; where there is no calibration, as they were offered.
   std::vector<StandardPoint> standards;
+  std::vector<UnmeasuredStandard> unmeasured;
   LimitsOfAnalyte limits;
 };
 

@@ -24,10 +24,10 @@ struct CalibrationAcceptance {
   CheckAction action = CheckAction::Withhold;
   int minimum_levels = 5;
   std::optional<double> minimum_r2;
-  std::optional<double> maximum_relative_standard_error;   ///< percent
-  std::optional<double> back_calculation_percent;          ///< of nominal
-  std::optional<double> back_calculation_lowest_percent;   ///< lowest level
-  double minimum_accepted_percent = 75.0;                  ///< of the levels
+  std::optional<double> maximum_relative_standard_error;  ///< percent
+  std::optional<double> back_calculation_percent;         ///< of nominal
+  std::optional<double> back_calculation_lowest_percent;  ///< lowest level
+  double minimum_accepted_percent = 75.0;                 ///< of the levels
 };
 
 struct CheckStandardAcceptance {

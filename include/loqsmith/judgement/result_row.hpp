@@ -1,0 +1,40 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "loqsmith/judgement/check_standards.hpp"
+#include "loqsmith/judgement/measured_analyte.hpp"
+#include "loqsmith/judgement/rows.hpp"
+
+namespace loqsmith {
+
+/// What holds for all results of one analyte in one calibration set.
+struct AnalyteFindings {
+  std::vector<std::string> withholding;  ///< reason words
+  std::vector<std::string> careful;
+  /// Nothing: no check standard could be judged (no calibration).
+  std::optional<std::vector<CheckStandardOutcome>> check_standards;
+};
+
+/// Whether injections of a role get a row of results: every role but
+/// conditioning (ignored everywhere) and standard (its back-calculation stands
+/// among the standards). Blanks, spikes and check standards are quantified like
+/// samples, so that one table shows the whole night.
+bool is_quantified(Role role);
+
+/// One result: the concentration in the vial from the curve, the result and
+/// this sample's own limits by the same factor, and the verdict. An injection
+/// without response or an analyte without calibration still gives a row.
+///
+/// A response beyond the end of a quadratic has no concentration. Its status
+/// still follows from the response: above the curve at the highest accepted
+/// standard it is above range ("beyond-curve"), below the curve at the decision
+/// threshold it is not detected.
+ResultRow judge_result(const InjectionResponse& one,
+                       const MeasuredAnalyte& analyte,
+                       const CalibrationSet& set,
+                       const AnalyteFindings& findings);
+
+}  // namespace loqsmith

@@ -1,0 +1,22 @@
+#pragma once
+
+#include "loqsmith/chromatogram/sequence.hpp"
+#include "loqsmith/judgement/settings.hpp"
+
+namespace loqsmith {
+
+/// From the vial to the sample: dilution x final_volume / sample_amount x
+/// factor; without preparation columns dilution x factor. Always > 0.
+double sample_factor(const Injection& injection, const UnitSettings& units);
+
+/// A vial concentration, limit or uncertainty in the sample's unit.
+///
+/// Results, limits and the end of the range all go through this one function,
+/// which never decreases as the concentration grows: what is equal or above
+/// in the vial is so in the sample. Where the product misses a decimal number
+/// of at most 12 digits by no more than the arithmetic's own error (0.1 x 3
+/// gives 0.30000000000000004), that number is taken: otherwise such a limit,
+/// rounded up for print, would become "< 0.301".
+double in_sample(double vial, double factor);
+
+}  // namespace loqsmith

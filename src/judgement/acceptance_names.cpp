@@ -1,0 +1,52 @@
+#include "loqsmith/judgement/acceptance_names.hpp"
+
+namespace loqsmith {
+namespace {
+
+using Settings = AcceptanceSettings;
+
+// A method that has the child is refused before it comes here.
+bool never(const Settings&) { return false; }
+
+}  // namespace
+
+const std::vector<AcceptanceCheck>& acceptance_checks() {
+  static const std::vector<AcceptanceCheck> checks{
+      {"calibration",
+       [](const Settings& s) { return s.calibration.has_value(); }},
+      {"second-source", never},
+      {"check-standard",
+       [](const Settings& s) { return s.check_standard.has_value(); }},
+      {"solvent-blank", never},
+      {"method-blank", never},
+      {"control", never},
+      {"fortified", never},
+      {"duplicate", never},
+      {"surrogate", never},
+      {"internal-standard", never},
+      {"retention-time", never},
+      {"suitability", never},
+      {"carry-over", never},
+      {"second-trace", never},
+      {"established-limit", never},
+      {"confirmation", never},
+      {"closeness", never},
+  };
+  return checks;
+}
+
+std::vector<CheckRow> unchecked_rows(const AcceptanceSettings& acceptance,
+                                     const std::string& analyte) {
+  std::vector<CheckRow> rows;
+  for (const AcceptanceCheck& check : acceptance_checks()) {
+    if (check.asked_for(acceptance)) continue;
+    CheckRow row;
+    row.check = check.name;
+    row.analyte = analyte;
+    row.note = "not checked: the method does not ask for it";
+    rows.push_back(std::move(row));
+  }
+  return rows;
+}
+
+}  // namespace loqsmith

@@ -1,0 +1,175 @@
+#include "loqsmith/judgement/limit_evidence.hpp"
+
+#include <algorithm>
+#include <cstddef>
+#include <iterator>
+
+#include "loqsmith/calibration/inverse.hpp"
+#include "loqsmith/judgement/sample_units.hpp"
+
+namespace loqsmith {
+namespace {
+
+constexpr double kLowRange = 10.0;  // times the lowest standard above zero
+
+bool has(const std::vector<std::string>& words, const char* word) {
+  return std::find(words.begin(), words.end(), word) != words.end();
+}
+
+std::optional<BlankKind> blank_kind(const InjectionResponse& one) {
+  switch (one.injection->role) {
+    case Role::SolventBlank:
+      return BlankKind::Solvent;
+    case Role::MethodBlank:
+      return BlankKind::Method;
+    case Role::Standard:
+      if (one.nominal && *one.nominal == 0.0) return BlankKind::ZeroStandard;
+      return std::nullopt;
+    case Role::Conditioning:
+    case Role::SecondSource:
+    case Role::CheckStandard:
+    case Role::LowSpike:
+    case Role::Control:
+    case Role::Fortified:
+    case Role::FortifiedDuplicate:
+    case Role::Duplicate:
+    case Role::AddedStandard:
+    case Role::Sample:
+      return std::nullopt;
+  }
+  return std::nullopt;
+}
+
+bool level_is_in_the_vial(Role role) {
+  return role == Role::Standard || role == Role::SecondSource ||
+         role == Role::CheckStandard;
+}
+
+bool is_high(const InjectionResponse& one, const Calibration& calibration) {
+  const double half =
+      0.5 * calibration.accepted_highest.value_or(calibration.highest);
+  if (one.nominal && level_is_in_the_vial(one.injection->role) &&
+      *one.nominal > half) {
+    return true;
+  }
+  return one.response &&
+         one.response->value > response_from_concentration(calibration, half);
+}
+
+/// The injection right before it in the sequence, whatever its role.
+const Injection* injection_before(const Sequence& sequence, int number) {
+  const auto here = std::lower_bound(
+      sequence.injections.begin(), sequence.injections.end(), number,
+      [](const Injection& one, int wanted) { return one.number < wanted; });
+  return here == sequence.injections.begin() ? nullptr : &*std::prev(here);
+}
+
+bool follows_high(const MeasuredAnalyte& analyte, int number,
+                  const Calibration& calibration) {
+  const Injection* before = injection_before(*analyte.sequence, number);
+  if (before == nullptr) return false;
+  const auto previous = std::lower_bound(
+      analyte.injections.begin(), analyte.injections.end(), before->number,
+      [](const InjectionResponse& one, int wanted) {
+        return one.injection->number < wanted;
+      });
+  return previous != analyte.injections.end() &&
+         previous->injection->number == before->number &&
+         is_high(*previous, calibration);
+}
+
+std::optional<SpikeResult> spike_result(const InjectionResponse& one,
+                                        const MeasuredAnalyte& analyte,
+                                        const Calibration& calibration) {
+  if (one.injection->role != Role::LowSpike || !one.nominal || !one.response) {
+    return std::nullopt;
+  }
+  const Outcome<InversePrediction> found =
+      concentration_from_response(calibration, one.response->value);
+  if (!found) return std::nullopt;
+  return SpikeResult{
+      one.injection->number,
+      *one.nominal / sample_factor(*one.injection, *analyte.units),
+      found->concentration, one.injection->prep};
+}
+
+bool shows_a_height(const InjectionResponse& one) {
+  return one.injection->role == Role::Standard && one.nominal &&
+         *one.nominal > 0.0 && one.peak && one.peak->found &&
+         !has(one.peak->reasons, "saturated");
+}
+
+std::optional<double> median(std::vector<double> values) {
+  if (values.empty()) return std::nullopt;
+  std::sort(values.begin(), values.end());
+  const std::size_t middle = values.size() / 2;
+  if (values.size() % 2 == 1) return values[middle];
+  return 0.5 * (values[middle - 1] + values[middle]);
+}
+
+std::optional<double> noise_near_the_lowest(const MeasuredAnalyte& analyte) {
+  std::optional<double> lowest;
+  for (const InjectionResponse& one : analyte.injections) {
+    if (!shows_a_height(one)) continue;
+    if (!lowest || *one.nominal < *lowest) lowest = *one.nominal;
+  }
+  std::vector<double> noises;
+  for (const InjectionResponse& one : analyte.injections) {
+    if (shows_a_height(one) && *one.nominal <= kLowRange * *lowest &&
+        one.peak->noise) {
+      noises.push_back(*one.peak->noise);
+    }
+  }
+  return median(std::move(noises));
+}
+
+}  // namespace
+
+LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
+                                    const Calibration& calibration) {
+  const TargetSettings& target = analyte.settings->target;
+  LimitEvidence evidence;
+  for (const InjectionResponse& one : analyte.injections) {
+    const int number = one.injection->number;
+    const std::optional<BlankKind> kind = blank_kind(one);
+    if (kind && one.response) {
+      evidence.blanks.push_back({number, *kind, one.response->value,
+                                 follows_high(analyte, number, calibration),
+                                 one.injection->prep});
+    }
+    const auto spike = spike_result(one, analyte, calibration);
+    if (spike) evidence.spikes.push_back(*spike);
+    if (shows_a_height(one)) {
+      evidence.heights.push_back({number, *one.nominal, one.peak->height});
+    }
+  }
+  evidence.calibration = calibration;
+  evidence.noise = noise_near_the_lowest(analyte);
+  evidence.noise_measure = target.noise.measure;
+  evidence.bounds_own =
+      target.integration.bounds == IntegrationSettings::Bounds::Own;
+  evidence.baseline_biased =
+      target.integration.baseline != IntegrationSettings::Baseline::Valley;
+  return evidence;
+}
+
+void note_mean_internal_standard(const MeasuredAnalyte& analyte,
+                                 LimitsOfAnalyte& limits) {
+  const auto without =
+      std::count_if(analyte.injections.begin(), analyte.injections.end(),
+                    [](const InjectionResponse& one) {
+                      return one.response && has(one.response->reasons,
+                                                 "mean-internal-standard");
+                    });
+  if (without == 0) return;
+  for (LimitRow& row : limits.rows) {
+    if (row.procedure != "blank-deviation" || !row.estimate) continue;
+    row.estimate.value().findings.push_back(
+        {Grade::Note, "mean-internal-standard",
+         std::to_string(without) +
+             " blanks without internal standard were divided by the "
+             "standards' mean internal-standard response"});
+  }
+}
+
+}  // namespace loqsmith

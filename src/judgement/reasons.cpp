@@ -1,0 +1,90 @@
+#include "loqsmith/judgement/reasons.hpp"
+
+#include <algorithm>
+#include <array>
+#include <cstddef>
+
+namespace loqsmith {
+namespace {
+
+// Most serious first. First why there is no number, then why the number may
+// not be used, then why to be careful with it.
+constexpr std::array<std::string_view, 28> kDoubtful{
+    "file-refused",
+    "trace-missing",
+    "not-learned",
+    "window-not-covered",
+    "too-few-points",
+    "no-signal",
+    "not-measured",
+    "internal-standard-missing",
+    "no-calibration",
+    "no-concentration",
+    "calibration-failed",
+    "no-accepted-level",
+    "no-valid-limit",
+    "check-standard-failed",
+    "response-without-peak",
+    "peak-not-found",
+    "saturated",
+    "internal-standard-saturated",
+    "above-range",
+    "beyond-curve",
+    "no-closing-check",
+    "overlapped",
+    "internal-standard-overlapped",
+    "weak-template",
+    "mean-internal-standard",
+    "after-high",
+    "noise-same-trace",
+    "noise-stretch-short",
+};
+
+// They say nothing against the number, only which status it has.
+constexpr std::array<std::string_view, 3> kExplaining{
+    "below-detection-limit",
+    "below-critical-value",
+    "below-quantitation-limit",
+};
+
+std::size_t rank(const std::string& word) {
+  const auto* doubtful = std::find(kDoubtful.begin(), kDoubtful.end(), word);
+  if (doubtful != kDoubtful.end()) {
+    return static_cast<std::size_t>(doubtful - kDoubtful.begin());
+  }
+  const auto* explaining =
+      std::find(kExplaining.begin(), kExplaining.end(), word);
+  const auto behind =
+      static_cast<std::size_t>(explaining - kExplaining.begin());
+  return explaining == kExplaining.end() ? kDoubtful.size()
+                                         : kDoubtful.size() + 1 + behind;
+}
+
+}  // namespace
+
+std::string reason_word(std::string_view reason) {
+  std::string word(reason.substr(0, reason.find(':')));
+  std::replace(word.begin(), word.end(), ' ', '-');
+  return word;
+}
+
+std::vector<std::string> most_serious_first(std::vector<std::string> words) {
+  std::stable_sort(words.begin(), words.end(),
+                   [](const std::string& a, const std::string& b) {
+                     return rank(a) < rank(b);
+                   });
+  return without_repetition(std::move(words));
+}
+
+std::vector<std::string> without_repetition(std::vector<std::string> words) {
+  std::vector<std::string> once;
+  for (std::string& word : words) {
+    if (word.empty()) continue;
+    if (std::find(once.begin(), once.end(), word) == once.end()) {
+      once.push_back(std::move(word));
+    }
+  }
+  return once;
+}
+
+}  // namespace loqsmith

@@ -1,0 +1,107 @@
+#include "loqsmith/judgement/response.hpp"
+
+#include <algorithm>
+#include <cstddef>
+
+namespace loqsmith {
+namespace {
+
+// Below this part of the standards' mean an internal standard in a solvent
+// blank is carry-over.
+constexpr double kCarriedOver = 0.1;
+
+std::optional<double> peak_response(const Peak& peak,
+                                    IntegrationSettings::Response measure) {
+  switch (measure) {
+    case IntegrationSettings::Response::Area:
+      return peak.area;
+    case IntegrationSettings::Response::Height:
+      return peak.height;
+    case IntegrationSettings::Response::Template:
+      return peak.template_response;
+  }
+  return std::nullopt;
+}
+
+/// A_is d; nothing where no internal standard was seen.
+std::optional<double> undiluted_internal_standard(
+    const MeasuredInjection& measured, IntegrationSettings::Response measure) {
+  if (!measured.internal_standard || !*measured.internal_standard) {
+    return std::nullopt;
+  }
+  const Peak& peak = measured.internal_standard->value();
+  const std::optional<double> response = peak_response(peak, measure);
+  if (!peak.found || !response || !(*response > 0.0)) return std::nullopt;
+  return *response * measured.injection->internal_standard_dilution;
+}
+
+bool carried_over(double internal_standard, const ResponseRule& rule) {
+  return rule.mean_internal_standard &&
+         internal_standard < kCarriedOver * *rule.mean_internal_standard;
+}
+
+/// What is to be careful of in the internal standard's own peak.
+std::vector<std::string> internal_standard_reasons(const Peak& peak) {
+  std::vector<std::string> reasons;
+  for (const std::string& reason : peak.reasons) {
+    if (reason == "saturated" || reason == "overlapped") {
+      reasons.push_back("internal-standard-" + reason);
+    }
+  }
+  return reasons;
+}
+
+Outcome<Response> ratio(Response response, const MeasuredInjection& measured,
+                        const ResponseRule& rule) {
+  const std::optional<double> own =
+      undiluted_internal_standard(measured, rule.measure);
+  const bool blank = measured.injection->role == Role::SolventBlank;
+  if (own && !(blank && carried_over(*own, rule))) {
+    response.value /= *own;
+    const auto more =
+        internal_standard_reasons(measured.internal_standard->value());
+    response.reasons.insert(response.reasons.end(), more.begin(), more.end());
+    return response;
+  }
+  if (blank && rule.mean_internal_standard) {
+    response.value /= *rule.mean_internal_standard;
+    response.reasons.push_back("mean-internal-standard");
+    return response;
+  }
+  return NotApplicable{
+      "internal-standard-missing: no peak of the internal standard above zero"};
+}
+
+}  // namespace
+
+ResponseRule response_rule(const AnalyteSettings& settings,
+                           const InternalStandardSettings* internal_standard,
+                           const std::vector<MeasuredInjection>& injections) {
+  ResponseRule rule;
+  rule.measure = settings.target.integration.response;
+  rule.has_internal_standard = internal_standard != nullptr;
+  double sum = 0.0;
+  std::size_t n = 0;
+  for (const MeasuredInjection& measured : injections) {
+    if (measured.injection->role != Role::Standard) continue;
+    const auto response = undiluted_internal_standard(measured, rule.measure);
+    if (!response) continue;
+    sum += *response;
+    ++n;
+  }
+  if (n > 0) rule.mean_internal_standard = sum / static_cast<double>(n);
+  return rule;
+}
+
+Outcome<Response> response_of(const MeasuredInjection& measured,
+                              const ResponseRule& rule) {
+  if (!measured.peak) return NotApplicable{measured.peak.reason()};
+  const Peak& peak = measured.peak.value();
+  const std::optional<double> value = peak_response(peak, rule.measure);
+  if (!value) return NotApplicable{"no-signal: response was not computed"};
+  Response response{*value, peak.reasons};
+  if (!rule.has_internal_standard) return response;
+  return ratio(std::move(response), measured, rule);
+}
+
+}  // namespace loqsmith

@@ -1,0 +1,165 @@
+#include "loqsmith/judgement/result_row.hpp"
+
+#include "loqsmith/calibration/inverse.hpp"
+#include "loqsmith/judgement/reasons.hpp"
+#include "loqsmith/judgement/reported_text.hpp"
+#include "loqsmith/judgement/sample_units.hpp"
+#include "loqsmith/judgement/verdict.hpp"
+
+namespace loqsmith {
+namespace {
+
+ResultRow describe_injection(const InjectionResponse& one,
+                             const MeasuredAnalyte& analyte,
+                             const CalibrationSet& set) {
+  ResultRow row;
+  row.injection = one.injection->number;
+  row.sample = one.injection->sample;
+  row.role = one.injection->role;
+  row.analyte = analyte.settings->target.id;
+  row.set = set.set;
+  row.dilution = one.injection->dilution;
+  row.unit = analyte.units->result.empty() ? analyte.units->concentration
+                                           : analyte.units->result;
+  if (one.response) row.response = one.response->value;
+  if (!one.peak) return row;
+  row.found = one.peak->found;
+  // Without a peak the place is only the expected one: nothing was retained.
+  if (row.found) row.retention_minutes = one.peak->retention_minutes;
+  row.signal_to_noise = one.peak->signal_to_noise;
+  return row;
+}
+
+void set_limits(ResultRow& row, const Outcome<GoverningLimits>& governing,
+                double factor) {
+  if (!governing) return;
+  row.detection_limit = in_sample(governing->detection, factor);
+  row.quantitation_limit = in_sample(governing->quantitation, factor);
+  row.detection_procedure = governing->detection_procedure;
+  row.quantitation_procedure = governing->quantitation_procedure;
+}
+
+/// Fills in the concentrations; true where the response has one.
+bool set_concentration(ResultRow& row, const Calibration& calibration,
+                       double factor) {
+  const Outcome<InversePrediction> found =
+      concentration_from_response(calibration, *row.response);
+  if (!found) return false;
+  row.vial_concentration = found->concentration;
+  row.result = in_sample(found->concentration, factor);
+  if (found->expanded_uncertainty) {
+    row.calibration_uncertainty =
+        in_sample(*found->expanded_uncertainty, factor);
+  }
+  return true;
+}
+
+// Limits are compared in the sample, so that the table bears the status out;
+// the range in the vial, where the curve ends.
+Placing place_by_concentration(const ResultRow& row, double threshold,
+                               double highest) {
+  Placing placing;
+  placing.below_threshold = *row.result < threshold;
+  placing.below_quantitation =
+      !placing.below_threshold && *row.result < *row.quantitation_limit;
+  placing.above_range = *row.vial_concentration > highest;
+  return placing;
+}
+
+std::optional<Placing> place_by_response(double response,
+                                         const Calibration& calibration,
+                                         double vial_threshold,
+                                         double highest) {
+  Placing placing;
+  placing.above_range =
+      response > response_from_concentration(calibration, highest);
+  placing.below_threshold =
+      response < response_from_concentration(calibration, vial_threshold);
+  if (placing.above_range == placing.below_threshold) return std::nullopt;
+  return placing;
+}
+
+void place(VerdictFacts& facts, ResultRow& row, const CalibrationSet& set,
+           double factor) {
+  if (!row.response || !set.calibration) return;
+  const Calibration& calibration = *set.calibration;
+  const bool has_number = set_concentration(row, calibration, factor);
+  if (!set.limits.governing || !calibration.accepted_highest) return;
+  const double threshold = set.limits.governing->decision_threshold;
+  const double highest = *calibration.accepted_highest;
+  if (has_number) {
+    facts.placing =
+        place_by_concentration(row, in_sample(threshold, factor), highest);
+    return;
+  }
+  facts.placing =
+      place_by_response(*row.response, calibration, threshold, highest);
+  if (!facts.placing) facts.withholding.emplace_back("no-concentration");
+  facts.careful.emplace_back("beyond-curve");
+}
+
+void govern(VerdictFacts& facts, const InjectionResponse& one,
+            const MeasuredAnalyte& analyte, const AnalyteFindings& findings) {
+  const auto& acceptance = analyte.settings->acceptance.check_standard;
+  if (!acceptance || !findings.check_standards) return;
+  const Governed governed = governed_by(
+      *findings.check_standards, acceptance->governs, one.injection->number);
+  if (governed.no_closing) facts.careful.emplace_back("no-closing-check");
+  if (!governed.failed) return;
+  const bool withholds = acceptance->action == CheckAction::Withhold;
+  (withholds ? facts.withholding : facts.careful)
+      .emplace_back("check-standard-failed");
+}
+
+VerdictFacts facts_before_placing(const InjectionResponse& one,
+                                  const MeasuredAnalyte& analyte,
+                                  const CalibrationSet& set,
+                                  const AnalyteFindings& findings) {
+  VerdictFacts facts;
+  facts.withholding = findings.withholding;
+  facts.careful = findings.careful;
+  facts.identified = one.peak && one.peak->found;
+  if (one.response) {
+    facts.careful.insert(facts.careful.end(), one.response->reasons.begin(),
+                         one.response->reasons.end());
+  } else {
+    facts.withholding.push_back(reason_word(one.response.reason()));
+  }
+  const Outcome<GoverningLimits>& governing = set.limits.governing;
+  facts.decides_at_critical_value =
+      governing && governing->decision_threshold != governing->detection;
+  govern(facts, one, analyte, findings);
+  return facts;
+}
+
+}  // namespace
+
+bool is_quantified(Role role) {
+  return role != Role::Conditioning && role != Role::Standard;
+}
+
+ResultRow judge_result(const InjectionResponse& one,
+                       const MeasuredAnalyte& analyte,
+                       const CalibrationSet& set,
+                       const AnalyteFindings& findings) {
+  const double factor = sample_factor(*one.injection, *analyte.units);
+  ResultRow row = describe_injection(one, analyte, set);
+  set_limits(row, set.limits.governing, factor);
+  VerdictFacts facts = facts_before_placing(one, analyte, set, findings);
+  place(facts, row, set, factor);
+
+  Verdict verdict = reach_verdict(facts);
+  row.status = verdict.status;
+  row.reasons = std::move(verdict.reasons);
+  row.qualifier = qualifier_letter(row.status, analyte.settings->reporting);
+  ReportedNumbers numbers{row.result, row.detection_limit,
+                          row.quantitation_limit, std::nullopt};
+  if (set.calibration && set.calibration->accepted_highest) {
+    numbers.highest = in_sample(*set.calibration->accepted_highest, factor);
+  }
+  row.reported =
+      reported_text(row.status, numbers, analyte.settings->reporting);
+  return row;
+}
+
+}  // namespace loqsmith
