@@ -14,10 +14,10 @@ using Clock = std::function<std::string()>;
 
 /// Who is at work, for every line.
 struct LedgerActor {
-  std::string actor;     ///< operating system user
-  std::string operator_; ///< person named on the command line; may be empty
+  std::string actor;      ///< operating system user
+  std::string operator_;  ///< person named on the command line; may be empty
   std::string host;
-  std::string program;   ///< "loqsmith 0.1.0"
+  std::string program;  ///< "loqsmith 0.1.0"
 };
 
 /// What one appended line says; number, time and previous are the ledger's.

@@ -5,15 +5,10 @@
 #include <string>
 #include <vector>
 
+#include "loqsmith/ledger/deviation.hpp"
 #include "loqsmith/ledger/ledger.hpp"
 
 namespace loqsmith {
-
-/// One thing that is not as the ledger says.
-struct Deviation {
-  std::string place;  ///< "ledger.jsonl line 12", "well-water/run-0001/results.csv"
-  std::string what;
-};
 
 struct VerifyReport {
   std::uint64_t lines = 0;
@@ -26,6 +21,17 @@ struct VerifyReport {
 
 /// Reads only: every published file, every link, head, manifests against the
 /// ledger, files that no manifest names. Needs no lock and no write access.
+///
+/// A run that has begun and not ended is a note: it may be at work. Time that
+/// goes back from one line to the next is a deviation, as no line is written
+/// so. What an interruption left between line and head, or between line and
+/// folder, is a deviation until the next start has mended it; where a writer
+/// at work explains it, looking again after some milliseconds settles it.
+///
+/// Chain and head written anew as a whole by someone with write access look
+/// right: that shows only against a LedgerPlace written down elsewhere.
+///
+/// @throws Halt 74 where `out` is no folder that can be read.
 VerifyReport verify_out(const std::filesystem::path& out);
 
 }  // namespace loqsmith

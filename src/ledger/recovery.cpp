@@ -1,0 +1,146 @@
+#include "loqsmith/ledger/recovery.hpp"
+
+#include <algorithm>
+#include <map>
+
+#include "loqsmith/base/halt.hpp"
+#include "loqsmith/ledger/manifest.hpp"
+#include "loqsmith/ledger/run_history.hpp"
+
+namespace loqsmith {
+namespace {
+
+namespace fs = std::filesystem;
+
+[[noreturn]] void halt_as_damaged(const std::string& run,
+                                  const std::string& what) {
+  throw Halt(ExitStatus::IoFailed,
+             "OUT is damaged, nothing is changed: " + run + " " + what);
+}
+
+bool is_there(const fs::path& path) {
+  return fs::exists(fs::symlink_status(path));
+}
+
+// True where the program that made the staging folder still runs.
+bool is_held(const fs::path& staging) {
+  const fs::path owner = staging / OutLayout::kOwner;
+  if (!is_there(owner)) return false;
+  FileLock lock;
+  return !lock.try_lock(owner);
+}
+
+// A staging folder is complete when every file that the manifest names is there
+// and nothing else is.
+void check_complete(const fs::path& staging, const RunEvents& run) {
+  const RunCheck check = check_run_folder(staging, run.object, run.manifest);
+  if (!check.deviations.empty()) {
+    halt_as_damaged(run.object,
+                    "was published, and its staging is not what "
+                    "was published: " +
+                        check.deviations.front().place + ": " +
+                        check.deviations.front().what);
+  }
+  if (files_below(staging).size() != check.files.size() + 1) {
+    halt_as_damaged(run.object,
+                    "was published, and its staging holds files "
+                    "that its manifest does not name");
+  }
+}
+
+bool recovery_told(const OpenLedger& ledger, const std::string& object) {
+  return std::any_of(ledger.lines().begin(), ledger.lines().end(),
+                     [&](const LedgerLine& line) {
+                       return line.action == "recovery" &&
+                              line.object == object;
+                     });
+}
+
+void check_published(const OpenLedger& ledger, const RunEvents& run) {
+  if (is_there(ledger.layout().out / run.object)) return;
+  const fs::path staging = ledger.layout().staging(run.begun);
+  if (!is_there(staging)) {
+    halt_as_damaged(run.object,
+                    "was published, and neither its folder nor its "
+                    "staging is there");
+  }
+  check_complete(staging, run);
+}
+
+void finish_published(OpenLedger& ledger, const RunEvents& run) {
+  if (is_there(ledger.layout().out / run.object)) return;
+  if (!recovery_told(ledger, run.object)) {
+    ledger.append({"recovery",
+                   run.object,
+                   run.manifest,
+                   "published run moved into place",
+                   {}});
+  }
+  move_into_place(ledger.layout(), run.begun, run.object);
+  ledger.say(run.object + " was published but not in place yet: moved there");
+}
+
+void abandon(OpenLedger& ledger, const RunEvents& run) {
+  if (is_held(ledger.layout().staging(run.begun))) return;
+  ledger.append({"run-abandoned",
+                 run.object,
+                 "",
+                 "begun, not published, and nobody holds its staging",
+                 {}});
+  ledger.say(run.object +
+             " was begun and not finished: recorded as abandoned, its number "
+             "is not used again");
+}
+
+std::map<std::uint64_t, fs::path> staging_folders(const OutLayout& layout) {
+  std::map<std::uint64_t, fs::path> folders;
+  for (const auto& entry : fs::directory_iterator(layout.work())) {
+    const auto number =
+        OutLayout::staging_number(entry.path().filename().string());
+    if (number) folders[*number] = entry.path();
+  }
+  return folders;
+}
+
+void remove_leftovers(OpenLedger& ledger) {
+  auto folders = staging_folders(ledger.layout());
+  for (const RunEvents& run : collect_runs(ledger.lines()).runs) {
+    if (run.pending()) folders.erase(run.begun);
+  }
+  for (const auto& [number, path] : folders) {
+    if (is_held(path)) continue;
+    remove_tree(path);
+    ledger.say("what was left of " + path.filename().string() +
+               " in OUT/.work was removed");
+  }
+}
+
+}  // namespace
+
+void recover_runs(OpenLedger& ledger) {
+  const RunHistory history = collect_runs(ledger.lines());
+  if (!history.deviations.empty()) {
+    halt_as_damaged(history.deviations.front().place,
+                    history.deviations.front().what);
+  }
+  // All that could be damage is looked at before anything is changed.
+  for (const RunEvents& run : history.runs) {
+    if (run.published != 0) check_published(ledger, run);
+  }
+  for (const RunEvents& run : history.runs) {
+    if (run.published != 0) finish_published(ledger, run);
+    if (run.pending()) abandon(ledger, run);
+  }
+  remove_leftovers(ledger);
+}
+
+void move_into_place(const OutLayout& layout, std::uint64_t begun,
+                     const std::string& run) {
+  const fs::path target = layout.out / run;
+  make_folders(target.parent_path());
+  rename_new(layout.staging(begun), target);
+  flush_folder(target.parent_path());
+  flush_folder(layout.work());
+}
+
+}  // namespace loqsmith
