@@ -162,10 +162,12 @@ std::optional<double> relative_standard_error(const Calibration& calibration,
 std::optional<NotApplicable> why_not_computed(
     const CalibrationSettings& settings) {
   if (settings.weight == CalibrationSettings::Weight::InverseVariance)
-    return NotApplicable{"weight 1/s2 is not available in this version"};
+    return NotApplicable{
+        "not-available: weight 1/s2 is not available in this version"};
   if (settings.sets != CalibrationSettings::Sets::One)
     return NotApplicable{
-        "more than one calibration set is not available in this version"};
+        "not-available: more than one calibration set is not available in this "
+        "version"};
   return std::nullopt;
 }
 
@@ -174,13 +176,14 @@ std::optional<NotApplicable> why_not_computed(
 std::optional<NotApplicable> why_not_rising(const Calibration& calibration) {
   if (!(calibration.slope > 0.0))
     return NotApplicable{
-        "the slope is not positive: the response does not grow with the "
+        "slope-not-positive: the response does not grow with the "
         "concentration"};
   const double at_highest =
       calibration.slope + 2.0 * calibration.curvature * calibration.highest;
   if (!(at_highest > 0.0))
     return NotApplicable{
-        "the quadratic curve turns over below the highest standard: leave out "
+        "curve-turns-over: the quadratic curve turns over below the highest "
+        "standard: leave out "
         "the highest levels or choose another model"};
   return std::nullopt;
 }
@@ -190,11 +193,11 @@ std::optional<NotApplicable> why_not_enough(const Calibration& calibration,
   const auto needed = static_cast<std::size_t>(coefficients) + 1;
   const std::size_t levels = calibration.used_levels();
   if (levels < needed)
-    return NotApplicable{"standards at " + number_of_levels(levels) +
-                         " above zero, this model needs at least " +
-                         std::to_string(needed)};
+    return NotApplicable{
+        "few-levels: standards at " + number_of_levels(levels) +
+        " above zero, this model needs at least " + std::to_string(needed)};
   if (all_responses_equal(calibration.points))
-    return NotApplicable{"all standards gave the same response"};
+    return NotApplicable{"flat-response: all standards gave the same response"};
   return std::nullopt;
 }
 
@@ -225,7 +228,7 @@ Outcome<Calibration> fit_calibration(std::vector<StandardPoint> points,
     return *lacking;
 
   const Outcome<LeastSquaresFit> fit = fit_used(calibration.points, powers);
-  if (!fit) return NotApplicable{fit.reason()};
+  if (!fit) return NotApplicable{"no-fit: " + fit.reason()};
   take_coefficients(calibration, *fit, powers);
   if (auto falling = why_not_rising(calibration)) return *falling;
 

@@ -75,7 +75,8 @@ Outcome<InversePrediction> concentration_from_response(
                               4.0 * calibration.curvature * above;
   if (!(discriminant >= 0.0))
     return NotApplicable{
-        "the response lies beyond the turning point of the quadratic curve"};
+        "beyond-curve: the response lies beyond the turning point of the "
+        "quadratic curve"};
   InversePrediction found;
   found.concentration =
       2.0 * above / (calibration.slope + std::sqrt(discriminant));
@@ -95,14 +96,15 @@ Outcome<ConcentrationInterval> fieller_interval(const Calibration& calibration,
       settings.weight != CalibrationSettings::Weight::None ||
       settings.intercept != CalibrationSettings::Intercept::Fitted)
     return NotApplicable{
-        "the exact interval is that of an unweighted straight line"};
+        "not-available: the exact interval is that of an unweighted straight "
+        "line"};
   const double b = calibration.slope;
   const double slope_variance = calibration.covariance[1][1];
   const double t = two_sided_t(calibration);
   const double g = t * t * slope_variance / (b * b);
   if (!(g < 1.0))
     return NotApplicable{
-        "no finite interval: the slope does not differ from zero"};
+        "no-finite-interval: the slope does not differ from zero"};
 
   const double mean_x = slope_variance > 0.0
                             ? -calibration.covariance[0][1] / slope_variance

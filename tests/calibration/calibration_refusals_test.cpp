@@ -39,10 +39,10 @@ TEST(CalibrationRefusals, ZeroIsNoLevel) {
 TEST(CalibrationRefusals, FlatOrFallingResponses) {
   EXPECT_TRUE(
       contains(reason(fit_calibration(standards({{1, 5}, {2, 5}, {3, 5}}), {})),
-               "same response"));
+               "flat-response: all standards gave the same response"));
   EXPECT_TRUE(
       contains(reason(fit_calibration(standards({{1, 5}, {2, 4}, {3, 3}}), {})),
-               "slope is not positive"));
+               "slope-not-positive: "));
 }
 
 TEST(CalibrationRefusals, CurveThatTurnsOverInsideTheRange) {
@@ -51,7 +51,7 @@ TEST(CalibrationRefusals, CurveThatTurnsOverInsideTheRange) {
     pairs.emplace_back(x, 10.0 * x - 0.7 * x * x);
   EXPECT_TRUE(contains(
       reason(fit_calibration(standards(pairs), {.model = Model::Quadratic})),
-      "turns over"));
+      "curve-turns-over: "));
 }
 
 TEST(CalibrationRefusals, WhatIsNotComputedYet) {

@@ -13,9 +13,10 @@ namespace loqsmith {
 /// is left out with the note "zero-level-unweighted-only") and never counts as
 /// a level. All levels count as accepted until accept_levels() says otherwise.
 ///
-/// @return not applicable: fewer distinct levels than the model has
-///         coefficients plus one, all responses equal, slope not positive,
-///         settings that this version does not compute.
+/// @return not applicable (a reason word, then words): fewer distinct levels
+///         above zero than the model has coefficients plus one, all responses
+///         equal, slope not positive, a quadratic that turns over below the
+///         highest standard, settings that this version does not compute.
 Outcome<Calibration> fit_calibration(std::vector<StandardPoint> points,
                                      const CalibrationSettings& settings);
 

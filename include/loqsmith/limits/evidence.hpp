@@ -45,9 +45,10 @@ struct LimitEvidence {
   /// the sources used for the lowest standards; nothing: not measured.
   std::optional<double> noise;
   NoiseSettings::Measure noise_measure = NoiseSettings::Measure::HalfPeakToPeak;
-  bool bounds_own = false;           ///< integration bounds="own"
-  bool baseline_biased = false;      ///< asymmetric least squares or snip
-  bool carry_over_passed = false;    ///< the carry-over check is present and passed
+  bool bounds_own = false;       ///< integration bounds="own"
+  bool baseline_biased = false;  ///< asymmetric least squares or snip
+  bool carry_over_passed =
+      false;  ///< the carry-over check is present and passed
 };
 
 }  // namespace loqsmith

@@ -16,9 +16,9 @@ struct ProcedureSettings {
   std::optional<BlankKind> blanks;  ///< nothing: that of <limits>
   double detection_factor = 3.0;
   double quantitation_factor = 10.0;
-  bool offset_blank_mean = false;     ///< blank-deviation
-  std::optional<double> up_to = 10.0; ///< times the lowest; nothing: all
-  double detection_ratio = 3.0;       ///< signal-to-noise
+  bool offset_blank_mean = false;      ///< blank-deviation
+  std::optional<double> up_to = 10.0;  ///< times the lowest; nothing: all
+  double detection_ratio = 3.0;        ///< signal-to-noise
   double quantitation_ratio = 10.0;
   double confidence = 0.99;  ///< spike-replicates
   double spike_ratio_low = 2.0;
@@ -28,9 +28,9 @@ struct ProcedureSettings {
   double k = 3.0;
   int replicates = 1;
   int blank_replicates = 0;
-  bool variance_linear = false;  ///< critical-and-detectable
-  bool way_blank = false;        ///< din-32645
-  bool ranks = false;            ///< blank-and-low-level
+  bool variance_linear = false;      ///< critical-and-detectable
+  bool way_blank = false;            ///< din-32645
+  bool ranks = false;                ///< blank-and-low-level
   double relative_deviation = 0.10;  ///< two-component
   double acceptance_low = 80.0;      ///< accuracy-profile, percent
   double acceptance_high = 120.0;

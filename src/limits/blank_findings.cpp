@@ -1,0 +1,106 @@
+#include <cmath>
+#include <string>
+
+#include "loqsmith/limits/blanks.hpp"
+#include "loqsmith/limits/words.hpp"
+#include "loqsmith/numerics/distributions.hpp"
+#include "loqsmith/numerics/least_squares.hpp"
+
+namespace loqsmith {
+namespace {
+
+// One false alarm in a hundred clean nights.
+constexpr double kAlarmRate = 0.01;
+constexpr std::size_t kLeastForDrift = 5;
+
+void judge_number(LimitEstimate& estimate, const BlankSample& sample,
+                  const LimitSettings& settings) {
+  const auto minimum = static_cast<std::size_t>(settings.minimum_blanks);
+  if (sample.n() >= minimum) return;
+  std::string text = counted(sample.n(), "usable blank") +
+                     ", the method asks for at least " +
+                     std::to_string(minimum);
+  if (sample.left_out > 0)
+    text += "; " + std::to_string(sample.left_out) + " left out: after-high";
+  estimate.findings.push_back({Grade::NotValid, "few-blanks", text});
+}
+
+void judge_left_out(LimitEstimate& estimate, const BlankSample& sample,
+                    const LimitSettings& settings) {
+  const auto minimum = static_cast<std::size_t>(settings.minimum_blanks);
+  if (sample.left_out == 0 || sample.n() < minimum) return;
+  estimate.findings.push_back(
+      {Grade::Note, "after-high",
+       counted(sample.left_out, "blank") +
+           " right after an injection above half the range left out"});
+}
+
+void judge_bounds(LimitEstimate& estimate, const LimitEvidence& evidence) {
+  if (!evidence.bounds_own) return;
+  estimate.findings.push_back(
+      {Grade::NotValid, "own-bounds",
+       "peaks are integrated between their found feet, blanks are not: the "
+       "blanks' spread says nothing of the samples'"});
+}
+
+// Critical value (n-1)/sqrt(n) sqrt(t^2/(n-2+t^2)), t at alpha/(2n) with n-2
+// degrees of freedom: Grubbs, Technometrics 11 (1969) 1; ISO 5725-2 (1994)
+// 7.3.4, from memory.
+double grubbs_critical_value(double n) {
+  const double t = student_t_quantile(1.0 - kAlarmRate / (2.0 * n), n - 2.0);
+  return (n - 1.0) / std::sqrt(n) * std::sqrt(t * t / (n - 2.0 + t * t));
+}
+
+void judge_outlier(LimitEstimate& estimate, const BlankSample& sample) {
+  const BlankResponse* farthest = &sample.blanks.front();
+  for (const BlankResponse& blank : sample.blanks)
+    if (std::abs(blank.response - sample.mean) >
+        std::abs(farthest->response - sample.mean))
+      farthest = &blank;
+  const double distance =
+      std::abs(farthest->response - sample.mean) / sample.sd;
+  const double critical =
+      grubbs_critical_value(static_cast<double>(sample.n()));
+  if (!(distance > critical)) return;
+  estimate.findings.push_back(
+      {Grade::Caution, "blank-outlier",
+       "the blank of injection " + std::to_string(farthest->injection) +
+           " lies " + figure(distance) +
+           " standard deviations from the mean (Grubbs, 1 %: " +
+           figure(critical) + "); it stays in"});
+}
+
+void judge_drift(LimitEstimate& estimate, const BlankSample& sample) {
+  if (sample.n() < kLeastForDrift) return;
+  std::vector<double> order, response;
+  for (const BlankResponse& blank : sample.blanks) {
+    order.push_back(static_cast<double>(order.size()));
+    response.push_back(blank.response);
+  }
+  const auto line = fit_polynomial(order, response, 0, 1);
+  if (!line || !(line->standard_errors[1] > 0.0)) return;
+  const double t = std::abs(line->coefficients[1]) / line->standard_errors[1];
+  const double critical =
+      student_t_quantile(1.0 - 0.5 * kAlarmRate, line->degrees_of_freedom);
+  if (!(t > critical)) return;
+  const double change = line->coefficients[1] * order.back();
+  estimate.findings.push_back(
+      {Grade::Caution, "blanks-drift",
+       "the blanks change over the run by " + figure(change / sample.sd) +
+           " of their standard deviations (t " + figure(t) +
+           ", 1 %: " + figure(critical) + ")"});
+}
+
+}  // namespace
+
+void judge_blanks(LimitEstimate& estimate, const BlankSample& sample,
+                  const LimitEvidence& evidence,
+                  const LimitSettings& settings) {
+  judge_number(estimate, sample, settings);
+  judge_left_out(estimate, sample, settings);
+  judge_bounds(estimate, evidence);
+  judge_outlier(estimate, sample);
+  judge_drift(estimate, sample);
+}
+
+}  // namespace loqsmith
