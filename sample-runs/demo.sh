@@ -32,7 +32,7 @@ done
 echo
 echo "Look into $out:"
 for run in well-water-herbicides tablet-coating-solvents; do
-  latest=$(ls -d "$out/$run"/run-* | tail -n 1)
+  for latest in "$out/$run"/run-*; do :; done
   echo "  $latest/results.csv"
   echo "  $latest/report.html"
 done
