@@ -1,0 +1,130 @@
+#include "loqsmith/judgement/limit_evidence.hpp"
+
+#include "judgement/night_builder.hpp"
+#include "support/tolerance.hpp"
+
+namespace loqsmith {
+namespace {
+
+using test::agrees_to_digits;
+using test::line;
+using test::NightBuilder;
+using test::NightRow;
+using test::same_bits;
+
+LimitEvidence evidence_of(NightBuilder& night) {
+  return gather_limit_evidence(night.collect(), line(2.0, 1.0, 100.0));
+}
+
+TEST(LimitEvidence, BlanksByKindSignedAndInRunOrder) {
+  NightBuilder night;
+  night.add(Role::SolventBlank, -0.3, false);
+  night.add(Role::MethodBlank, 0.2, false).injection.prep = "P1";
+  night.standard(0.0);
+  night.add(Role::SolventBlank, 0.1, false).peak = NotApplicable{"no-signal"};
+  night.add(Role::Sample, 1.0);
+  const LimitEvidence evidence = evidence_of(night);
+  ASSERT_EQ(evidence.blanks.size(), 3U);
+  EXPECT_EQ(evidence.blanks[0].kind, BlankKind::Solvent);
+  EXPECT_TRUE(same_bits(evidence.blanks[0].response, -0.3));
+  EXPECT_EQ(evidence.blanks[1].kind, BlankKind::Method);
+  EXPECT_EQ(evidence.blanks[1].prep, "P1");
+  EXPECT_EQ(evidence.blanks[2].kind, BlankKind::ZeroStandard);
+  EXPECT_EQ(evidence.blanks[2].injection, 3);
+}
+
+// Half the range is 50; the detector gives 2 a unit.
+TEST(LimitEvidence, AfterHighGoesByTheInjectionRightBefore) {
+  NightBuilder night;
+  night.add(Role::SolventBlank, 0.0);  // nothing before it
+  night.add(Role::Sample, 100.0);      // exactly half: not above
+  night.add(Role::SolventBlank, 0.0);
+  night.add(Role::Sample, 100.1);
+  night.add(Role::SolventBlank, 0.0);  // after high
+  night.add(Role::SolventBlank, 0.0);  // a blank stands between
+  night.add(Role::Sample, 150.0);
+  night.add(Role::Conditioning, 0.0);
+  night.add(Role::SolventBlank, 0.0);  // conditioning stands between
+  // A standard whose file could not be read still carried its amount.
+  night.add_level(Role::Standard, 100.0, 0.0).peak =
+      NotApplicable{"file-refused: cut off"};
+  night.add(Role::SolventBlank, 0.0);  // after high
+  // The amount of a control is not one in the vial: its response decides.
+  night.add_level(Role::Control, 100.0, 10.0);
+  night.add(Role::SolventBlank, 0.0);
+  std::string after_high;
+  for (const BlankResponse& blank : evidence_of(night).blanks) {
+    after_high += blank.after_high ? 'H' : '.';
+  }
+  EXPECT_EQ(after_high, "..H..H.");
+}
+
+TEST(LimitEvidence, SpikesAreDividedBackToTheVial) {
+  NightBuilder night;
+  auto& spike = night.add_level(Role::LowSpike, 40.0, 3.0);
+  spike.injection.dilution = 2.0;
+  spike.injection.final_volume = 10.0;
+  spike.injection.sample_amount = 0.5;
+  night.add_level(Role::LowSpike, 40.0, -0.2, false);
+  night.add(Role::LowSpike, 3.0).injection.level = "without the analyte";
+  const LimitEvidence evidence = evidence_of(night);
+  ASSERT_EQ(evidence.spikes.size(), 2U);
+  EXPECT_TRUE(same_bits(evidence.spikes[0].nominal_vial, 1.0));
+  EXPECT_TRUE(same_bits(evidence.spikes[0].found_vial, 1.5));
+  // Below zero it stays what it is.
+  EXPECT_TRUE(agrees_to_digits(evidence.spikes[1].found_vial, -0.1, 14));
+}
+
+TEST(LimitEvidence, HeightsAndNoiseOfTheLowStandards) {
+  NightBuilder night;
+  for (const double x : {0.0, 0.5, 1.0, 2.0, 10.0, 10.1}) night.standard(x);
+  night.rows[0].peak.value().found = true;
+  night.rows[1].peak.value().found = false;
+  night.rows[2].peak.value().noise = 3.0;
+  night.rows[3].peak.value().noise = 5.0;
+  night.rows[4].peak.value().noise = 4.0;
+  night.rows[5].peak.value().noise = 100.0;  // beyond 10 times the lowest
+  LimitEvidence evidence = evidence_of(night);
+  ASSERT_EQ(evidence.heights.size(), 4U);
+  EXPECT_TRUE(same_bits(evidence.heights[0].concentration, 1.0));
+  EXPECT_TRUE(same_bits(evidence.heights[0].height, 20.0));
+  EXPECT_TRUE(same_bits(*evidence.noise, 4.0));
+  night.rows[4].peak.value().reasons = {"saturated"};
+  evidence = evidence_of(night);
+  EXPECT_EQ(evidence.heights.size(), 3U);
+  EXPECT_TRUE(same_bits(*evidence.noise, 4.0));  // mean of 3 and 5
+  for (NightRow& row : night.rows) row.peak.value().noise.reset();
+  EXPECT_FALSE(evidence_of(night).noise.has_value());
+}
+
+TEST(LimitEvidence, SettingsThatBiasBlanksAreHandedOn) {
+  NightBuilder night;
+  night.standard(1.0);
+  EXPECT_FALSE(evidence_of(night).bounds_own);
+  EXPECT_FALSE(evidence_of(night).baseline_biased);
+  night.settings.target.integration.bounds = IntegrationSettings::Bounds::Own;
+  night.settings.target.integration.baseline =
+      IntegrationSettings::Baseline::Snip;
+  EXPECT_TRUE(evidence_of(night).bounds_own);
+  EXPECT_TRUE(evidence_of(night).baseline_biased);
+}
+
+TEST(LimitEvidence, BlanksWithoutInternalStandardAreNoted) {
+  NightBuilder night;
+  night.with_internal_standard = true;
+  night.standard(1.0).internal_standard = test::peak_of(100.0);
+  night.add(Role::SolventBlank, 0.1).internal_standard =
+      test::peak_of(0.0, false);
+  LimitsOfAnalyte limits;
+  limits.rows = {{"blank-deviation", LimitEstimate{}, true, true},
+                 {"signal-to-noise", LimitEstimate{}, false, false},
+                 {"blank-deviation", NotApplicable{"few"}, false, false}};
+  note_mean_internal_standard(night.collect(), limits);
+  ASSERT_EQ(limits.rows[0].estimate->findings.size(), 1U);
+  EXPECT_EQ(limits.rows[0].estimate->findings[0].word,
+            "mean-internal-standard");
+  EXPECT_TRUE(limits.rows[1].estimate->findings.empty());
+}
+
+}  // namespace
+}  // namespace loqsmith
