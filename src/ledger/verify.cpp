@@ -19,12 +19,16 @@ namespace {
 
 namespace fs = std::filesystem;
 
-// How often to look again where a writer at work may be the explanation: it
-// needs some milliseconds between a line and its head, or a line and its
-// folder.
-constexpr int kLooks = 5;
+using SteadyClock = std::chrono::steady_clock;
 
-void pause() { std::this_thread::sleep_for(std::chrono::milliseconds(50)); }
+// Looks again until it is settled or the time is up: a writer at work needs
+// some milliseconds between a line and its head, or a line and its folder.
+template <class Look>
+void look_until(SteadyClock::time_point deadline, Look is_settled) {
+  while (!is_settled() && SteadyClock::now() < deadline) {
+    std::this_thread::sleep_for(std::chrono::milliseconds(25));
+  }
+}
 
 bool is_there(const fs::path& path) {
   return fs::exists(fs::symlink_status(path));
@@ -51,7 +55,8 @@ std::vector<std::string> files_of(const fs::path& out) {
 
 class Verification {
  public:
-  explicit Verification(const fs::path& out) : layout_{out} {}
+  Verification(const fs::path& out, SteadyClock::time_point deadline)
+      : layout_{out}, deadline_(deadline) {}
 
   VerifyReport take() {
     // The list comes first: a run published from here on is then in the ledger
@@ -85,6 +90,7 @@ class Verification {
   }
 
   OutLayout layout_;
+  SteadyClock::time_point deadline_;
   VerifyReport report_;
   std::set<std::string> known_{"ledger.jsonl", "ledger.head"};
   std::set<std::string> unchecked_;  // runs whose manifest cannot be trusted
@@ -102,25 +108,23 @@ std::optional<std::string> Verification::read(const fs::path& path,
 }
 
 // A ledger that is read while a line is appended may end in the middle of it,
-// or its head may be one behind: looking again tells this from an interruption.
+// or its head may be behind.
 Chain Verification::read_ledger() {
-  for (int look = 1;; ++look) {
-    const std::size_t before = report_.deviations.size();
+  Chain chain;
+  HeadCheck check;
+  look_until(deadline_, [&] {
+    report_.deviations.clear();
     const auto head = read(layout_.head(), "ledger.head");
     const auto bytes = read(layout_.ledger(), "ledger.jsonl");
-    Chain chain = read_chain(bytes.value_or(""));
-    const HeadCheck check = check_head(chain, head);
-    const bool settled = chain.torn.empty() && !check.behind;
-    if (settled || look == kLooks) {
-      if (!bytes && report_.deviations.size() == before) {
-        add({{"ledger.jsonl", "it is missing"}});
-      }
-      judge_ends(chain, check);
-      return chain;
+    if (!bytes && report_.deviations.empty()) {
+      add({{"ledger.jsonl", "it is missing"}});
     }
-    report_.deviations.resize(before);
-    pause();
-  }
+    chain = read_chain(bytes.value_or(""));
+    check = check_head(chain, head);
+    return chain.torn.empty() && !check.behind;
+  });
+  judge_ends(chain, check);
+  return chain;
 }
 
 void Verification::judge_ends(const Chain& chain, const HeadCheck& check) {
@@ -140,18 +144,18 @@ void Verification::judge_ends(const Chain& chain, const HeadCheck& check) {
   if (check.damage) add({*check.damage});
 }
 
-// The folder that holds a published run; staging between the two last steps of
-// its publication.
+// The folder that holds a published run: staging between the two last steps of
+// its publication, empty where there is neither.
 fs::path Verification::find_run(const RunEvents& run) {
   const fs::path folder = layout_.out / run.object;
-  for (int look = 1; look <= kLooks; ++look) {
-    if (is_there(folder)) return folder;
-    if (!is_there(layout_.staging(run.begun))) break;
-    pause();
-  }
+  const fs::path staging = layout_.staging(run.begun);
+  bool staged = false;
+  look_until(deadline_, [&] {
+    staged = is_there(staging);
+    return is_there(folder) || !staged;
+  });
   if (is_there(folder)) return folder;
-  return is_there(layout_.staging(run.begun)) ? layout_.staging(run.begun)
-                                              : fs::path{};
+  return staged ? staging : fs::path{};
 }
 
 void Verification::check_run(const RunEvents& run) {
@@ -162,7 +166,7 @@ void Verification::check_run(const RunEvents& run) {
     add({{run.object, "the folder of this published run is missing"}});
     return;
   }
-  if (folder == layout_.staging(run.begun)) {
+  if (folder != layout_.out / run.object) {
     add({{run.object,
           "it is published but not in place: its writer was interrupted, the "
           "next start moves it there"}});
@@ -221,8 +225,10 @@ void Verification::note_work(const RunHistory& history) {
 
 }  // namespace
 
-VerifyReport verify_out(const fs::path& out) {
-  return halt_on_failure([&] { return Verification(out).take(); });
+VerifyReport verify_out(const fs::path& out,
+                        std::chrono::milliseconds patience) {
+  return halt_on_failure(
+      [&] { return Verification(out, SteadyClock::now() + patience).take(); });
 }
 
 }  // namespace loqsmith

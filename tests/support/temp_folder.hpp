@@ -13,10 +13,11 @@ namespace loqsmith::test {
 /// that is in it when the test ends.
 class TempFolder {
  public:
-  TempFolder() {
-    std::string name =
-        (std::filesystem::temp_directory_path() / "loqsmith-test-XXXXXX")
-            .string();
+  TempFolder() : TempFolder(std::filesystem::temp_directory_path()) {}
+
+  /// Below another folder: kept_in_memory() for tests that flush often.
+  explicit TempFolder(const std::filesystem::path& below) {
+    std::string name = (below / "loqsmith-test-XXXXXX").string();
     if (::mkdtemp(name.data()) == nullptr) {
       throw std::runtime_error("cannot create " + name);
     }
@@ -26,6 +27,13 @@ class TempFolder {
   ~TempFolder() {
     std::error_code ignored;
     std::filesystem::remove_all(path_, ignored);
+  }
+
+  /// Linux's file system in memory where there is one.
+  static std::filesystem::path kept_in_memory() {
+    return std::filesystem::is_directory("/dev/shm")
+               ? std::filesystem::path("/dev/shm")
+               : std::filesystem::temp_directory_path();
   }
 
   TempFolder(const TempFolder&) = delete;

@@ -1,5 +1,6 @@
 #pragma once
 
+#include <chrono>
 #include <cstdint>
 #include <filesystem>
 #include <string>
@@ -31,7 +32,11 @@ struct VerifyReport {
 /// Chain and head written anew as a whole by someone with write access look
 /// right: that shows only against a LedgerPlace written down elsewhere.
 ///
+/// @param patience  how long to look again where a writer at work may be the
+///                  explanation
 /// @throws Halt 74 where `out` is no folder that can be read.
-VerifyReport verify_out(const std::filesystem::path& out);
+VerifyReport verify_out(
+    const std::filesystem::path& out,
+    std::chrono::milliseconds patience = std::chrono::milliseconds{250});
 
 }  // namespace loqsmith
