@@ -1,0 +1,57 @@
+#include "loqsmith/record/report_parts.hpp"
+
+#include "loqsmith/record/html.hpp"
+
+namespace loqsmith {
+
+bool is_sample_like(Role role) {
+  switch (role) {
+    case Role::Sample:
+    case Role::Duplicate:
+    case Role::Fortified:
+    case Role::FortifiedDuplicate:
+    case Role::AddedStandard:
+      return true;
+    case Role::Conditioning:
+    case Role::SolventBlank:
+    case Role::MethodBlank:
+    case Role::Standard:
+    case Role::SecondSource:
+    case Role::CheckStandard:
+    case Role::LowSpike:
+    case Role::Control:
+      return false;
+  }
+  return false;
+}
+
+std::string status_words(Status status) {
+  switch (status) {
+    case Status::NotDetected:
+      return "not detected";
+    case Status::Estimated:
+      return "estimated";
+    case Status::Reportable:
+      return "reportable";
+    case Status::AboveRange:
+      return "above the range";
+    case Status::Withheld:
+      return "withheld";
+  }
+  return {};
+}
+
+std::string status_mark(Status status) {
+  return "<svg class=\"mark\" aria-hidden=\"true\"><use href=\"#mark-" +
+         status_name(status) + "\"/></svg>";
+}
+
+std::string result_id(int injection, const std::string& analyte) {
+  return html_id("r" + std::to_string(injection) + "-", analyte);
+}
+
+std::string analyte_id(const std::string& analyte) {
+  return html_id("a-", analyte);
+}
+
+}  // namespace loqsmith
