@@ -32,6 +32,7 @@ struct FileContents {
   std::vector<FileRun> runs;
   std::vector<Trace> traces;
   std::vector<RefusedTrace> refused;
+  std::vector<TraceHeader> left_out;  ///< sound headers nobody asked for
   std::vector<std::string> skipped;   ///< series that are no trace, and why
   std::vector<std::string> warnings;  ///< of the file as a whole
 };
@@ -41,7 +42,8 @@ struct FileContents {
 /// @param bytes   the whole file
 /// @param name    for messages
 /// @param wanted  nothing: every trace is decoded; otherwise only traces that
-///                one of these selectors matches (the rest is left out)
+///                one of these selectors matches (of the rest only headers
+///                stand in `left_out`)
 /// @throws InputError where the file as a whole must be refused. A trace that
 ///         must be refused alone stands in `refused`.
 FileContents read_chromatogram_file(
