@@ -1,1 +1,228 @@
-namespace loqsmith {}
+#include "loqsmith/signal/measure_peak.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+#include "loqsmith/signal/choose_apex.hpp"
+#include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/peak_shape.hpp"
+#include "loqsmith/signal/place_window.hpp"
+#include "loqsmith/signal/point_noise.hpp"
+#include "loqsmith/signal/saturation.hpp"
+#include "loqsmith/signal/summits.hpp"
+
+namespace loqsmith {
+namespace {
+
+constexpr std::size_t kFewestPoints = 5;
+constexpr std::size_t kFewPoints = 10;
+constexpr double kSharpHeight = 50.0;
+constexpr double kMarginWidths = 10.0;
+
+bool available(const IntegrationSettings& settings) {
+  return settings.response != IntegrationSettings::Response::Template &&
+         settings.bounds == IntegrationSettings::Bounds::Template &&
+         settings.baseline == IntegrationSettings::Baseline::Valley &&
+         settings.overlap == IntegrationSettings::Overlap::Drop;
+}
+
+// The part of the trace that one target needs: its window of times, the feet,
+// and neighbours beside them.
+Trace surroundings(const Trace& trace, const TargetSettings& target,
+                   const WindowTemplate& window, double expected) {
+  const double margin =
+      target.window_minutes + kMarginWidths * window.width_half_minutes;
+  return cut_trace(trace, expected - 2.0 * window.left_minutes - margin,
+                   expected + 2.0 * window.right_minutes + margin);
+}
+
+// One target in one trace, measured step by step.
+class Measurement {
+ public:
+  Measurement(const Trace& trace, const TargetSettings& target,
+              const WindowTemplate& window, double expected,
+              const Outcome<NoiseEstimate>& noise)
+      : target_(target), window_(window), expected_(expected), noise_(noise) {
+    const Trace near = surroundings(trace, target, window, expected);
+    const double own = point_to_point_noise(near.signal);
+    point_noise_ = noise ? std::max(noise->standard_deviation, own) : own;
+    const int points =
+        smoothing_length(target.integration, window.width_half_minutes,
+                         typical_step(near.minutes));
+    stretch_ = smooth_stretch(near, points, target.integration.smoothing_order,
+                              point_noise_);
+  }
+
+  Outcome<Peak> measure() {
+    if (stretch_.minutes.size() < 3) {
+      return NotApplicable{"window-not-covered: the trace has no points there"};
+    }
+    chosen_ = choose_apex(stretch_, target_, window_, expected_, point_noise_);
+    const Outcome<PlacedWindow> placed =
+        place(chosen_.minutes.value_or(expected_));
+    if (!placed) return NotApplicable{placed.reason()};
+    placed_ = *placed;
+    const std::size_t points = points_in_window(stretch_, placed_);
+    if (points < kFewestPoints) {
+      return NotApplicable{"too-few-points: " + std::to_string(points) +
+                           " in the window, at least 5 are needed"};
+    }
+    if (points < kFewPoints) add_reason("few-points");
+    state_response();
+    if (peak_.found) state_shape();
+    state_noise();
+    gather_reasons();
+    return peak_;
+  }
+
+ private:
+  Outcome<PlacedWindow> place(double apex) const {
+    return place_window(stretch_, chosen_.neighbours,
+                        {apex, window_.left_minutes, window_.right_minutes,
+                         window_.width_half_minutes,
+                         chosen_.minutes.has_value(), point_noise_});
+  }
+
+  void state_response() {
+    peak_.found = chosen_.minutes.has_value();
+    double apex = chosen_.minutes.value_or(expected_);
+    if (peak_.found && chosen_.height >= kSharpHeight * point_noise_) {
+      apex = sharpened_apex(stretch_, apex, window_.width_half_minutes);
+      const Outcome<PlacedWindow> again = place(apex);
+      if (again) placed_ = *again;
+    }
+    peak_.retention_minutes = apex;
+    peak_.start_minutes = placed_.left.minutes;
+    peak_.end_minutes = placed_.right.minutes;
+    peak_.area = integrate_window(stretch_, placed_);
+    peak_.height = signal_near(stretch_, apex) - placed_.baseline_at(apex);
+    if (placed_.left.dropped || placed_.right.dropped) peak_.overlap = "drop";
+  }
+
+  std::optional<WidthAt> width(double fraction) const {
+    return width_at(stretch_, placed_, peak_.retention_minutes, peak_.height,
+                    fraction, point_noise_);
+  }
+
+  void state_shape() {
+    if (const auto half = width(0.5)) {
+      peak_.width_half_minutes = half->total();
+      peak_.plates = plate_number(peak_.retention_minutes, half->total());
+      state_resolution();
+    }
+    if (const auto at_5 = width(0.05)) peak_.tailing = tailing_factor(*at_5);
+    if (const auto at_10 = width(0.1)) {
+      peak_.asymmetry = asymmetry_factor(*at_10);
+    }
+    const double half =
+        peak_.width_half_minutes.value_or(window_.width_half_minutes);
+    if (is_saturated(stretch_.minutes, stretch_.signal, peak_.start_minutes,
+                     peak_.end_minutes, peak_.height, half)) {
+      add_reason("saturated");
+    }
+  }
+
+  // To the nearest neighbour, whose width is taken above its own baseline.
+  void state_resolution() {
+    const double own = peak_.retention_minutes;
+    const double least = 0.5 * window_.width_half_minutes;
+    const Summit* nearest = nullptr;
+    for (const Summit& summit : chosen_.neighbours) {
+      const double away = std::abs(summit.minutes - own);
+      if (away <= least) continue;
+      if (!nearest || away < std::abs(nearest->minutes - own)) {
+        nearest = &summit;
+      }
+    }
+    if (nearest == nullptr) return;
+    const auto around = place(nearest->minutes);
+    if (!around) return;
+    const double there = nearest->minutes;
+    const double height =
+        signal_near(stretch_, there) - around->baseline_at(there);
+    const auto half =
+        width_at(stretch_, *around, there, height, 0.5, point_noise_);
+    if (!half) return;
+    peak_.resolution =
+        there > own
+            ? resolution(own, *peak_.width_half_minutes, there, half->total())
+            : resolution(there, half->total(), own, *peak_.width_half_minutes);
+  }
+
+  void state_noise() {
+    if (!noise_) {
+      add_reason("no-noise");
+      return;
+    }
+    peak_.noise = noise_figure(*noise_, target_.noise.measure);
+    if (peak_.found) {
+      const Outcome<double> ratio =
+          signal_to_noise(peak_.height, *noise_, target_.noise.measure);
+      if (ratio) {
+        peak_.signal_to_noise = *ratio;
+      } else {
+        add_reason("noise-zero");
+      }
+    }
+    const bool by_height =
+        target_.integration.response == IntegrationSettings::Response::Height;
+    const std::vector<double> weights =
+        by_height ? height_weights(stretch_, placed_, peak_.retention_minutes)
+                  : area_weights(stretch_, placed_);
+    peak_.response_noise = weighted_noise(weights, noise_->standard_deviation);
+  }
+
+  void gather_reasons() {
+    for (const std::size_t i : stretch_.spikes) {
+      const double t = stretch_.minutes[i];
+      if (t >= peak_.start_minutes && t <= peak_.end_minutes) {
+        add_reason("spike");
+      }
+    }
+    for (const std::string& word : placed_.reasons) add_reason(word);
+    for (const std::string& word : chosen_.reasons) add_reason(word);
+    if (window_.weak) add_reason("weak-template");
+    if (noise_) {
+      for (const std::string& word : noise_->reasons) add_reason(word);
+    }
+  }
+
+  void add_reason(const std::string& word) {
+    const auto& known = peak_.reasons;
+    if (std::find(known.begin(), known.end(), word) == known.end()) {
+      peak_.reasons.push_back(word);
+    }
+  }
+
+  const TargetSettings& target_;
+  const WindowTemplate& window_;
+  double expected_;
+  const Outcome<NoiseEstimate>& noise_;
+  double point_noise_ = 0.0;
+  SmoothedStretch stretch_;
+  ChosenApex chosen_;
+  PlacedWindow placed_;
+  Peak peak_;
+};
+
+}  // namespace
+
+Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
+                           const WindowTemplate& window, double expected,
+                           const Outcome<NoiseEstimate>& noise,
+                           const std::string& noise_source) {
+  if (trace.minutes.empty()) {
+    return NotApplicable{"no-signal: the trace has no points"};
+  }
+  if (!available(target.integration)) {
+    return NotApplicable{
+        "not-available: this version integrates over the template window, "
+        "with a straight baseline and perpendicular drop"};
+  }
+  Outcome<Peak> peak =
+      Measurement(trace, target, window, expected, noise).measure();
+  if (peak && noise) peak.value().noise_source = noise_source;
+  return peak;
+}
+
+}  // namespace loqsmith

@@ -1,0 +1,66 @@
+#pragma once
+
+#include <optional>
+
+#include "loqsmith/signal/place_window.hpp"
+#include "loqsmith/signal/summits.hpp"
+
+namespace loqsmith {
+
+// Definitions of the harmonised pharmacopoeias: Ph. Eur. 2.2.46, USP <621>
+// (2022), JP 2.00; from memory. Widths are those of signal minus baseline, by
+// linear interpolation between points.
+
+/// Distances from the apex to where the peak has fallen to a fraction of its
+/// height.
+struct WidthAt {
+  double front = 0.0;  ///< minutes, > 0
+  double rear = 0.0;   ///< minutes, > 0
+
+  double total() const { return front + rear; }
+};
+
+/// The first crossings outwards from the apex. Nothing where the fraction of
+/// the height does not reach 3 noise standard deviations, or where a foot (or
+/// a neighbour's valley) comes before the crossing.
+std::optional<WidthAt> width_at(const SmoothedStretch& stretch,
+                                const PlacedWindow& window, double apex,
+                                double height, double fraction, double noise);
+
+/// Symmetry factor (tailing): width at 5 % of the height over twice its front
+/// part; 1 for a symmetrical peak.
+double tailing_factor(const WidthAt& at_5_percent);
+
+/// Asymmetry at 10 % of the height: rear over front.
+double asymmetry_factor(const WidthAt& at_10_percent);
+
+/// Apparent number of theoretical plates, 5.54 (t / W)^2 with the width at
+/// half height (the factor as the pharmacopoeias round 8 ln 2).
+double plate_number(double retention_minutes, double width_half_minutes);
+
+/// Resolution of two peaks, 1.18 (t2 - t1) / (W1 + W2), widths at half height.
+double resolution(double first_minutes, double first_width_half,
+                  double second_minutes, double second_width_half);
+
+/// Apex of the parabola through three points, as offset from the middle one
+/// and height; for evenly spaced points t0 - step, t0, t0 + step
+///
+///     offset = step (y- - y+) / (2 (y- - 2 y0 + y+)),
+///     height = y0 - (y- - y+) (offset / step) / 4
+struct ParabolaApex {
+  double minutes = 0.0;
+  double value = 0.0;
+};
+
+/// @return nothing where the three do not bend downwards
+std::optional<ParabolaApex> parabola_apex(const double (&minutes)[3],
+                                          const double (&signal)[3]);
+
+/// The same apex found again with less smoothing (a quarter of the width at
+/// half height; the three highest points themselves where that is no more than
+/// 3 points), for peaks so high that noise does not move it: strong smoothing
+/// shifts the apex of a tailing peak by some hundredths of its width.
+double sharpened_apex(const SmoothedStretch& stretch, double apex,
+                      double width_half_minutes);
+
+}  // namespace loqsmith

@@ -1,0 +1,127 @@
+#include "loqsmith/signal/choose_apex.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+namespace loqsmith {
+namespace {
+
+struct Candidate {
+  Summit summit;
+  double height = 0.0;
+  double deviation = 0.0;
+};
+
+// Width of the smoothed peak at half height, as far as the window goes.
+double smoothed_width(const SmoothedStretch& stretch,
+                      const PlacedWindow& window, double apex, double height,
+                      double width_half) {
+  const double step = 0.02 * width_half;
+  const auto reach = [&](double direction) {
+    double out = 0.0;
+    for (;; out += step) {
+      const double t = apex + direction * out;
+      if (t < window.left.minutes || t > window.right.minutes) return out;
+      if (smoothed_at(stretch, t) - window.baseline_at(t) <= 0.5 * height) {
+        return out;
+      }
+    }
+  };
+  return reach(-1.0) + reach(1.0);
+}
+
+std::optional<Candidate> examine(const SmoothedStretch& stretch,
+                                 const TargetSettings& target,
+                                 const WindowTemplate& window,
+                                 const std::vector<Summit>& neighbours,
+                                 const Summit& summit, double noise) {
+  const Outcome<PlacedWindow> placed =
+      place_window(stretch, neighbours,
+                   {summit.minutes, window.left_minutes, window.right_minutes,
+                    window.width_half_minutes, true, noise});
+  if (!placed) return {};
+  Candidate candidate{summit, 0.0, 0.0};
+  candidate.height = summit.value - placed->baseline_at(summit.minutes);
+  candidate.deviation =
+      smoothed_height_deviation(stretch, *placed, summit.minutes, noise);
+  if (!(candidate.height > 0.0)) return {};
+  if (!(candidate.height >=
+        target.integration.threshold * candidate.deviation)) {
+    return {};
+  }
+  const double least = target.integration.minimum_width_minutes;
+  if (least > 0.0 &&
+      smoothed_width(stretch, *placed, summit.minutes, candidate.height,
+                     window.width_half_minutes) < least) {
+    return {};
+  }
+  return candidate;
+}
+
+// Two summits are two peaks only where the valley between them is deeper than
+// noise digs; the lower one of an unparted pair is a ripple of the higher.
+bool is_ripple(const SmoothedStretch& stretch, const Candidate& candidate,
+               const std::vector<Candidate>& all, double multiple,
+               double noise) {
+  const double least = multiple * std::sqrt(2.0) * stretch.gain * noise;
+  return std::any_of(all.begin(), all.end(), [&](const Candidate& other) {
+    if (!(other.summit.value > candidate.summit.value)) return false;
+    const double a = std::min(candidate.summit.minutes, other.summit.minutes);
+    const double b = std::max(candidate.summit.minutes, other.summit.minutes);
+    const double valley = smoothed_at(stretch, lowest_between(stretch, a, b));
+    return candidate.summit.value - valley < least;
+  });
+}
+
+}  // namespace
+
+double smoothed_height_deviation(const SmoothedStretch& stretch,
+                                 const PlacedWindow& window, double apex,
+                                 double noise) {
+  const double share = window.right_share(apex);
+  double variance = stretch.gain * stretch.gain;
+  const auto add = [&](const Foot& foot, double factor) {
+    const double n =
+        static_cast<double>(std::max<std::size_t>(1, foot.points()));
+    variance += factor * factor / n;
+  };
+  add(window.left, 1.0 - share);
+  add(window.right, share);
+  return noise * std::sqrt(variance);
+}
+
+ChosenApex choose_apex(const SmoothedStretch& stretch,
+                       const TargetSettings& target,
+                       const WindowTemplate& window, double expected,
+                       double noise) {
+  const double multiple = target.integration.threshold;
+  const std::vector<Summit> summits = find_summits(stretch);
+  ChosenApex chosen;
+  chosen.neighbours = significant_summits(stretch, summits, multiple, noise,
+                                          window.width_half_minutes);
+  std::vector<Candidate> candidates;
+  for (const Summit& summit : summits) {
+    if (std::abs(summit.minutes - expected) > target.window_minutes) continue;
+    const auto candidate =
+        examine(stretch, target, window, chosen.neighbours, summit, noise);
+    if (candidate) candidates.push_back(*candidate);
+  }
+  const std::vector<Candidate> all = candidates;
+  std::erase_if(candidates, [&](const Candidate& candidate) {
+    return is_ripple(stretch, candidate, all, multiple, noise);
+  });
+  if (candidates.empty()) return chosen;
+  if (candidates.size() > 1) chosen.reasons.emplace_back("several-peaks");
+  const Candidate& nearest =
+      *std::min_element(candidates.begin(), candidates.end(),
+                        [&](const Candidate& a, const Candidate& b) {
+                          return std::abs(a.summit.minutes - expected) <
+                                 std::abs(b.summit.minutes - expected);
+                        });
+  chosen.minutes = nearest.summit.minutes;
+  chosen.height = nearest.height;
+  chosen.height_deviation = nearest.deviation;
+  return chosen;
+}
+
+}  // namespace loqsmith

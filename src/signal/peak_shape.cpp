@@ -1,0 +1,124 @@
+#include "loqsmith/signal/peak_shape.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <span>
+#include <vector>
+
+#include "loqsmith/signal/savitzky_golay.hpp"
+
+namespace loqsmith {
+namespace {
+
+constexpr double kNoiseMultiple = 3.0;
+
+class Walk {
+ public:
+  Walk(const SmoothedStretch& stretch, const PlacedWindow& window, double apex,
+       double height)
+      : stretch_(stretch), window_(window), apex_(apex), height_(height) {}
+
+  // Distance to the first crossing of a level, going left or right.
+  std::optional<double> crossing(double level, bool left) const {
+    const std::vector<double>& t = stretch_.minutes;
+    double t_before = apex_;
+    double y_before = height_;
+    auto i = static_cast<std::size_t>(
+        (left ? std::lower_bound(t.begin(), t.end(), apex_)
+              : std::upper_bound(t.begin(), t.end(), apex_)) -
+        t.begin());
+    while (left ? i > 0 : i < t.size()) {
+      const std::size_t k = left ? i - 1 : i;
+      const double y = stretch_.signal[k] - window_.baseline_at(t[k]);
+      if (y <= level) {
+        const double share = (y_before - level) / (y_before - y);
+        const double at = t_before + share * (t[k] - t_before);
+        return inside(at) ? std::optional(std::abs(at - apex_)) : std::nullopt;
+      }
+      if (!inside(t[k])) return std::nullopt;
+      t_before = t[k];
+      y_before = y;
+      i = left ? i - 1 : i + 1;
+    }
+    return std::nullopt;
+  }
+
+ private:
+  bool inside(double minutes) const {
+    return minutes >= window_.left.minutes && minutes <= window_.right.minutes;
+  }
+
+  const SmoothedStretch& stretch_;
+  const PlacedWindow& window_;
+  double apex_;
+  double height_;
+};
+
+}  // namespace
+
+std::optional<WidthAt> width_at(const SmoothedStretch& stretch,
+                                const PlacedWindow& window, double apex,
+                                double height, double fraction, double noise) {
+  const double level = fraction * height;
+  if (!(level > 0.0) || !(level >= kNoiseMultiple * noise)) return {};
+  const Walk walk(stretch, window, apex, height);
+  const std::optional<double> front = walk.crossing(level, true);
+  const std::optional<double> rear = walk.crossing(level, false);
+  if (!front || !rear || !(*front > 0.0) || !(*rear > 0.0)) return {};
+  return WidthAt{*front, *rear};
+}
+
+double tailing_factor(const WidthAt& at_5_percent) {
+  return at_5_percent.total() / (2.0 * at_5_percent.front);
+}
+
+double asymmetry_factor(const WidthAt& at_10_percent) {
+  return at_10_percent.rear / at_10_percent.front;
+}
+
+double plate_number(double retention_minutes, double width_half_minutes) {
+  const double ratio = retention_minutes / width_half_minutes;
+  return 5.54 * ratio * ratio;
+}
+
+double resolution(double first_minutes, double first_width_half,
+                  double second_minutes, double second_width_half) {
+  return 1.18 * (second_minutes - first_minutes) /
+         (first_width_half + second_width_half);
+}
+
+std::optional<ParabolaApex> parabola_apex(const double (&minutes)[3],
+                                          const double (&signal)[3]) {
+  // Newton's form about the middle point.
+  const double before = minutes[0] - minutes[1];
+  const double after = minutes[2] - minutes[1];
+  const double rise = (signal[0] - signal[1]) / before;
+  const double fall = (signal[2] - signal[1]) / after;
+  const double bend = (fall - rise) / (after - before);
+  if (!(bend < 0.0)) return {};
+  const double slope = rise - bend * before;
+  const double offset = -slope / (2.0 * bend);
+  return ParabolaApex{minutes[1] + offset, signal[1] + 0.5 * slope * offset};
+}
+
+double sharpened_apex(const SmoothedStretch& stretch, double apex,
+                      double width_half_minutes) {
+  const double reach = 0.5 * width_half_minutes;
+  Trace whole;
+  whole.minutes = stretch.minutes;
+  whole.signal = stretch.signal;
+  const Trace top = cut_trace(whole, apex - reach, apex + reach);
+  const int points = smoothing_length({}, 0.25 * width_half_minutes,
+                                      typical_step(top.minutes));
+  const std::vector<double> smoothed =
+      savitzky_golay(top.minutes, top.signal, points, 2, 0);
+  const auto i = static_cast<std::size_t>(
+      std::max_element(smoothed.begin(), smoothed.end()) - smoothed.begin());
+  if (i == 0 || i + 1 >= smoothed.size()) return apex;
+  const auto found =
+      parabola_apex({top.minutes[i - 1], top.minutes[i], top.minutes[i + 1]},
+                    {smoothed[i - 1], smoothed[i], smoothed[i + 1]});
+  return found ? found->minutes : apex;
+}
+
+}  // namespace loqsmith

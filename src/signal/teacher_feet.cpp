@@ -1,0 +1,194 @@
+#include "loqsmith/signal/teacher_feet.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <optional>
+#include <vector>
+
+#include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/noise.hpp"
+#include "loqsmith/signal/peak_shape.hpp"
+#include "loqsmith/signal/place_window.hpp"
+#include "loqsmith/signal/point_noise.hpp"
+#include "loqsmith/signal/saturation.hpp"
+#include "loqsmith/signal/summits.hpp"
+
+namespace loqsmith {
+namespace {
+
+constexpr double kFirstWidths = 3.0;
+constexpr double kSliceWidths = 12.0;
+constexpr double kRelativeFloor = 0.001;
+constexpr double kStillFalling = 0.1;
+constexpr double kOverlapShare = 0.025;
+constexpr double kSharpHeight = 50.0;
+
+// One peak at work.
+class Teacher {
+ public:
+  Teacher(const Trace& near, const TargetSettings& target, double apex,
+          double width_half)
+      : noise_(point_to_point_noise(near.signal)),
+        width_half_(width_half),
+        stretch_(smooth_stretch(near,
+                                smoothing_length(target.integration, width_half,
+                                                 typical_step(near.minutes)),
+                                target.integration.smoothing_order, noise_)),
+        apex_(apex) {
+    const std::vector<Summit> all = find_summits(stretch_);
+    summits_ = significant_summits(stretch_, all, target.integration.threshold,
+                                   noise_, width_half);
+    settle_apex();
+  }
+
+  bool has_peak() const { return seen_; }
+  double apex() const { return apex_; }
+  const SmoothedStretch& stretch() const { return stretch_; }
+
+  Outcome<PlacedWindow> place(double left, double right) const {
+    return place_window(stretch_, summits_,
+                        {apex_, left, right, width_half_, true, noise_});
+  }
+
+  // The longest first window that leaves room for a baseline.
+  double first_reach(bool left) const {
+    const double room = left ? apex_ - stretch_.minutes.front()
+                             : stretch_.minutes.back() - apex_;
+    return std::min(kFirstWidths * width_half_, room - 0.5 * width_half_);
+  }
+
+  // Distance of the foot on one side; the placed window holds the valley.
+  double foot(const PlacedWindow& window, bool left) const {
+    const double height =
+        smoothed_at(stretch_, apex_) - window.baseline_at(apex_);
+    const double level =
+        std::max(stretch_.gain * noise_, kRelativeFloor * height);
+    const double end =
+        left ? apex_ - window.left.minutes : window.right.minutes - apex_;
+    const double step = 0.02 * width_half_;
+    double out = 0.5 * width_half_;
+    for (; out < end; out += step) {
+      const double here = above(window, out, left);
+      if (here <= level) return refine(window, out, step, level, left);
+      const double before = above(window, out - 0.5 * width_half_, left);
+      if (here < kStillFalling * height && before - here < level) return out;
+    }
+    return end;
+  }
+
+  bool overlapped(const PlacedWindow& window, bool left) const {
+    const Foot& foot = left ? window.left : window.right;
+    if (!foot.dropped) return false;
+    const double height =
+        smoothed_at(stretch_, apex_) - window.baseline_at(apex_);
+    const double there =
+        smoothed_at(stretch_, foot.minutes) - window.baseline_at(foot.minutes);
+    return there >
+           std::max(kOverlapShare * height, 3.0 * stretch_.gain * noise_);
+  }
+
+ private:
+  void settle_apex() {
+    double least = width_half_;
+    const double about = apex_;
+    for (const Summit& summit : summits_) {
+      const double away = std::abs(summit.minutes - about);
+      if (away > least) continue;
+      least = away;
+      apex_ = summit.minutes;
+      seen_ = true;
+    }
+  }
+
+  double above(const PlacedWindow& window, double out, bool left) const {
+    const double t = left ? apex_ - out : apex_ + out;
+    return smoothed_at(stretch_, t) - window.baseline_at(t);
+  }
+
+  // Where the level was crossed between the last two looks.
+  double refine(const PlacedWindow& window, double out, double step,
+                double level, bool left) const {
+    const double here = above(window, out, left);
+    const double before = above(window, out - step, left);
+    if (!(before > here)) return out;
+    const double share = (before - level) / (before - here);
+    return out - step + std::clamp(share, 0.0, 1.0) * step;
+  }
+
+  double noise_;
+  double width_half_;
+  SmoothedStretch stretch_;
+  double apex_;
+  std::vector<Summit> summits_;
+  bool seen_ = false;
+};
+
+double noise_beside(const Trace& trace, const TargetSettings& target,
+                    const PlacedWindow& window, double width_half,
+                    const SmoothedStretch& stretch) {
+  const Outcome<NoiseEstimate> noise =
+      measure_noise_beside(trace, window.left.minutes, window.right.minutes,
+                           width_half, target.noise);
+  return noise ? noise->standard_deviation
+               : point_to_point_noise(stretch.signal);
+}
+
+std::optional<double> half_width(const SmoothedStretch& stretch,
+                                 const PlacedWindow& window, double apex,
+                                 double height) {
+  const auto width = width_at(stretch, window, apex, height, 0.5, 0.0);
+  if (!width) return {};
+  return width->total();
+}
+
+}  // namespace
+
+Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
+                                       const TargetSettings& target,
+                                       double apex, double width_half) {
+  if (!(width_half > 0.0)) return NotApplicable{"no-peak: it has no width"};
+  const double reach = kSliceWidths * width_half;
+  const Trace near = cut_trace(trace, apex - reach, apex + reach);
+  const Teacher teacher(near, target, apex, width_half);
+  if (!teacher.has_peak()) {
+    return NotApplicable{"no-peak: none at the smoothing of its width"};
+  }
+  Outcome<PlacedWindow> window =
+      teacher.place(teacher.first_reach(true), teacher.first_reach(false));
+  if (!window) return NotApplicable{window.reason()};
+  for (int round = 0; round < 2; ++round) {
+    window = teacher.place(teacher.foot(*window, true),
+                           teacher.foot(*window, false));
+    if (!window) return NotApplicable{window.reason()};
+  }
+
+  const SmoothedStretch& stretch = teacher.stretch();
+  TeacherFeet feet;
+  feet.noise = noise_beside(trace, target, *window, width_half, stretch);
+  feet.apex = teacher.apex();
+  feet.height =
+      signal_near(stretch, feet.apex) - window->baseline_at(feet.apex);
+  if (!(feet.height > 0.0)) {
+    return NotApplicable{"no-peak: nothing above the baseline"};
+  }
+  if (feet.height >= kSharpHeight * feet.noise) {
+    feet.apex = sharpened_apex(stretch, feet.apex, width_half);
+    feet.height =
+        signal_near(stretch, feet.apex) - window->baseline_at(feet.apex);
+  }
+  const auto width = half_width(stretch, *window, feet.apex, feet.height);
+  if (!width) {
+    return NotApplicable{"no-peak: it does not fall to half of its height"};
+  }
+  feet.width_half = *width;
+  feet.left = feet.apex - window->left.minutes;
+  feet.right = window->right.minutes - feet.apex;
+  feet.left_overlapped = teacher.overlapped(*window, true);
+  feet.right_overlapped = teacher.overlapped(*window, false);
+  feet.saturated =
+      is_saturated(stretch.minutes, stretch.signal, window->left.minutes,
+                   window->right.minutes, feet.height, feet.width_half);
+  return feet;
+}
+
+}  // namespace loqsmith
