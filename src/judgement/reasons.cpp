@@ -9,7 +9,8 @@ namespace {
 
 // Most serious first. First why there is no number, then why the number may
 // not be used, then why to be careful with it.
-constexpr std::array<std::string_view, 28> kDoubtful{
+constexpr std::array<std::string_view, 35> kDoubtful{
+    "peak-not-found",
     "file-refused",
     "trace-missing",
     "not-learned",
@@ -20,23 +21,29 @@ constexpr std::array<std::string_view, 28> kDoubtful{
     "internal-standard-missing",
     "no-calibration",
     "no-concentration",
-    "calibration-failed",
     "no-accepted-level",
     "no-valid-limit",
+    "calibration-failed",
     "check-standard-failed",
     "response-without-peak",
-    "peak-not-found",
     "saturated",
     "internal-standard-saturated",
     "above-range",
     "beyond-curve",
     "no-closing-check",
+    "several-peaks",
     "overlapped",
     "internal-standard-overlapped",
+    "spike",
+    "few-points",
     "weak-template",
+    "baseline-at-valley",
+    "baseline-one-sided",
+    "baseline-shortened",
     "mean-internal-standard",
-    "after-high",
-    "noise-same-trace",
+    "no-noise",
+    "noise-zero",
+    "noise-from-same-trace",
     "noise-stretch-short",
 };
 
