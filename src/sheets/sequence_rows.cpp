@@ -66,27 +66,40 @@ void check_levels(SequenceSheet& sheet) {
   }
 }
 
-void check_parent(SequenceSheet& sheet, const SequenceRow& row) {
-  const std::string& parent = row.injection.parent;
-  std::vector<std::string> samples;
-  bool is_there = false;
-  for (const SequenceRow& other : sheet.rows) {
-    if (&other == &row || !other.role_known ||
-        !may_be_parent(other.injection.role)) {
-      continue;
+// How often each name stands for something that can be a parent.
+using ParentNames = std::map<std::string, std::size_t>;
+
+ParentNames parent_names(const SequenceSheet& sheet) {
+  ParentNames names;
+  for (const SequenceRow& row : sheet.rows) {
+    if (row.role_known && may_be_parent(row.injection.role)) {
+      ++names[row.injection.sample];
     }
-    samples.push_back(other.injection.sample);
-    is_there = is_there || other.injection.sample == parent;
   }
-  if (is_there) return;
-  const std::string near = nearest_name(parent, samples);
+  return names;
+}
+
+// No row is its own parent.
+void check_parent(SequenceSheet& sheet, const SequenceRow& row,
+                  const ParentNames& names) {
+  const std::string& parent = row.injection.parent;
+  const bool names_itself =
+      may_be_parent(row.injection.role) && row.injection.sample == parent;
+  const auto place = names.find(parent);
+  if (place != names.end() && place->second > (names_itself ? 1U : 0U)) return;
+  std::vector<std::string> known;
+  for (const auto& entry : names) {
+    if (entry.first != parent) known.push_back(entry.first);
+  }
+  const std::string near = nearest_name(parent, known);
   sheet.add(row.row, "parent", in_quotes(parent),
-            "the name of a sample of the sequence",
+            "the name of another sample, control or fortified sample",
             near.empty() ? "name the sample that was repeated or fortified"
                          : "did you mean \"" + near + "\"?");
 }
 
 void check_parents(SequenceSheet& sheet) {
+  const ParentNames names = parent_names(sheet);
   for (const SequenceRow& row : sheet.rows) {
     if (!row.role_known) continue;
     const std::string role = role_name(row.injection.role);
@@ -95,7 +108,7 @@ void check_parents(SequenceSheet& sheet) {
       sheet.add(row.row, "parent", "empty", "a parent for the role " + role,
                 "name the sample that was repeated or fortified");
     } else if (wanted) {
-      check_parent(sheet, row);
+      check_parent(sheet, row, names);
     } else if (!row.injection.parent.empty()) {
       sheet.add(row.row, "parent", in_quotes(row.injection.parent),
                 "no parent for the role " + role,
