@@ -70,8 +70,8 @@ TEST(BadMethods, EachIsRefusedWithItsPlaceAndWords) {
 TEST(BadMethods, NothingElseIsSaid) {
   for (const MethodCase& one : test::bad_methods()) {
     const auto problems = problems_of(one.text);
-    EXPECT_EQ(problems.size(), one.problems.size()) << one.name << '
-' << all_of(problems);
+    EXPECT_EQ(problems.size(), one.problems.size()) << one.name << '\n'
+                                                    << all_of(problems);
   }
 }
 
