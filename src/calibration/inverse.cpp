@@ -54,7 +54,9 @@ std::optional<double> half_width(const Calibration& calibration,
                     variance_along(calibration, {1.0, x, x * x}));
   if (!stays_below_vertex(calibration, response + response_half))
     return std::nullopt;
-  return response_half / derivative;
+  const double half = response_half / derivative;
+  if (!std::isfinite(half)) return std::nullopt;
+  return half;
 }
 
 }  // namespace
@@ -80,6 +82,8 @@ Outcome<InversePrediction> concentration_from_response(
   InversePrediction found;
   found.concentration =
       2.0 * above / (calibration.slope + std::sqrt(discriminant));
+  if (!std::isfinite(found.concentration))
+    return NotApplicable{"beyond-curve: the concentration has no finite value"};
   found.expanded_uncertainty =
       half_width(calibration, response, found.concentration, replicates);
   return found;

@@ -96,8 +96,11 @@ Outcome<LimitEstimate> calibration_residual(
         "give a limit"};
   if (!(calibration.slope > 0.0))
     return NotApplicable{"slope-not-positive: a limit needs a rising line"};
+  // Between found feet the blanks' spread says nothing of the standards'.
   const Outcome<BlankSample> blanks =
-      usable_blanks(evidence, blank_kind_of(settings, procedure));
+      evidence.bounds_own
+          ? NotApplicable{"own-bounds"}
+          : usable_blanks(evidence, blank_kind_of(settings, procedure));
   if (is_weighted(calibration.settings))
     return from_weighted_fit(calibration, blanks, procedure);
   return from_low_range(calibration, blanks, procedure);

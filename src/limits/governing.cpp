@@ -1,12 +1,25 @@
 #include "loqsmith/limits/governing.hpp"
 
 #include <algorithm>
+#include <cmath>
 #include <cstddef>
 
 #include "loqsmith/base/text.hpp"
 
 namespace loqsmith {
 namespace {
+
+// Wild inputs may overflow anywhere on the way; nothing of that may come out.
+bool all_finite(const LimitEstimate& estimate) {
+  for (const std::optional<double>& one :
+       {estimate.critical_value, estimate.detection, estimate.quantitation,
+        estimate.detection_lower, estimate.detection_upper,
+        estimate.quantitation_lower, estimate.quantitation_upper})
+    if (one && !(std::isfinite(*one) && *one > 0.0)) return false;
+  return std::all_of(
+      estimate.terms.begin(), estimate.terms.end(),
+      [](const LimitTerm& term) { return std::isfinite(term.value); });
+}
 
 Outcome<LimitEstimate> compute(const LimitEvidence& evidence,
                                const LimitSettings& settings,
@@ -15,7 +28,12 @@ Outcome<LimitEstimate> compute(const LimitEvidence& evidence,
   if (known == nullptr || known->compute == nullptr)
     return NotApplicable{"not-available: " + procedure.name +
                          " is not available in this version"};
-  return known->compute(evidence, settings, procedure);
+  Outcome<LimitEstimate> estimate =
+      known->compute(evidence, settings, procedure);
+  if (estimate && !all_finite(*estimate))
+    return NotApplicable{
+        "limit-not-finite: the numbers are too large or too small"};
+  return estimate;
 }
 
 bool is_experimental(const LimitRow& row) {

@@ -1,6 +1,7 @@
 #include "loqsmith/numerics/least_squares.hpp"
 
 #include <Eigen/QR>
+#include <algorithm>
 #include <cmath>
 #include <limits>
 
@@ -26,6 +27,11 @@ std::vector<double> to_doubles(const Vector& values) {
   for (Index i = 0; i < values.size(); ++i)
     result.push_back(static_cast<double>(values(i)));
   return result;
+}
+
+bool all_finite(const std::vector<double>& values) {
+  return std::all_of(values.begin(), values.end(),
+                     [](double value) { return std::isfinite(value); });
 }
 
 bool all_positive(const Vector& weights) {
@@ -111,6 +117,9 @@ Outcome<LeastSquaresFit> fit_design(Matrix design, const Vector& y,
   fit.residual_sd = static_cast<double>(std::sqrt(variance));
   fill_r2(fit, residual_sum, y, weights);
   fill_covariance(fit, qr, scale, variance);
+  if (!all_finite(fit.coefficients) || !all_finite(fit.covariance) ||
+      !std::isfinite(fit.residual_sd))
+    return NotApplicable{"the numbers are too large or too small to fit"};
   return fit;
 }
 

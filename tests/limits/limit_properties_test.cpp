@@ -5,6 +5,7 @@
 #include "limits/evidence_builders.hpp"
 #include "loqsmith/limits/blank_deviation.hpp"
 #include "loqsmith/limits/calibration_residual.hpp"
+#include "loqsmith/limits/governing.hpp"
 #include "loqsmith/limits/signal_to_noise_limit.hpp"
 #include "loqsmith/numerics/distributions.hpp"
 #include "loqsmith/numerics/random.hpp"
@@ -41,7 +42,7 @@ void expect_rate(double found, double wanted, int studies) {
 // with n - 1 degrees of freedom; about the blanks' own mean that is widened
 // by sqrt(1 + 1/n).
 TEST(BlankDeviationSimulation, FalsePositivesAreThoseOfStudentsT) {
-  constexpr int kStudies = 20000;
+  constexpr int kStudies = 10000;
   for (std::size_t n : {5U, 7U, 10U}) {
     const double count = static_cast<double>(n);
     expect_rate(simulated_rate(n, false, kStudies),
@@ -145,6 +146,46 @@ TEST(LimitProperties, AConstantOnAllResponsesChangesNothing) {
     EXPECT_TRUE(within_condition(*after->detection, *before->detection, 1000));
     EXPECT_EQ(after->grade(), before->grade());
   }
+}
+
+// Whatever comes in, every number that comes out is finite and every limit
+// above zero.
+TEST(LimitProperties, WildInputsGiveFiniteLimitsOrNone) {
+  RandomStream random("wild inputs");
+  const auto wild = [&] {
+    return random.normal() * std::pow(10.0, 300.0 * (random.uniform() - 0.5));
+  };
+  LimitSettings settings;
+  for (const char* name :
+       {"blank-deviation", "calibration-residual", "signal-to-noise"})
+    settings.procedures.push_back(procedure(name));
+  int limits = 0;
+  for (int trial = 0; trial < 2000; ++trial) {
+    std::vector<StandardPoint> points;
+    for (int i = 0; i < 6; ++i)
+      points.push_back(standard(i, std::abs(wild()), std::abs(wild())));
+    const auto weight = trial % 3 == 0   ? Weight::None
+                        : trial % 3 == 1 ? Weight::InverseX
+                                         : Weight::InverseXSquared;
+    const auto calibration = fit_calibration(points, {.weight = weight});
+    LimitEvidence evidence;
+    if (calibration) evidence.calibration = *calibration;
+    evidence.blanks = blanks_of({wild(), wild(), wild(), wild(), wild()});
+    for (int i = 0; i < 4; ++i)
+      evidence.heights.push_back({i, std::abs(wild()), wild()});
+    evidence.noise = std::abs(wild());
+    const LimitsOfAnalyte found = compute_limits(evidence, settings);
+    for (const LimitRow& row : found.rows) {
+      if (!row.estimate) continue;
+      ++limits;
+      EXPECT_TRUE(std::isfinite(*row.estimate->detection));
+      EXPECT_GT(*row.estimate->detection, 0.0);
+      EXPECT_TRUE(std::isfinite(*row.estimate->quantitation));
+      for (const LimitTerm& one : row.estimate->terms)
+        EXPECT_TRUE(std::isfinite(one.value)) << one.name;
+    }
+  }
+  EXPECT_GT(limits, 1000);
 }
 
 }  // namespace

@@ -153,6 +153,27 @@ TEST(LeastSquares, WeightedLineEqualsTheClosedForm) {
   EXPECT_TRUE(same_bits(fit->covariance_of(0, 1), fit->covariance_of(1, 0)));
 }
 
+// Miller and Miller, Statistics and Chemometrics for Analytical Chemistry,
+// weights 1/s^2 (data and printed values from memory): b 0.0738, a 0.0091;
+// absorbances 0.100 and 0.600 at 1.23 and 8.01.
+TEST(LeastSquares, WeightedTextbookLine) {
+  std::vector<double> w;
+  for (double s : {.001, .004, .010, .013, .017, .022})
+    w.push_back(1.0 / (s * s));
+  const auto fit = fit_polynomial(
+      {0, 2, 4, 6, 8, 10}, {.009, .158, .301, .472, .577, .739}, 0, 1, w);
+  ASSERT_TRUE(fit);
+  const double a = fit->coefficients[0];
+  const double b = fit->coefficients[1];
+  EXPECT_TRUE(agrees_to_digits(b, 0.0738, 3));
+  EXPECT_TRUE(agrees_to_digits(b, 0.07375997, 7));
+  EXPECT_TRUE(agrees_to_digits(a, 0.0091, 2));
+  EXPECT_TRUE(agrees_to_digits(a, 0.00908391, 6));
+  EXPECT_TRUE(agrees_to_digits((0.100 - a) / b, 1.23, 3));
+  EXPECT_TRUE(agrees_to_digits((0.600 - a) / b, 8.01, 3));
+  EXPECT_TRUE(agrees_to_digits((0.600 - a) / b, 8.011338974, 10));
+}
+
 TEST(LeastSquares, ScaleOfWeightsChangesOnlyTheResidualScale) {
   const std::vector<double> ones(norris_x.size(), 1.0);
   const std::vector<double> fours(norris_x.size(), 4.0);
@@ -172,6 +193,8 @@ TEST(LeastSquares, SaysWhyThereIsNoFit) {
   EXPECT_FALSE(fit_polynomial({1, 2, 3}, {1, 2, 3}, 0, 1, {1, 0, 1}));
   EXPECT_FALSE(fit_polynomial({1, 2, 3}, {1, 2, 3}, 0, 1, {1, 1}));
   EXPECT_FALSE(fit_columns({{1, 2, 3}, {2, 4, 6}}, {1, 2, 4}));
+  EXPECT_FALSE(
+      fit_polynomial({1e-200, 2e-200, 3e-200}, {1e200, 2e200, 4e200}, 1, 1));
 }
 
 }  // namespace

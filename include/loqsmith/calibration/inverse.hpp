@@ -29,7 +29,8 @@ struct InversePrediction {
 /// upper end lies beyond a quadratic's vertex.
 ///
 /// @param replicates  m >= 1: `response` is the mean of so many
-/// @return not applicable: the response lies beyond a quadratic's vertex.
+/// @return not applicable: the response lies beyond a quadratic's vertex, the
+///         concentration is too large for a double.
 Outcome<InversePrediction> concentration_from_response(
     const Calibration& calibration, double response, int replicates = 1);
 

@@ -38,7 +38,7 @@ struct LeastSquaresFit {
 /// @param weights  n finite values above zero; empty: all 1
 /// @return not applicable: lengths that differ, weights not above zero, no
 ///         more observations than coefficients, columns that depend on each
-///         other.
+///         other, an outcome beyond the range of a double.
 Outcome<LeastSquaresFit> fit_columns(
     const std::vector<std::vector<double>>& columns,
     const std::vector<double>& y, const std::vector<double>& weights = {});
