@@ -271,7 +271,8 @@ std::vector<MethodCase> good_methods() {
               "final-volume=\"mL\"",
               {}),
       changed("white space in an empty element", "span=\"5\"/>",
-              "span=\"5\">\n  <!-- none -->\n  </noise>", {}),
+              "span=\"5\">\n  <!-- none -->\n  </noise>", {},
+              "white space in an empty element"),
       changed("spaces between the numbers of a pair", "85 115",
               " 85&#10;  115 ", {}),
   };

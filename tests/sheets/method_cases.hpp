@@ -16,8 +16,8 @@ struct MethodCase {
   std::string name;
   std::string text;
   std::vector<WantedProblem> problems;  ///< empty: a good method
-  /// Empty: the schema has the reader's verdict. Otherwise it accepts what the
-  /// reader refuses, for the reason that schemas/README.md lists by this name.
+  /// Empty: the schema has the reader's verdict. Otherwise it has the other one
+  /// for the reason that schemas/README.md lists by this name.
   std::string beyond_schema;
 };
 
