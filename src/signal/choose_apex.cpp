@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cmath>
 
+#include "loqsmith/signal/integrate.hpp"
+
 namespace loqsmith {
 namespace {
 
@@ -34,16 +36,17 @@ std::optional<Candidate> examine(const SmoothedStretch& stretch,
                                  const TargetSettings& target,
                                  const WindowTemplate& window,
                                  const std::vector<Summit>& neighbours,
-                                 const Summit& summit, double noise) {
-  const Outcome<PlacedWindow> placed =
-      place_window(stretch, neighbours,
-                   {summit.minutes, window.left_minutes, window.right_minutes,
-                    window.width_half_minutes, true, noise});
+                                 const Summit& summit,
+                                 const NoiseModel& noise) {
+  const Outcome<PlacedWindow> placed = place_window(
+      stretch, neighbours,
+      {summit.minutes, window.left_minutes, window.right_minutes,
+       window.width_half_minutes, true, noise.standard_deviation()});
   if (!placed) return {};
   Candidate candidate{summit, 0.0, 0.0};
   candidate.height = summit.value - placed->baseline_at(summit.minutes);
-  candidate.deviation =
-      smoothed_height_deviation(stretch, *placed, summit.minutes, noise);
+  candidate.deviation = weighted_noise(
+      smoothed_height_weights(stretch, *placed, summit.minutes), noise);
   if (!(candidate.height > 0.0)) return {};
   if (!(candidate.height >=
         target.integration.threshold * candidate.deviation)) {
@@ -75,29 +78,15 @@ bool is_ripple(const SmoothedStretch& stretch, const Candidate& candidate,
 
 }  // namespace
 
-double smoothed_height_deviation(const SmoothedStretch& stretch,
-                                 const PlacedWindow& window, double apex,
-                                 double noise) {
-  const double share = window.right_share(apex);
-  double variance = stretch.gain * stretch.gain;
-  const auto add = [&](const Foot& foot, double factor) {
-    const double n =
-        static_cast<double>(std::max<std::size_t>(1, foot.points()));
-    variance += factor * factor / n;
-  };
-  add(window.left, 1.0 - share);
-  add(window.right, share);
-  return noise * std::sqrt(variance);
-}
-
 ChosenApex choose_apex(const SmoothedStretch& stretch,
                        const TargetSettings& target,
                        const WindowTemplate& window, double expected,
-                       double noise) {
+                       const NoiseModel& noise) {
+  const double deviation = noise.standard_deviation();
   const double multiple = target.integration.threshold;
   const std::vector<Summit> summits = find_summits(stretch);
   ChosenApex chosen;
-  chosen.neighbours = significant_summits(stretch, summits, multiple, noise,
+  chosen.neighbours = significant_summits(stretch, summits, multiple, deviation,
                                           window.width_half_minutes);
   std::vector<Candidate> candidates;
   for (const Summit& summit : summits) {
@@ -108,7 +97,7 @@ ChosenApex choose_apex(const SmoothedStretch& stretch,
   }
   const std::vector<Candidate> all = candidates;
   std::erase_if(candidates, [&](const Candidate& candidate) {
-    return is_ripple(stretch, candidate, all, multiple, noise);
+    return is_ripple(stretch, candidate, all, multiple, deviation);
   });
   if (candidates.empty()) return chosen;
   if (candidates.size() > 1) chosen.reasons.emplace_back("several-peaks");

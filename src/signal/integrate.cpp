@@ -35,8 +35,8 @@ void add_interpolated(const std::vector<double>& t, double at, double factor,
 }
 
 // Takes `factor` times the baseline at a time off the weights.
-void take_baseline(const PlacedWindow& window, double at, double factor,
-                   std::vector<double>& weights) {
+void take_baseline_weights(const PlacedWindow& window, double at, double factor,
+                           std::vector<double>& weights) {
   const double share = window.right_share(at);
   const auto spread = [&](const Foot& foot, double amount) {
     for (std::size_t i = foot.first; i < foot.last; ++i) {
@@ -91,7 +91,7 @@ std::vector<double> area_weights(const SmoothedStretch& stretch,
   for (std::size_t i = range.first; i < range.last; ++i) add(t[i]);
   add(end);
   // A straight line's area is its middle times its length.
-  take_baseline(window, 0.5 * (start + end), end - start, weights);
+  take_baseline_weights(window, 0.5 * (start + end), end - start, weights);
   return weights;
 }
 
@@ -115,14 +115,28 @@ std::vector<double> parabola_weights(const std::vector<double>& minutes,
 std::vector<double> height_weights(const SmoothedStretch& stretch,
                                    const PlacedWindow& window, double minutes) {
   std::vector<double> weights = parabola_weights(stretch.minutes, minutes);
-  take_baseline(window, minutes, 1.0, weights);
+  take_baseline_weights(window, minutes, 1.0, weights);
   return weights;
 }
 
-double weighted_noise(const std::vector<double>& weights, double noise) {
-  double squares = 0.0;
-  for (const double weight : weights) squares += weight * weight;
-  return noise * std::sqrt(squares);
+std::vector<double> smoothed_height_weights(const SmoothedStretch& stretch,
+                                            const PlacedWindow& window,
+                                            double minutes) {
+  const std::vector<double>& t = stretch.minutes;
+  std::vector<double> weights(t.size(), 0.0);
+  const std::size_t points =
+      std::min(static_cast<std::size_t>(stretch.points), t.size());
+  const auto nearest = static_cast<std::size_t>(
+      std::lower_bound(t.begin(), t.end(), minutes) - t.begin());
+  const std::size_t half = points / 2;
+  const std::size_t first =
+      std::min(nearest > half ? nearest - half : 0, t.size() - points);
+  const std::vector<double> smoothing = local_polynomial_weights(
+      std::span(t).subspan(first, points), minutes, stretch.order, 0);
+  std::copy(smoothing.begin(), smoothing.end(),
+            weights.begin() + static_cast<std::ptrdiff_t>(first));
+  take_baseline_weights(window, minutes, 1.0, weights);
+  return weights;
 }
 
 double signal_near(const SmoothedStretch& stretch, double minutes) {

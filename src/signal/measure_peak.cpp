@@ -36,6 +36,17 @@ Trace surroundings(const Trace& trace, const TargetSettings& target,
                    expected + 2.0 * window.right_minutes + margin);
 }
 
+// The noise as it was measured, but never less than this very trace shows from
+// point to point: a sample may be noisier than the blank.
+NoiseModel noise_of_this_trace(const Trace& near,
+                               const Outcome<NoiseEstimate>& noise) {
+  const double own = point_to_point_noise(near.signal);
+  if (!noise) return white_noise(own);
+  const double known = noise->model.point_to_point();
+  if (own <= known) return noise->model;
+  return known > 0.0 ? noise->model.scaled(own / known) : white_noise(own);
+}
+
 // One target in one trace, measured step by step.
 class Measurement {
  public:
@@ -44,20 +55,20 @@ class Measurement {
               const Outcome<NoiseEstimate>& noise)
       : target_(target), window_(window), expected_(expected), noise_(noise) {
     const Trace near = surroundings(trace, target, window, expected);
-    const double own = point_to_point_noise(near.signal);
-    point_noise_ = noise ? std::max(noise->standard_deviation, own) : own;
+    model_ = noise_of_this_trace(near, noise);
+    point_noise_ = model_.standard_deviation();
     const int points =
         smoothing_length(target.integration, window.width_half_minutes,
                          typical_step(near.minutes));
     stretch_ = smooth_stretch(near, points, target.integration.smoothing_order,
-                              point_noise_);
+                              model_);
   }
 
   Outcome<Peak> measure() {
     if (stretch_.minutes.size() < 3) {
       return NotApplicable{"window-not-covered: the trace has no points there"};
     }
-    chosen_ = choose_apex(stretch_, target_, window_, expected_, point_noise_);
+    chosen_ = choose_apex(stretch_, target_, window_, expected_, model_);
     const Outcome<PlacedWindow> placed =
         place(chosen_.minutes.value_or(expected_));
     if (!placed) return NotApplicable{placed.reason()};
@@ -169,7 +180,7 @@ class Measurement {
     const std::vector<double> weights =
         by_height ? height_weights(stretch_, placed_, peak_.retention_minutes)
                   : area_weights(stretch_, placed_);
-    peak_.response_noise = weighted_noise(weights, noise_->standard_deviation);
+    peak_.response_noise = weighted_noise(weights, model_);
   }
 
   void gather_reasons() {
@@ -198,6 +209,7 @@ class Measurement {
   const WindowTemplate& window_;
   double expected_;
   const Outcome<NoiseEstimate>& noise_;
+  NoiseModel model_;
   double point_noise_ = 0.0;
   SmoothedStretch stretch_;
   ChosenApex chosen_;

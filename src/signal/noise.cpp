@@ -56,7 +56,12 @@ Outcome<NoiseEstimate> measure_noise(const Trace& trace, double center_minutes,
   const double wanted = settings.span_widths * width_half_minutes;
   const NoiseStretch stretch = stretch_between(
       trace, center_minutes - 0.5 * wanted, center_minutes + 0.5 * wanted);
-  return estimate(stretch, wanted, settings);
+  Outcome<NoiseEstimate> noise = estimate(stretch, wanted, settings);
+  if (noise) {
+    noise.value().model = fit_noise_model(trace, center_minutes, center_minutes,
+                                          width_half_minutes);
+  }
+  return noise;
 }
 
 Outcome<NoiseEstimate> measure_noise_beside(const Trace& trace,
@@ -67,7 +72,12 @@ Outcome<NoiseEstimate> measure_noise_beside(const Trace& trace,
   const double wanted = settings.span_widths * width_half_minutes;
   const NoiseStretch stretch = peak_free_beside(
       trace, start_minutes, end_minutes, width_half_minutes, wanted);
-  return estimate(stretch, wanted, settings);
+  Outcome<NoiseEstimate> noise = estimate(stretch, wanted, settings);
+  if (noise) {
+    noise.value().model =
+        fit_noise_model(trace, start_minutes, end_minutes, width_half_minutes);
+  }
+  return noise;
 }
 
 double noise_figure(const NoiseEstimate& noise,

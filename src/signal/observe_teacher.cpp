@@ -16,6 +16,9 @@ namespace loqsmith {
 namespace {
 
 constexpr double kSummitMultiple = 5.0;
+// Below this height over all noise, creeping noise included, a summit of the
+// first sight is passed over.
+constexpr double kLeastHeight = 5.0;
 constexpr int kFirstSmoothing = 5;
 // Stands for "no noise to be seen": infinity is no number of ours.
 constexpr double kNoiselessMultiple = 1e9;
@@ -42,52 +45,67 @@ double half_distance(const SmoothedStretch& stretch, const Summit& summit,
   return last;
 }
 
-const Summit* nearest_summit(const std::vector<Summit>& summits, double at,
-                             double reach) {
-  const Summit* nearest = nullptr;
-  double least = reach;
-  for (const Summit& summit : summits) {
-    const double distance = std::abs(summit.minutes - at);
-    if (distance <= least) {
-      nearest = &summit;
-      least = distance;
-    }
-  }
-  return nearest;
-}
-
 bool covers(const Trace& trace, double from, double to) {
   return trace.minutes.size() >= 5 && trace.minutes.front() <= from &&
          trace.minutes.back() >= to;
 }
 
-// First sight, with little smoothing, because no width is known yet.
-Outcome<Sighting> first_sighting(const Trace& trace,
-                                 const TargetSettings& target) {
-  const double from = target.retention_minutes - target.window_minutes;
-  const double to = target.retention_minutes + target.window_minutes;
-  if (!covers(trace, from, to)) {
-    return NotApplicable{
-        "window-not-covered: the trace does not hold the whole window"};
-  }
-  const Trace near = cut_trace(trace, from - 3.0 * target.window_minutes,
-                               to + 3.0 * target.window_minutes);
+// All that may be the target at first sight, the nearest to the method's time
+// first; with little smoothing, because no width is known yet.
+std::vector<Sighting> first_sightings(const Trace& trace,
+                                      const TargetSettings& target) {
+  const double middle = target.retention_minutes;
+  const double reach = 4.0 * target.window_minutes;
+  const Trace near = cut_trace(trace, middle - reach, middle + reach);
   const double noise = point_to_point_noise(near.signal);
   const int points = target.integration.smoothing_points > 0
                          ? target.integration.smoothing_points
                          : kFirstSmoothing;
-  const SmoothedStretch stretch = smooth_stretch(near, points, 2, noise);
-  const std::vector<Summit> summits =
-      significant_summits(stretch, find_summits(stretch), kSummitMultiple,
-                          noise, 3.0 * typical_step(near.minutes));
-  const Summit* summit =
-      nearest_summit(summits, target.retention_minutes, target.window_minutes);
-  if (summit == nullptr) {
-    return NotApplicable{"no-peak: none in the window of retention times"};
+  const SmoothedStretch stretch =
+      smooth_stretch(near, points, 2, white_noise(noise));
+  std::vector<Sighting> sightings;
+  for (const Summit& summit :
+       significant_summits(stretch, find_summits(stretch), kSummitMultiple,
+                           noise, 3.0 * typical_step(near.minutes))) {
+    if (std::abs(summit.minutes - middle) > target.window_minutes) continue;
+    const double width = half_distance(stretch, summit, true) +
+                         half_distance(stretch, summit, false);
+    sightings.push_back({summit.minutes, width});
   }
-  const double width = half_distance(stretch, *summit, true) +
-                       half_distance(stretch, *summit, false);
-  return Sighting{summit->minutes, width};
+  std::stable_sort(sightings.begin(), sightings.end(),
+                   [&](const Sighting& a, const Sighting& b) {
+                     return std::abs(a.apex - middle) <
+                            std::abs(b.apex - middle);
+                   });
+  return sightings;
+}
+
+// The width found with the right smoothing sets the smoothing once more.
+Outcome<TeacherFeet> look_closer(const Trace& trace,
+                                 const TargetSettings& target,
+                                 const Sighting& first) {
+  const Outcome<TeacherFeet> feet =
+      find_teacher_feet(trace, target, first.apex, first.width_half);
+  if (!feet) return feet;
+  return find_teacher_feet(trace, target, feet->apex, feet->width_half);
+}
+
+TeacherPeak teacher_peak(const TeacherFeet& feet, int injection, Role role) {
+  TeacherPeak peak;
+  peak.injection = injection;
+  peak.role = role;
+  peak.retention_minutes = feet.apex;
+  peak.left_minutes = feet.left;
+  peak.right_minutes = feet.right;
+  peak.width_half_minutes = feet.width_half;
+  peak.height = feet.height;
+  peak.height_over_noise = feet.height < kNoiselessMultiple * feet.noise
+                               ? feet.height / feet.noise
+                               : kNoiselessMultiple;
+  peak.saturated = feet.saturated;
+  peak.left_overlapped = feet.left_overlapped;
+  peak.right_overlapped = feet.right_overlapped;
+  return peak;
 }
 
 }  // namespace
@@ -95,31 +113,21 @@ Outcome<Sighting> first_sighting(const Trace& trace,
 Outcome<TeacherPeak> observe_teacher(const Trace& trace,
                                      const TargetSettings& target,
                                      int injection, Role role) {
-  const Outcome<Sighting> first = first_sighting(trace, target);
-  if (!first) return NotApplicable{first.reason()};
-  Outcome<TeacherFeet> feet =
-      find_teacher_feet(trace, target, first->apex, first->width_half);
-  if (!feet) return NotApplicable{feet.reason()};
-  // The width found with the right smoothing sets the smoothing once more.
-  feet = find_teacher_feet(trace, target, feet->apex, feet->width_half);
-  if (!feet) return NotApplicable{feet.reason()};
-
-  TeacherPeak peak;
-  peak.injection = injection;
-  peak.role = role;
-  peak.retention_minutes = feet->apex;
-  peak.left_minutes = feet->left;
-  peak.right_minutes = feet->right;
-  peak.width_half_minutes = feet->width_half;
-  peak.height = feet->height;
-  peak.height_over_noise =
-      feet->noise > 0.0
-          ? std::min(feet->height / feet->noise, kNoiselessMultiple)
-          : kNoiselessMultiple;
-  peak.saturated = feet->saturated;
-  peak.left_overlapped = feet->left_overlapped;
-  peak.right_overlapped = feet->right_overlapped;
-  return peak;
+  if (!covers(trace, target.retention_minutes - target.window_minutes,
+              target.retention_minutes + target.window_minutes)) {
+    return NotApplicable{
+        "window-not-covered: the trace does not hold the whole window"};
+  }
+  NotApplicable why{"no-peak: none in the window of retention times"};
+  for (const Sighting& sighting : first_sightings(trace, target)) {
+    const Outcome<TeacherFeet> feet = look_closer(trace, target, sighting);
+    if (!feet) {
+      why.reason = feet.reason();
+    } else if (feet->height >= kLeastHeight * feet->noise) {
+      return teacher_peak(*feet, injection, role);
+    }
+  }
+  return why;
 }
 
 }  // namespace loqsmith

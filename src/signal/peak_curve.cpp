@@ -22,7 +22,7 @@ Outcome<PlacedWindow> baseline_again(const Trace& trace, const Peak& peak,
   const double noise = point_to_point_noise(near.signal);
   const SmoothedStretch stretch = smooth_stretch(
       near, smoothing_length(settings, width, typical_step(near.minutes)),
-      settings.smoothing_order, noise);
+      settings.smoothing_order, white_noise(noise));
   const std::vector<Summit> neighbours = significant_summits(
       stretch, find_summits(stretch), settings.threshold, noise, width);
   return place_window(stretch, neighbours,

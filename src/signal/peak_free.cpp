@@ -4,7 +4,7 @@
 #include <cmath>
 #include <cstddef>
 
-#include "loqsmith/signal/place_window.hpp"
+#include "loqsmith/signal/noise_model.hpp"
 #include "loqsmith/signal/point_noise.hpp"
 #include "loqsmith/signal/summits.hpp"
 
@@ -14,25 +14,19 @@ namespace {
 constexpr double kSummitMultiple = 5.0;
 constexpr double kReachWidths = 1.7;
 constexpr double kSearchSpans = 4.0;
+constexpr int kRounds = 3;
 
-// True for each point that stands clear of peaks and of [start, end].
-std::vector<bool> free_points(const Trace& near, double start, double end,
-                              double width_half) {
-  const double step = typical_step(near.minutes);
-  const double noise = point_to_point_noise(near.signal);
-  const SmoothedStretch stretch =
-      smooth_stretch(near, smoothing_length({}, width_half, step), 2, noise);
-  const std::vector<Summit> summits = significant_summits(
-      stretch, find_summits(stretch), kSummitMultiple, noise, width_half);
-  std::vector<bool> free;
-  for (const double t : near.minutes) {
-    const bool taken =
-        std::any_of(summits.begin(), summits.end(), [&](const Summit& summit) {
-          return std::abs(t - summit.minutes) <= kReachWidths * width_half;
-        });
-    free.push_back(!taken && (t < start || t > end));
+// Standard deviation about a line of the points that count as free.
+double noise_of_free(const Trace& near, const std::vector<bool>& free) {
+  std::vector<double> minutes;
+  std::vector<double> signal;
+  for (std::size_t i = 0; i < free.size(); ++i) {
+    if (!free[i]) continue;
+    minutes.push_back(near.minutes[i]);
+    signal.push_back(near.signal[i]);
   }
-  return free;
+  if (minutes.size() < 5) return point_to_point_noise(near.signal);
+  return noise_about_line(minutes, signal).standard_deviation;
 }
 
 struct Sides {
@@ -52,6 +46,35 @@ Sides free_sides(const Trace& near, const std::vector<bool>& free,
 }
 
 }  // namespace
+
+std::vector<bool> peak_free_points(const Trace& near, double start_minutes,
+                                   double end_minutes, double width_half) {
+  const std::size_t n = near.minutes.size();
+  std::vector<bool> outside(n);
+  for (std::size_t i = 0; i < n; ++i) {
+    const double t = near.minutes[i];
+    outside[i] = t < start_minutes || t > end_minutes;
+  }
+  if (n < 5) return outside;
+  const double point_noise = point_to_point_noise(near.signal);
+  const SmoothedStretch stretch = smooth_stretch(
+      near, smoothing_length({}, width_half, typical_step(near.minutes)), 2,
+      white_noise(point_noise));
+  const std::vector<Summit> summits = find_summits(stretch);
+  std::vector<bool> free = outside;
+  for (int round = 0; round < kRounds; ++round) {
+    const double least = kSummitMultiple * noise_of_free(near, free);
+    free = outside;
+    for (const Summit& summit : summits) {
+      if (!(summit.prominence > least)) continue;
+      for (std::size_t i = 0; i < n; ++i) {
+        const double away = std::abs(near.minutes[i] - summit.minutes);
+        if (away <= kReachWidths * width_half) free[i] = false;
+      }
+    }
+  }
+  return free;
+}
 
 NoiseStretch stretch_between(const Trace& trace, double from_minutes,
                              double to_minutes) {
@@ -79,7 +102,8 @@ NoiseStretch peak_free_beside(const Trace& trace, double start_minutes,
   NoiseStretch stretch;
   if (near.minutes.size() < 3) return stretch;
   const Sides sides = free_sides(
-      near, free_points(near, start_minutes, end_minutes, width_half_minutes),
+      near,
+      peak_free_points(near, start_minutes, end_minutes, width_half_minutes),
       start_minutes);
   const double step = typical_step(near.minutes);
   const auto wanted =

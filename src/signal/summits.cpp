@@ -19,6 +19,15 @@ std::vector<double> without_spikes(const Trace& stretch,
   return signal;
 }
 
+// Standard deviation of a smoothed point over that of a point.
+double smoothing_gain(int points, int order, const NoiseModel& noise) {
+  const double deviation = noise.standard_deviation();
+  if (points <= order) return 1.0;
+  if (!(deviation > 0.0)) return smoothing_noise_gain(points, order);
+  return weighted_noise(savitzky_golay_weights(points, order, 0), noise) /
+         deviation;
+}
+
 std::size_t first_at_or_after(const std::vector<double>& minutes, double at) {
   return static_cast<std::size_t>(
       std::lower_bound(minutes.begin(), minutes.end(), at) - minutes.begin());
@@ -108,16 +117,17 @@ std::vector<std::size_t> find_spikes(std::span<const double> signal,
 }
 
 SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
-                               double noise) {
+                               const NoiseModel& noise) {
   SmoothedStretch ready;
   ready.minutes = stretch.minutes;
   ready.signal = stretch.signal;
-  ready.spikes = find_spikes(stretch.signal, noise);
+  ready.spikes = find_spikes(stretch.signal, noise.standard_deviation());
   const std::vector<double> clean = without_spikes(stretch, ready.spikes);
   ready.smoothed = savitzky_golay(ready.minutes, clean, points, order, 0);
   ready.slope = savitzky_golay(ready.minutes, clean, points, order, 1);
-  ready.points = points;
-  ready.gain = smoothing_noise_gain(points, order);
+  ready.points = points > order ? points : 1;
+  ready.order = points > order ? order : 0;
+  ready.gain = smoothing_gain(points, order, noise);
   return ready;
 }
 

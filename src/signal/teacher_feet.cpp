@@ -33,7 +33,8 @@ class Teacher {
         stretch_(smooth_stretch(near,
                                 smoothing_length(target.integration, width_half,
                                                  typical_step(near.minutes)),
-                                target.integration.smoothing_order, noise_)),
+                                target.integration.smoothing_order,
+                                white_noise(noise_))),
         apex_(apex) {
     const std::vector<Summit> all = find_summits(stretch_);
     summits_ = significant_summits(stretch_, all, target.integration.threshold,

@@ -28,21 +28,9 @@ struct ChosenApex {
 /// height. Of several, those that no valley parts from a higher one are
 /// dropped, and the one nearest to the expected time is taken.
 ///
-/// @param noise  standard deviation of a point, >= 0
 ChosenApex choose_apex(const SmoothedStretch& stretch,
                        const TargetSettings& target,
                        const WindowTemplate& window, double expected,
-                       double noise);
-
-/// Standard deviation of a smoothed apex above the averaged-feet baseline, for
-/// independent noise:
-///
-///     s sqrt(c0 + (1 - f)^2 / nL + f^2 / nR)
-///
-/// with c0 the smoothing's middle weight, nL and nR the points that hold the
-/// baseline left and right, f the share of the right ones at the apex.
-double smoothed_height_deviation(const SmoothedStretch& stretch,
-                                 const PlacedWindow& window, double apex,
-                                 double noise);
+                       const NoiseModel& noise);
 
 }  // namespace loqsmith

@@ -23,12 +23,10 @@ std::vector<double> area_weights(const SmoothedStretch& stretch,
 std::vector<double> height_weights(const SmoothedStretch& stretch,
                                    const PlacedWindow& window, double minutes);
 
-/// Standard deviation of a weighted sum of points with independent noise:
-/// noise times the square root of the sum of squared weights.
-///
-/// Source: the propagation that ISO 11843-7:2018 builds on, for white noise;
-/// from memory.
-double weighted_noise(const std::vector<double>& weights, double noise);
+/// The same for the smoothed signal at the point nearest to a time.
+std::vector<double> smoothed_height_weights(const SmoothedStretch& stretch,
+                                            const PlacedWindow& window,
+                                            double minutes);
 
 /// Signal at a time, by the parabola through the three points nearest to it:
 /// weights of those points, zero elsewhere. At least 3 points.

@@ -30,7 +30,7 @@ struct WindowTemplate {
   double left_minutes = 0.0;  ///< distance of the feet from the apex, medians
   double right_minutes = 0.0;
   double width_half_minutes = 0.0;  ///< median
-  bool weak = false;          ///< no teacher at 50 noise sd: reason weak-template
+  bool weak = false;  ///< no teacher at 50 noise sd: reason weak-template
   std::vector<int> teachers;  ///< injections whose feet entered, in run order
   /// Retention time in run order; piecewise linear, constant beyond the last.
   std::vector<std::pair<int, double>> drift;  ///< injection, minutes

@@ -39,7 +39,6 @@ struct PeakCurve {
   double baseline_end = 0.0;
 };
 PeakCurve peak_curve(const Trace& trace, const Peak& peak,
-                     const WindowTemplate& window,
-                     double margin_widths = 4.0);
+                     const WindowTemplate& window, double margin_widths = 4.0);
 
 }  // namespace loqsmith

@@ -6,6 +6,7 @@
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/signal/noise_model.hpp"
 #include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
@@ -20,6 +21,9 @@ struct NoiseEstimate {
   /// stretch, n - 2 degrees of freedom, robust against a small peak in it.
   double standard_deviation = 0.0;
   std::vector<std::string> reasons;  ///< e.g. "noise-stretch-short"
+  /// Of a longer peak-free stretch around it; from it the spread of heights and
+  /// areas is predicted.
+  NoiseModel model;
 };
 
 /// Noise around a retention time, over `span_widths` widths at half height,

@@ -5,6 +5,7 @@
 #include <vector>
 
 #include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/signal/noise_model.hpp"
 #include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
@@ -18,6 +19,7 @@ struct SmoothedStretch {
   std::vector<double> slope;        ///< of the same, per minute
   std::vector<std::size_t> spikes;  ///< single points left out of both
   int points = 1;                   ///< smoothing length used
+  int order = 0;                    ///< of its polynomial, below points
   double gain = 1.0;  ///< sd of a smoothed point over that of a point
 };
 
@@ -33,9 +35,9 @@ double typical_step(std::span<const double> minutes);
 int smoothing_length(const IntegrationSettings& settings,
                      double width_half_minutes, double step_minutes);
 
-/// @param noise  standard deviation of a point; tells a spike from noise
+/// @param noise  tells a spike from noise, and what smoothing makes of it
 SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
-                               double noise);
+                               const NoiseModel& noise);
 
 /// A single point that stands out by more than 5 noise standard deviations
 /// over its neighbours, which themselves do not rise to a quarter of it: no
