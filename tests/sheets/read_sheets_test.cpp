@@ -1,5 +1,9 @@
 #include "loqsmith/sheets/read_sheets.hpp"
 
+#include <filesystem>
+#include <random>
+
+#include "loqsmith/base/files.hpp"
 #include "loqsmith/base/input_error.hpp"
 #include "sheets/example.hpp"
 #include "support/tolerance.hpp"
@@ -98,6 +102,48 @@ TEST(ReadSheets, PreparationNeedsUnitsOfTheMethod) {
                 std::string::npos);
     }
   }
+}
+
+TEST(ReadSheets, SampleRunsAreRead) {
+  for (const char* name :
+       {"well-water-herbicides", "tablet-coating-solvents"}) {
+    const auto folder =
+        std::filesystem::path(LOQSMITH_SOURCE_DIR) / "sample-runs" / name;
+    const Sheets sheets = read_sheets(
+        {read_file(folder / "sequence.csv"), read_file(folder / "levels.csv"),
+         read_file(folder / "method.xml")},
+        name);
+    EXPECT_EQ(sheets.method.id, name);
+    EXPECT_GT(sheets.sequence.injections.size(), 20U);
+  }
+}
+
+// Whatever happens to a sheet, it is read or refused in words.
+TEST(ReadSheets, DamagedSheetsAreReadOrRefused) {
+  const std::string letters = std::string("\0,\"\n\r9-.\xFFz", 10);
+  std::mt19937_64 random(7);
+  std::size_t refused = 0;
+  for (int round = 0; round < 3000; ++round) {
+    std::string sequence = kExampleSequence;
+    std::string levels = kExampleLevels;
+    std::string& damaged = round % 2 == 0 ? sequence : levels;
+    if (round % 3 == 0) {
+      damaged.resize(random() % damaged.size());
+    } else {
+      damaged[random() % damaged.size()] = letters[random() % letters.size()];
+    }
+    try {
+      read_sheets({sequence, levels, kExampleMethod}, "night");
+    } catch (const InputError& error) {
+      ++refused;
+      for (const InputProblem& problem : error.problems()) {
+        ASSERT_GT(problem.line, 0U) << error.what();
+        ASSERT_FALSE(problem.found.empty()) << error.what();
+        ASSERT_FALSE(problem.expected.empty()) << error.what();
+      }
+    }
+  }
+  EXPECT_GT(refused, 1500U);
 }
 
 TEST(ReadSheets, ProblemsOfAllSheetsAreSaidAtOnce) {
