@@ -60,10 +60,10 @@ class MzmlReader {
       scan_.notes().add("no integrity value in the file");
       return;
     }
-    const std::string stated = lower_hex(trim(*scan_.checksum()));
+    const std::string_view stated = trim(*scan_.checksum());
     const std::string computed =
         sha1_hex(original_.substr(0, original_offset(scan_.checksum_begin())));
-    if (stated == computed) return;
+    if (lower_hex(stated) == computed) return;
     const std::string found = "the checksum " + in_quotes(stated);
     if (source_.policy.checksum_required) {
       throw InputError(source_.problem(
