@@ -9,6 +9,12 @@
 namespace loqsmith {
 namespace {
 
+constexpr int kMostTicks = 40;
+
+// Beyond these an axis would run out of numbers.
+constexpr double kLeast = 1e-290;
+constexpr double kMost = 1e290;
+
 // The step of 1, 2 or 5 times a power of ten at or above `rough`.
 double round_step(double rough) {
   const double power = std::pow(10.0, std::floor(std::log10(rough)));
@@ -18,8 +24,11 @@ double round_step(double rough) {
   return 10.0 * power;
 }
 
-void widen_if_empty(double& low, double& high) {
-  if (high > low) return;
+// Numbers that an axis can be laid over, whatever a file held.
+void make_drawable(double& low, double& high) {
+  low = std::clamp(low, -kMost, kMost);
+  high = std::clamp(high, -kMost, kMost);
+  if (high - low > kLeast) return;
   const double room = std::max(std::abs(low) * 0.1, 1e-12);
   low -= room;
   high += room;
@@ -27,7 +36,11 @@ void widen_if_empty(double& low, double& high) {
 
 std::string linear_label(double tick, double step) {
   const double size = std::max(std::abs(tick), step);
-  if (size >= 1e6 || step < 1e-5) return short_number(tick, 2);
+  if (size >= 1e6 || step < 1e-5) {
+    // As many digits as tell one tick from the next.
+    const double digits = std::floor(std::log10(size / step) + 1e-9) + 1.0;
+    return power_number(tick, static_cast<int>(std::clamp(digits, 1.0, 17.0)));
+  }
   const int decimals =
       std::max(0, static_cast<int>(-std::floor(std::log10(step) + 1e-9)));
   return round_to_decimals(tick, decimals, RoundingRule::HalfEven);
@@ -75,19 +88,21 @@ double Axis::place(double number) const {
 }
 
 Axis tight_axis(double low, double high, double from, double to, int wanted) {
-  widen_if_empty(low, high);
+  make_drawable(low, high);
   const double step = round_step((high - low) / std::max(wanted, 1));
   Axis axis{low, high, from, to, false, {}, {}, {}};
+  const double first = std::ceil(low / step - 1e-9);
   const double last = std::floor(high / step + 1e-9);
-  for (double i = std::ceil(low / step - 1e-9); i <= last + 0.5; i += 1.0) {
-    axis.ticks.push_back(i * step);
-    axis.labels.push_back(linear_label(i * step, step));
+  // Counted, for adding one to a very large number may leave it as it is.
+  for (int i = 0; i < kMostTicks && first + i <= last + 0.5; ++i) {
+    axis.ticks.push_back((first + i) * step);
+    axis.labels.push_back(linear_label((first + i) * step, step));
   }
   return axis;
 }
 
 Axis linear_axis(double low, double high, double from, double to, int wanted) {
-  widen_if_empty(low, high);
+  make_drawable(low, high);
   const double step = round_step((high - low) / std::max(wanted, 1));
   const double first = std::floor(low / step + 1e-9);
   const double last = std::ceil(high / step - 1e-9);
@@ -96,6 +111,8 @@ Axis linear_axis(double low, double high, double from, double to, int wanted) {
 }
 
 Axis log_axis(double low, double high, double from, double to) {
+  low = std::clamp(low, kLeast, kMost);
+  high = std::clamp(high, kLeast, kMost);
   Axis axis{round_down(low), round_step(high), from, to, true, {}, {}, {}};
   if (!(axis.high > axis.low)) axis.high = 10.0 * axis.low;
   const bool wide = axis.high / axis.low > 2000.0;
@@ -113,6 +130,7 @@ Axis log_axis(double low, double high, double from, double to) {
 }
 
 std::string px(double pixels) {
+  if (!std::isfinite(pixels)) return "0.0";
   return round_to_decimals(pixels, 1, RoundingRule::HalfEven);
 }
 

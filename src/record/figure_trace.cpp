@@ -43,9 +43,11 @@ Points thinned(const PeakCurve& curve, const Axis& x, const Axis& y) {
 Axis signal_axis(const PeakCurve& curve, double span) {
   const auto [low, high] =
       std::minmax_element(curve.signal.begin(), curve.signal.end());
-  const double room = std::max(span - (*high - *low), 0.0);
+  // A little above the highest point for the apex's stroke.
+  const double room =
+      std::max(span - (*high - *low), 0.0) + 0.08 * (*high - *low);
   // Room goes above: a trace stands on its baseline.
-  return linear_axis(*low - 0.1 * room, *high + 0.9 * room, kBottom, kTop, 4);
+  return tight_axis(*low - 0.1 * room, *high + 0.9 * room, kBottom, kTop, 4);
 }
 
 }  // namespace

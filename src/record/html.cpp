@@ -1,5 +1,6 @@
 #include "loqsmith/record/html.hpp"
 
+#include <algorithm>
 #include <array>
 #include <charconv>
 #include <cmath>
@@ -42,14 +43,6 @@ std::string_view entity(char c) {
 bool is_control(char c) {
   const auto byte = static_cast<unsigned char>(c);
   return (byte < 0x20U && c != '\n' && c != '\t') || byte == 0x7FU;
-}
-
-std::string scientific(double number, int digits) {
-  std::array<char, 64> buffer{};
-  const auto end =
-      std::to_chars(buffer.data(), buffer.data() + buffer.size(), number,
-                    std::chars_format::scientific, digits - 1);
-  return {buffer.data(), end.ptr};
 }
 
 }  // namespace
@@ -96,12 +89,35 @@ std::string html_id(std::string_view prefix, std::string_view name) {
   return id;
 }
 
+std::string power_number(double number, int digits) {
+  if (number == 0.0 || !std::isfinite(number)) return "0";
+  std::array<char, 64> buffer{};
+  const auto end =
+      std::to_chars(buffer.data(), buffer.data() + buffer.size(), number,
+                    std::chars_format::scientific, std::max(digits - 1, 0));
+  const std::string_view text(buffer.data(), end.ptr);
+  const std::size_t e = text.find('e');
+  std::string mantissa(text.substr(0, e));
+  if (mantissa.find('.') != std::string::npos) {
+    mantissa.resize(mantissa.find_last_not_of('0') + 1);
+    if (mantissa.back() == '.') mantissa.pop_back();
+  }
+  std::string_view power = text.substr(e + 2);
+  while (power.size() > 1 && power.front() == '0') power.remove_prefix(1);
+  return mantissa + (text[e + 1] == '-' ? "e-" : "e") + std::string(power);
+}
+
 std::string short_number(double number, int digits) {
   const double size = std::abs(number);
   if (size != 0.0 && (size < 1e-4 || size >= 1e7)) {
-    return scientific(number, digits);
+    return power_number(number, digits);
   }
-  return round_to_significant(number, digits, RoundingRule::HalfEven);
+  const std::string rounded =
+      round_to_significant(number, digits, RoundingRule::HalfEven);
+  // 85 rather than 85.00: zeros that the number never had say nothing.
+  std::string whole = shortest(number);
+  const bool plain = whole.find('e') == std::string::npos;
+  return plain && whole.size() <= rounded.size() ? whole : rounded;
 }
 
 std::string html_number(double number, int digits) {

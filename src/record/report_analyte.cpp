@@ -89,16 +89,31 @@ void set_figures(std::ostream& out, const AnalyteJudgement& analyte,
            "stated amount.",
            [&] { figure_deviation(out, analyte, set); });
   }
-  if (has_limits_figure(analyte, set)) {
-    figure(out,
-           "<span class=\"key\">\xE2\x97\x8B</span> detection and "
-           "<span class=\"key\">\xE2\x97\x86</span> quantitation limit of "
-           "each procedure with 95 % bounds where known; pale marks are not "
-           "valid. Upright lines are the limits that govern; between them "
-           "results are estimates.",
-           [&] { figure_limits(out, analyte, set); });
-  }
   out << "</div>\n";
+}
+
+void set_limits(std::ostream& out, const AnalyteJudgement& analyte,
+                const CalibrationSet& set) {
+  out << "<h3>Limits</h3>\n<div class=\"figures\">\n";
+  const bool drawn = has_limits_figure(analyte, set);
+  if (drawn) {
+    out << "<figure>\n";
+    figure_limits(out, analyte, set);
+    out << "</figure>\n";
+  }
+  out << "<div>\n";
+  governing_words(out, analyte, set);
+  if (drawn) {
+    out << "<p class=\"reading\">Each row is a procedure: <span "
+           "class=\"key\">\xE2\x97\x8B</span> its detection limit, <span "
+           "class=\"key\">\xE2\x97\x86</span> its quantitation limit, with "
+           "95 % bounds where they are known; pale marks are not valid. The "
+           "upright lines are the limits that govern. Between them a result "
+           "is an estimate. Strokes are the standards' levels, dots the "
+           "samples.</p>\n";
+  }
+  out << "</div>\n</div>\n";
+  report_limits_table(out, analyte, set);
 }
 
 std::vector<const FigureCurve*> curves_of(const PublishedRun& run,
@@ -156,9 +171,8 @@ void report_analyte(std::ostream& out, const PublishedRun& run,
       out << "<h3>Calibration set " << html_text(set.set) << "</h3>\n";
     }
     calibration_words(out, analyte, set);
-    governing_words(out, analyte, set);
     set_figures(out, analyte, set);
-    report_limits_table(out, analyte, set);
+    set_limits(out, analyte, set);
   }
   traces(out, run, analyte.analyte);
   if (!analyte.checks.empty()) {

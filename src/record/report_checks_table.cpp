@@ -39,7 +39,8 @@ void report_checks_table(std::ostream& out,
   out << "<div class=\"wide\" role=\"region\" tabindex=\"0\" "
          "aria-label=\"Checks\"><table>\n<thead><tr><th "
          "scope=\"col\">Check</th><th scope=\"col\">Inj.</th><th "
-         "scope=\"col\">Value</th><th scope=\"col\">Wanted</th><th "
+         "class=\"number\" scope=\"col\">Value</th><th "
+         "scope=\"col\">Wanted</th><th "
          "scope=\"col\">Outcome</th><th scope=\"col\">Note</th></tr></thead>\n"
          "<tbody>\n";
   for (const CheckRow& check : checks) {

@@ -2,6 +2,7 @@
 #include <array>
 #include <map>
 #include <ostream>
+#include <string_view>
 
 #include "loqsmith/record/html.hpp"
 #include "loqsmith/record/report_parts.hpp"
@@ -71,6 +72,20 @@ void grid_head(std::ostream& out, const PublishedRun& run,
   out << "</tr></thead>\n";
 }
 
+// The most serious reason that the mark does not say already.
+std::string news(const ResultRow& row) {
+  constexpr std::array<std::string_view, 4> kSaidByMark = {
+      "above-range", "below-detection-limit", "below-critical-value",
+      "below-quantitation-limit"};
+  for (const std::string& reason : row.reasons) {
+    const bool said = row.status != Status::Withheld &&
+                      std::find(kSaidByMark.begin(), kSaidByMark.end(),
+                                reason) != kSaidByMark.end();
+    if (!said) return reason;
+  }
+  return {};
+}
+
 void cell(std::ostream& out, const ResultRow& row) {
   out << "<td id=\"" << result_id(row.injection, row.analyte) << "\" class=\""
       << status_name(row.status) << "\">" << status_mark(row.status)
@@ -79,12 +94,8 @@ void cell(std::ostream& out, const ResultRow& row) {
     out << "<span class=\"letter\">" << html_text(row.qualifier) << "</span>";
   }
   out << "<span class=\"unseen\">" << status_words(row.status) << "</span>";
-  // The words of plain states repeat the mark; those of others are news.
-  if (row.status == Status::Withheld && !row.reasons.empty()) {
-    out << "<span class=\"why\">" << html_text(row.reasons.front())
-        << "</span>";
-  } else if (row.reasons.size() > 1) {
-    out << "<span class=\"why\">" << html_text(row.reasons[1]) << "</span>";
+  if (const std::string word = news(row); !word.empty()) {
+    out << "<span class=\"why\">" << html_text(word) << "</span>";
   }
   out << "</td>";
 }

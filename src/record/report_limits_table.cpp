@@ -81,15 +81,17 @@ void row(std::ostream& out, const LimitRow& limit) {
 void report_limits_table(std::ostream& out, const AnalyteJudgement& analyte,
                          const CalibrationSet& set) {
   if (set.limits.rows.empty()) return;
-  out << "<h3>Limits by procedure</h3>\n<div class=\"wide\" role=\"region\" "
+  out << "<div class=\"wide\" role=\"region\" "
          "tabindex=\"0\" aria-label=\"Limits of "
       << html_text(analyte.analyte)
       << "\"><table>\n<thead><tr><th scope=\"col\">Procedure</th><th "
+         "class=\"number\" "
          "scope=\"col\">Detection, "
       << html_name(analyte.concentration_unit)
-      << "</th><th scope=\"col\">Quantitation, "
+      << "</th><th class=\"number\" scope=\"col\">Quantitation, "
       << html_name(analyte.concentration_unit)
-      << "</th><th scope=\"col\">n</th><th scope=\"col\">Grade</th><th "
+      << "</th><th class=\"number\" scope=\"col\">n</th><th "
+         "scope=\"col\">Grade</th><th "
          "scope=\"col\">What went into it</th></tr></thead>\n<tbody>\n";
   for (const LimitRow& limit : set.limits.rows) row(out, limit);
   out << "</tbody></table></div>\n";

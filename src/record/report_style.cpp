@@ -38,7 +38,7 @@ section{margin-top:2.4rem;padding-top:1.4rem;border-top:1px solid var(--rule)}
 a{color:var(--link)}a:focus-visible,.wide:focus-visible,summary:focus-visible{
 outline:3px solid var(--link);outline-offset:2px}
 code{font-family:"Noto Sans Mono","Liberation Mono",monospace;font-size:.85em}
-.hash{overflow-wrap:anywhere}
+.hash{overflow-wrap:anywhere}time{white-space:nowrap}
 .facts{display:grid;grid-template-columns:repeat(auto-fit,minmax(250px,1fr));
 gap:.7rem 2rem;margin:0 0 1.2rem}
 .facts dt{color:var(--soft);font-size:.82rem}.facts dd{margin:0;
@@ -56,7 +56,7 @@ border-radius:3px;margin:0}
 .mark{width:.8em;height:.8em;margin-right:.4em;vertical-align:-.04em;
 fill:none;stroke:currentColor;stroke-width:1.6}
 .wide{overflow-x:auto;margin:.6rem 0}
-table{border-collapse:collapse;width:100%;font-size:.92rem;
+table{border-collapse:separate;border-spacing:0;width:100%;font-size:.92rem;
 font-variant-numeric:tabular-nums}
 th,td{text-align:left;vertical-align:top;padding:.4rem .7rem;
 border-bottom:1px solid var(--rule);font-weight:400}
@@ -95,12 +95,14 @@ clip-path:inset(50%);white-space:nowrap}
 .figures{display:grid;gap:1.4rem 2rem;
 grid-template-columns:repeat(auto-fit,minmax(min(100%,420px),1fr))}
 figure{margin:0;max-width:560px}
-figcaption{font-size:.87rem;color:var(--soft);margin-top:.2rem}
+figcaption,.reading{font-size:.87rem;color:var(--soft);margin-top:.2rem}
 .key{color:var(--curve)}.key.bad{color:var(--withheld);font-weight:700}
 .figure{display:block;width:100%;height:auto}
 .figure text{fill:var(--ink);font-size:12.5px;font-family:inherit}
 .figure text.tick,.figure text.title{fill:var(--soft)}
 .figure text.governs{font-weight:700}
+.figure text.label{paint-order:stroke;stroke:var(--paper);stroke-width:5px;
+stroke-linejoin:round}
 .figure line,.figure polyline,.figure path{fill:none;stroke:var(--ink);
 stroke-width:1}
 .figure .grid{stroke:var(--rule);stroke-width:.6}
@@ -130,7 +132,9 @@ stroke-width:1.4}
 .figure .apex{stroke:var(--ink);stroke-width:1.6}
 @media (max-width:640px){main{padding:1rem .8rem 3rem 1rem}
 h1{font-size:1.5rem}h2{font-size:1.25rem}
-.grid .sample{min-width:8rem;max-width:11rem}
+.grid .sample{min-width:8rem;max-width:9.5rem;position:sticky;left:0;
+z-index:1;background:var(--paper)}
+.figure text{font-size:15px}
 th,td{padding:.35rem .5rem}}
 @media print{@page{size:A4;margin:14mm 12mm}
 :root{--paper:#fff;--ink:#000;--soft:#444;--rule:#bbb;--link:#000;
@@ -139,8 +143,8 @@ th,td{padding:.35rem .5rem}}
 --above-range-bg:#efe6f6;--withheld:#98202a;--withheld-bg:#fbe7e5;
 --hatch:rgba(152,32,42,.13);--curve:#1d4f80;--window:#e9eef3;--band:#f6ead0}
 *{-webkit-print-color-adjust:exact;print-color-adjust:exact}
-body{font-size:9.5pt}main{max-width:none;padding:0;border:0}
-nav,details{display:none}.wide{overflow:visible}table{font-size:8.5pt}
+html{font-size:9.5pt}body{font-size:1rem}main{max-width:none;padding:0;border:0}
+nav,details{display:none}.wide{overflow:visible}table{font-size:.9rem}
 th,td{padding:.2rem .35rem}.grid .sample{min-width:0;max-width:11rem}
 .grid td,.under,.why,.bounds-text,.number{white-space:normal}
 .terms{min-width:0}

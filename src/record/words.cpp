@@ -105,8 +105,8 @@ bool calibration_accepted(const AnalyteJudgement& judgement,
   if (!set.calibration || !set.calibration->accepted_lowest) return false;
   return std::none_of(judgement.checks.begin(), judgement.checks.end(),
                       [](const CheckRow& check) {
-                        return check.check.starts_with("calibration") &&
-                               check.passed == false;
+                        return check.check == "calibration" &&
+                               !check.action.empty() && check.passed == false;
                       });
 }
 

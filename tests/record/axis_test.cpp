@@ -2,6 +2,9 @@
 
 #include <gtest/gtest.h>
 
+#include <limits>
+#include <utility>
+
 #include "support/tolerance.hpp"
 
 namespace loqsmith {
@@ -37,6 +40,26 @@ TEST(TightAxis, KeepsItsEnds) {
   EXPECT_EQ(axis.labels, (Labels{"3.5"}));
   EXPECT_EQ(tight_axis(3.02, 3.87, 0, 100, 5).labels,
             (Labels{"3.2", "3.4", "3.6", "3.8"}));
+}
+
+TEST(Axes, LabelsOfLargeNumbersDiffer) {
+  EXPECT_EQ(tight_axis(1.20e6, 1.23e6, 0, 100, 3).labels,
+            (Labels{"1.2e6", "1.21e6", "1.22e6", "1.23e6"}));
+  EXPECT_EQ(linear_axis(0, 4e6, 0, 100, 2).labels, (Labels{"0", "2e6", "4e6"}));
+}
+
+TEST(Axes, AbsurdNumbersComeToAnEnd) {
+  for (const auto& [low, high] :
+       {std::pair(1e16, 1e16 + 4), std::pair(-1e308, 1e308),
+        std::pair(5e-324, 1e-323), std::pair(0.0, 1.7e308)}) {
+    EXPECT_LE(linear_axis(low, high, 0, 100).ticks.size(), 40U);
+    EXPECT_LE(tight_axis(low, high, 0, 100).ticks.size(), 40U);
+  }
+  EXPECT_EQ(px(tight_axis(-1e308, 1.7e308, 0, 100).place(1.0)), "50.0");
+  const Axis axis = log_axis(5e-324, 1.7e308, 0, 100);
+  EXPECT_GT(axis.low, 0.0);
+  EXPECT_LT(axis.ticks.size(), 700U);
+  EXPECT_EQ(px(std::numeric_limits<double>::quiet_NaN()), "0.0");
 }
 
 TEST(LogAxis, MarksOneTwoFiveAndHoldsWhatIsBeyond) {

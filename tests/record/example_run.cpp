@@ -2,6 +2,7 @@
 
 #include <array>
 #include <cmath>
+#include <cstdint>
 
 #include "loqsmith/base/rounding.hpp"
 
@@ -58,8 +59,11 @@ std::vector<Vial> vials() {
 
 // A number in [-1, 1] that looks irregular and is the same everywhere.
 double wobble(int i, int j) {
-  const int k = (i * 7919 + j * 104729 + i * j * 31) % 2003;
-  return static_cast<double>(k - 1001) / 1001.0;
+  auto bits = static_cast<std::uint32_t>(i * 7919 + j * 104729);
+  for (int round = 0; round < 2; ++round) {
+    bits = (bits ^ (bits >> 16U)) * 0x45d9f3bU;
+  }
+  return static_cast<double>(bits >> 8U) / 8388607.5 - 1.0;
 }
 
 Injection injection(int number, const std::string& sample, Role role,

@@ -179,6 +179,16 @@ TEST(Report, SaysThatNothingNeedsAPerson) {
             std::string::npos);
 }
 
+TEST(Report, ACellSaysTheReasonThatItsMarkDoesNot) {
+  PublishedRun run = test::small_run();
+  run.analytes[0].results[0].reasons = {"overlapped",
+                                        "below-quantitation-limit"};
+  EXPECT_NE(page(run).find("<span class=\"why\">overlapped</span>"),
+            std::string::npos);
+  run.analytes[0].results[0].reasons = {"below-quantitation-limit"};
+  EXPECT_EQ(page(run).find("class=\"why\">below"), std::string::npos);
+}
+
 TEST(Report, EveryAnalyteHasItsFigures) {
   const std::string html = page(test::example_run());
   // Calibration, deviation, limits and two traces of three analytes; the

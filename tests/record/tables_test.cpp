@@ -76,6 +76,10 @@ TEST(Tables, AFailedCalibrationCheckMakesItNotAccepted) {
   check.check = "calibration";
   check.passed = false;
   run.analytes[0].checks.push_back(check);
+  // A level that fails has no action: it narrows the range.
+  EXPECT_NE(table(write_calibration_table, run).find(",2,5,yes,"),
+            std::string::npos);
+  run.analytes[0].checks.back().action = "withhold";
   EXPECT_NE(table(write_calibration_table, run).find(",2,5,no,"),
             std::string::npos);
 }

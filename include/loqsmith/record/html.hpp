@@ -27,7 +27,11 @@ std::string html_number(double number, int digits = 4);
 /// The same; a dash where there is none.
 std::string html_number(const std::optional<double>& number, int digits = 4);
 
-/// Four significant digits or so, "1.2e-7" where plain digits would be long.
+/// "1.2e-7": at most so many digits, none that say nothing.
+std::string power_number(double number, int digits);
+
+/// Four significant digits or so, as power_number() where plain digits would be
+/// long.
 std::string short_number(double number, int digits = 4);
 
 }  // namespace loqsmith

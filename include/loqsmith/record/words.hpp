@@ -38,8 +38,9 @@ CalibrationSettings calibration_settings(const Method& method,
                                          const std::string& analyte,
                                          const CalibrationSet& set);
 
-/// True where there is a calibration with an accepted range and no check
-/// named `calibration...` of the analyte failed.
+/// True where there is a calibration with an accepted range and no calibration
+/// check of the analyte failed. One without an action does not count: a level
+/// that fails narrows the range, it does not refuse the whole.
 bool calibration_accepted(const AnalyteJudgement& judgement,
                           const CalibrationSet& set);
 
