@@ -149,6 +149,10 @@ void remove_tree(const fs::path& folder) {
   file_ops::remove_folder(folder);
 }
 
+bool is_there(const fs::path& path) {
+  return fs::exists(fs::symlink_status(path));
+}
+
 void rename_new(const fs::path& from, const fs::path& to) {
   file_ops::rename_new(from, to);
 }

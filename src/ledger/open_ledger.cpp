@@ -6,6 +6,7 @@
 #include "loqsmith/base/digest.hpp"
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/base/time.hpp"
+#include "loqsmith/ledger/damage.hpp"
 #include "loqsmith/ledger/system_failures.hpp"
 
 namespace loqsmith {
@@ -37,14 +38,8 @@ FileLock take_lock(const OutLayout& layout, std::chrono::seconds patience) {
 }
 
 std::optional<std::string> read_if_there(const fs::path& path) {
-  if (!fs::exists(fs::symlink_status(path))) return std::nullopt;
+  if (!is_there(path)) return std::nullopt;
   return read_file(path);
-}
-
-[[noreturn]] void halt_as_damaged(const Deviation& deviation) {
-  throw Halt(ExitStatus::IoFailed,
-             "the ledger is damaged, nothing is appended: " + deviation.place +
-                 ": " + deviation.what);
 }
 
 // The clock's time, unless it stands before the last line's: time in the ledger
@@ -68,10 +63,9 @@ OpenLedger::OpenLedger(const PublicationPlace& place,
   halt_on_failure([&] {
     lock_ = take_lock(layout_, patience);
     chain_ = read_chain(read_if_there(layout_.ledger()).value_or(""));
-    if (!chain_.deviations.empty()) halt_as_damaged(chain_.deviations.front());
     const auto head = read_if_there(layout_.head());
     const HeadCheck check = check_head(chain_, head);
-    if (check.damage) halt_as_damaged(*check.damage);
+    halt_if_damaged(layout_, chain_, check);
     if (check.one_behind) mend_head(head);
     mend_torn_line();
     report_torn_lines();

@@ -106,7 +106,7 @@ void check_target(const OutLayout& layout, const std::string& run) {
         ExitStatus::IoFailed,
         "a symbolic link leads " + (layout.out / run).string() + " out of OUT");
   }
-  if (fs::exists(fs::symlink_status(layout.out / run))) {
+  if (is_there(layout.out / run)) {
     throw Halt(ExitStatus::IoFailed, (layout.out / run).string() +
                                          " is there, and the ledger does not "
                                          "know it");

@@ -3,8 +3,7 @@
 #include <algorithm>
 #include <map>
 
-#include "loqsmith/base/halt.hpp"
-#include "loqsmith/ledger/manifest.hpp"
+#include "loqsmith/ledger/damage.hpp"
 #include "loqsmith/ledger/run_history.hpp"
 
 namespace loqsmith {
@@ -12,40 +11,12 @@ namespace {
 
 namespace fs = std::filesystem;
 
-[[noreturn]] void halt_as_damaged(const std::string& run,
-                                  const std::string& what) {
-  throw Halt(ExitStatus::IoFailed,
-             "OUT is damaged, nothing is changed: " + run + " " + what);
-}
-
-bool is_there(const fs::path& path) {
-  return fs::exists(fs::symlink_status(path));
-}
-
 // True where the program that made the staging folder still runs.
 bool is_held(const fs::path& staging) {
   const fs::path owner = staging / OutLayout::kOwner;
   if (!is_there(owner)) return false;
   FileLock lock;
   return !lock.try_lock(owner);
-}
-
-// A staging folder is complete when every file that the manifest names is there
-// and nothing else is.
-void check_complete(const fs::path& staging, const RunEvents& run) {
-  const RunCheck check = check_run_folder(staging, run.object, run.manifest);
-  if (!check.deviations.empty()) {
-    halt_as_damaged(run.object,
-                    "was published, and its staging is not what "
-                    "was published: " +
-                        check.deviations.front().place + ": " +
-                        check.deviations.front().what);
-  }
-  if (files_below(staging).size() != check.files.size() + 1) {
-    halt_as_damaged(run.object,
-                    "was published, and its staging holds files "
-                    "that its manifest does not name");
-  }
 }
 
 bool recovery_told(const OpenLedger& ledger, const std::string& object) {
@@ -56,19 +27,7 @@ bool recovery_told(const OpenLedger& ledger, const std::string& object) {
                      });
 }
 
-void check_published(const OpenLedger& ledger, const RunEvents& run) {
-  if (is_there(ledger.layout().out / run.object)) return;
-  const fs::path staging = ledger.layout().staging(run.begun);
-  if (!is_there(staging)) {
-    halt_as_damaged(run.object,
-                    "was published, and neither its folder nor its "
-                    "staging is there");
-  }
-  check_complete(staging, run);
-}
-
 void finish_published(OpenLedger& ledger, const RunEvents& run) {
-  if (is_there(ledger.layout().out / run.object)) return;
   if (!recovery_told(ledger, run.object)) {
     ledger.append({"recovery",
                    run.object,
@@ -118,17 +77,8 @@ void remove_leftovers(OpenLedger& ledger) {
 }  // namespace
 
 void recover_runs(OpenLedger& ledger) {
-  const RunHistory history = collect_runs(ledger.lines());
-  if (!history.deviations.empty()) {
-    halt_as_damaged(history.deviations.front().place,
-                    history.deviations.front().what);
-  }
-  // All that could be damage is looked at before anything is changed.
-  for (const RunEvents& run : history.runs) {
-    if (run.published != 0) check_published(ledger, run);
-  }
-  for (const RunEvents& run : history.runs) {
-    if (run.published != 0) finish_published(ledger, run);
+  for (const RunEvents& run : collect_runs(ledger.lines()).runs) {
+    if (is_out_of_place(ledger.layout(), run)) finish_published(ledger, run);
     if (run.pending()) abandon(ledger, run);
   }
   remove_leftovers(ledger);

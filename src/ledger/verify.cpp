@@ -30,10 +30,6 @@ void look_until(SteadyClock::time_point deadline, Look is_settled) {
   }
 }
 
-bool is_there(const fs::path& path) {
-  return fs::exists(fs::symlink_status(path));
-}
-
 // Everything below OUT that is no folder; .work is left out, as files come and
 // go there while a run is at work.
 std::vector<std::string> files_of(const fs::path& out) {

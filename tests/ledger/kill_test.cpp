@@ -22,7 +22,8 @@ using std::chrono::milliseconds;
 std::string state_of(const fs::path& folder) {
   std::string text;
   for (const auto& entry : fs::recursive_directory_iterator(folder)) {
-    if (entry.is_directory()) text += entry.path().string() + "/\n";
+    if (!entry.is_directory()) continue;
+    text += entry.path().lexically_relative(folder).string() + "/\n";
   }
   for (const std::string& name : files_below(folder)) {
     text += name + ' ' + digest_file(folder / name).sha256 + '\n';
@@ -77,13 +78,18 @@ class Kills : public ::testing::Test {
 
   void kill_recovery_everywhere(const fs::path& state, const std::string& when);
 
+  // Whether this state was not met before, whatever led to it.
+  bool is_new(const fs::path& out) {
+    return states_.insert(state_of(out)).second;
+  }
+
   TempFolder folder_;
   int copies_ = 0;
+  std::set<std::string> states_;
 };
 
 void Kills::kill_recovery_everywhere(const fs::path& state,
                                      const std::string& when) {
-  std::set<std::string> seen;
   for (const bool torn : {false, true}) {
     for (int m = 1;; ++m) {
       const fs::path out = copy_of(state);
@@ -96,7 +102,7 @@ void Kills::kill_recovery_everywhere(const fs::path& state,
       }
       const std::string again =
           when + ", recovery killed at operation " + std::to_string(m);
-      if (seen.insert(state_of(out)).second) expect_recovers(out, again);
+      if (is_new(out)) expect_recovers(out, again);
       fs::remove_all(out);
     }
   }
@@ -105,7 +111,6 @@ void Kills::kill_recovery_everywhere(const fs::path& state,
 TEST_F(Kills, AtEveryOperationLeaveTheWholeRunOrNone) {
   const fs::path first = folder_ / "out";
   publish_run(place_at(first), "a");
-  std::set<std::string> seen;
   int kills = 0;
   int with_run = 0;
   for (const bool torn : {false, true}) {
@@ -115,9 +120,7 @@ TEST_F(Kills, AtEveryOperationLeaveTheWholeRunOrNone) {
       const ChildEnd end = run_and_kill(
           {n, torn}, [&] { publish_run(place_at(out), "a", "2"); });
       const std::string when = "killed at operation " + std::to_string(n);
-      const std::string state = state_of(out);
-      const bool untold = seen.insert(state).second;
-      if (untold && !remarks_on(out).empty()) {
+      if (is_new(out) && !remarks_on(out).empty()) {
         kill_recovery_everywhere(out, when);
       }
       expect_recovers(out, when);

@@ -165,12 +165,14 @@ TEST_F(Recovery, HaltsWhereTheLedgerIsMissing) {
 TEST_F(Recovery, HaltsWhereAPublishedRunIsGone) {
   fs::remove_all(out_ / "a");
   expect_damage("neither its folder nor its staging");
+  append_to_file(out_ / "ledger.jsonl", "{");
+  expect_damage("neither its folder nor its staging");
 }
 
 TEST_F(Recovery, HaltsWhereStagingIsNotWhatWasPublished) {
   take_out_of_place();
   overwrite(".work/staging-1/results.csv", "injection\n9\n");
-  expect_damage("its staging is not what was published");
+  expect_damage("a/run-0001/results.csv: in OUT/.work");
   overwrite(".work/staging-1/results.csv", "injection\n1\n");
   overwrite(".work/staging-1/added.csv", "");
   expect_damage("its manifest does not name");

@@ -58,6 +58,9 @@ struct FileDigest {
 /// symbolic link included, throws std::system_error.
 FileDigest digest_file(const std::filesystem::path& path);
 
+/// Whether there is anything by that name, a broken symbolic link included.
+bool is_there(const std::filesystem::path& path);
+
 /// Renames without replacing anything (renameat2, RENAME_NOREPLACE).
 void rename_new(const std::filesystem::path& from,
                 const std::filesystem::path& to);

@@ -19,7 +19,8 @@ class OpenLedger {
  public:
   /// @param patience  how long to wait for the lock
   /// @throws Halt 73 where OUT cannot be created, 75 where the lock is not to
-  ///         be had, 74 where the ledger is damaged: it is then never touched.
+  ///         be had, 74 where OUT is damaged (damage.hpp): it is then never
+  ///         touched.
   OpenLedger(const PublicationPlace& place, std::chrono::seconds patience);
 
   const OutLayout& layout() const { return layout_; }

@@ -5,10 +5,8 @@
 namespace loqsmith {
 
 /// Second half of recovery, after OpenLedger has mended the ledger itself:
-/// - published without its folder, with its staging and the same manifest:
-///   line `recovery`, moved into place;
-/// - published with neither, or with a staging that is not what the manifest
-///   says: Halt 74, nothing is touched;
+/// - published without its folder (its staging was found whole, otherwise the
+///   ledger would not have opened): line `recovery`, moved into place;
 /// - begun, not published, and nobody holds its staging: line `run-abandoned`,
 ///   staging removed;
 /// - staging folders of runs that are over: removed.
