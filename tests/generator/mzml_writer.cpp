@@ -165,17 +165,15 @@ std::string with_index(std::string document) {
 
 }  // namespace
 
-std::string mzml_document(const SimulatedNight& night, const Vial& vial,
-                          bool indexed) {
-  std::string document = "<?xml version=\"1.0\" encoding=\"UTF-8\"?>\n";
-  if (indexed)
-    document += "<indexedmzML xmlns=\"http://psi.hupo.org/ms/mzml\">\n";
-  document += header(night, vial) +
-              "      <chromatogramList count=\"2\" "
-              "defaultDataProcessingRef=\"as_acquired\">\n" +
-              absorption(night, vial) + pressure(night, vial) +
-              "      </chromatogramList>\n    </run>\n  </mzML>\n";
-  return indexed ? with_index(std::move(document)) : document;
+std::string mzml_document(const SimulatedNight& night, const Vial& vial) {
+  return with_index(
+      "<?xml version=\"1.0\" encoding=\"UTF-8\"?>\n"
+      "<indexedmzML xmlns=\"http://psi.hupo.org/ms/mzml\">\n" +
+      header(night, vial) +
+      "      <chromatogramList count=\"2\" "
+      "defaultDataProcessingRef=\"as_acquired\">\n" +
+      absorption(night, vial) + pressure(night, vial) +
+      "      </chromatogramList>\n    </run>\n  </mzML>\n");
 }
 
 }  // namespace loqsmith::test

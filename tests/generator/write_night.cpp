@@ -33,9 +33,7 @@ void write_well_water(const std::filesystem::path& runs) {
   const SimulatedNight night = well_water_night();
   write_sheets(runs, night);
   for (const Vial& vial : night.vials) {
-    // Every tenth file is plain mzML, the others carry an index.
-    write(runs / night.name / vial.file,
-          mzml_document(night, vial, vial.number % 10 != 0));
+    write(runs / night.name / vial.file, mzml_document(night, vial));
   }
 }
 

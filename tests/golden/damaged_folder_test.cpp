@@ -7,6 +7,7 @@
 
 #include "golden/processed.hpp"
 #include "golden/sheet.hpp"
+#include "loqsmith/base/digest.hpp"
 #include "loqsmith/base/files.hpp"
 #include "support/temp_folder.hpp"
 
@@ -22,6 +23,19 @@ void overwrite(const fs::path& path, const std::string& text) {
 
 void cut_in_half(const fs::path& path) {
   fs::resize_file(path, fs::file_size(path) / 2);
+}
+
+// Another wavelength in a file that is right in everything else, its SHA-1
+// included.
+void rename_trace(const fs::path& path) {
+  std::string text = read_file(path);
+  for (std::size_t at = text.find("220 nm"); at != std::string::npos;
+       at = text.find("220 nm", at)) {
+    text.replace(at, 6, "254 nm");
+  }
+  const std::size_t digits = text.find("<fileChecksum>") + 14;
+  const std::string_view covered(text.data(), digits);
+  overwrite(path, text.replace(digits, 40, sha1_hex(covered)));
 }
 
 // The file of the first injection of a sample.
@@ -47,17 +61,12 @@ TEST_F(DamagedFolder, BadFilesAreNamedAndTheRestIsPublished) {
   const std::string truncated = file_of(folder_, "W-102");
   const std::string unreadable = file_of(folder_, "W-104");
   const std::string missing = file_of(folder_, "W-110");
-  // A plain file without a checksum: only its trace is the wrong one.
   const std::string other_trace = file_of(folder_, "W-106");
   cut_in_half(folder_ / truncated);
   fs::remove(folder_ / unreadable);
   fs::create_directory(folder_ / unreadable);
   fs::remove(folder_ / missing);
-  std::string text = read_file(folder_ / other_trace);
-  const std::size_t name = text.find("UV 220 nm");
-  ASSERT_NE(name, std::string::npos);
-  ASSERT_EQ(text.find("fileChecksum"), std::string::npos);
-  overwrite(folder_ / other_trace, text.replace(name, 9, "UV 254 nm"));
+  rename_trace(folder_ / other_trace);
 
   const ProgramRun done = process(folder_, place_ / "out");
   EXPECT_EQ(done.status, 1) << done.err;
