@@ -10,13 +10,20 @@
 namespace loqsmith::test {
 namespace {
 
-// A locale with a decimal comma, made for this test: which ones a machine has
-// is nobody's business.
 bool make_comma_locale(const std::filesystem::path& where) {
   const std::string command = "localedef -i de_DE -f UTF-8 '" +
                               (where / "de_DE.UTF-8").string() +
                               "' >/dev/null 2>&1";
   return std::system(command.c_str()) == 0;
+}
+
+// A locale with a decimal comma, made for this test: which ones a machine has
+// is nobody's business. @return the folder for LOCPATH
+std::filesystem::path comma_locale() {
+  static const TempFolder folder;
+  static const bool made = make_comma_locale(folder.path());
+  EXPECT_TRUE(made) << "localedef failed; it needs the package locales";
+  return folder.path();
 }
 
 class SameBytes : public testing::TestWithParam<std::string> {
@@ -50,10 +57,9 @@ TEST_P(SameBytes, WithTwoAndEightThreads) {
 }
 
 TEST_P(SameBytes, FromAnotherFolderInAnotherLocaleAndZone) {
-  ASSERT_TRUE(make_comma_locale(place_.path()));
   std::filesystem::create_directory(place_ / "elsewhere");
   process(sample_run(GetParam()), place_ / "abroad", {},
-          {"LOCPATH=" + place_.path().string(), "LC_ALL=de_DE.UTF-8",
+          {"LOCPATH=" + comma_locale().string(), "LC_ALL=de_DE.UTF-8",
            "LANG=de_DE.UTF-8", "TZ=Asia/Kathmandu"},
           (place_ / "elsewhere").string());
   expect_same(place_ / "abroad");
