@@ -133,7 +133,7 @@ TEST(Head, NamesTheLastLine) {
 // What anybody can do with nothing but a shell: line n's hash stands in line
 // n + 1, and the last one's in the head.
 TEST(Chain, IsCheckedWithSedAndSha256sumAlone) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   publish_run(place, "a");
   publish_run(place, "b\xC3\xA4 'c'");

@@ -9,7 +9,9 @@
 #include "loqsmith/base/digest.hpp"
 #include "loqsmith/base/text.hpp"
 #include "loqsmith/ledger/chain.hpp"
+#include "loqsmith/ledger/damage.hpp"
 #include "loqsmith/ledger/out_layout.hpp"
+#include "loqsmith/ledger/run_history.hpp"
 
 namespace loqsmith {
 namespace {
@@ -45,13 +47,43 @@ int highest_begun(const fs::path& out) {
   return count;
 }
 
+// Lines of a recovery as short texts: those that the ledger has.
+std::set<std::string> told_lines(const fs::path& out) {
+  std::set<std::string> told;
+  if (!fs::exists(out / "ledger.jsonl")) return told;
+  for (const auto& line : read_chain(read_file(out / "ledger.jsonl")).lines) {
+    told.insert(line.action + ' ' + line.object + detail_of(line, "torn"));
+  }
+  return told;
+}
+
+// And those that this state demands, however often recovery is interrupted.
+std::set<std::string> owed_lines(const fs::path& out) {
+  std::set<std::string> owed;
+  if (!fs::exists(out / "ledger.jsonl")) return owed;
+  const Chain chain = read_chain(read_file(out / "ledger.jsonl"));
+  if (!chain.torn.empty()) {
+    owed.insert("recovery ledger.jsonl" + sha256_hex(chain.torn));
+  }
+  for (const RunEvents& run : collect_runs(chain.lines).runs) {
+    if (run.pending()) owed.insert("run-abandoned " + run.object);
+    if (is_out_of_place({out}, run)) owed.insert("recovery " + run.object);
+  }
+  return owed;
+}
+
 // What must hold after a kill: the next start says what it found, and leaves
 // OUT with the whole run or without it, and able to take the next one.
-void expect_recovers(const fs::path& out, const std::string& when) {
+void expect_recovers(const fs::path& out, const std::string& when,
+                     const std::set<std::string>& owed) {
   const bool something_to_say = !remarks_on(out).empty();
   const auto found = recover(place_at(out));
   if (something_to_say) {
     EXPECT_FALSE(found.empty()) << when;
+  }
+  const auto told = told_lines(out);
+  for (const std::string& line : owed) {
+    EXPECT_EQ(told.count(line), 1U) << when << ": " << line;
   }
   if (fs::exists(out / "ledger.jsonl")) {
     EXPECT_EQ(remarks_on(out), "") << when << ' ' << join(found, "; ");
@@ -90,6 +122,7 @@ class Kills : public ::testing::Test {
 
 void Kills::kill_recovery_everywhere(const fs::path& state,
                                      const std::string& when) {
+  const auto owed = owed_lines(state);
   for (const bool torn : {false, true}) {
     for (int m = 1;; ++m) {
       const fs::path out = copy_of(state);
@@ -102,7 +135,7 @@ void Kills::kill_recovery_everywhere(const fs::path& state,
       }
       const std::string again =
           when + ", recovery killed at operation " + std::to_string(m);
-      if (is_new(out)) expect_recovers(out, again);
+      expect_recovers(out, again, owed);
       fs::remove_all(out);
     }
   }
@@ -123,7 +156,7 @@ TEST_F(Kills, AtEveryOperationLeaveTheWholeRunOrNone) {
       if (is_new(out) && !remarks_on(out).empty()) {
         kill_recovery_everywhere(out, when);
       }
-      expect_recovers(out, when);
+      expect_recovers(out, when, owed_lines(out));
       if (fs::exists(out / "a/run-0002/results.csv")) ++with_run;
       fs::remove_all(out);
       if (!end.killed) {
@@ -145,7 +178,8 @@ TEST_F(Kills, OfTheVeryFirstRunLeaveTheWholeRunOrNone) {
       const fs::path out = folder_ / "work";
       const ChildEnd end =
           run_and_kill({n, torn}, [&] { publish_run(place_at(out), "a"); });
-      expect_recovers(out, "first run killed at " + std::to_string(n));
+      expect_recovers(out, "first run killed at " + std::to_string(n),
+                      owed_lines(out));
       fs::remove_all(out);
       if (!end.killed) break;
     }

@@ -49,7 +49,7 @@ std::string problem_of(const std::function<void()>& action) {
 }
 
 TEST(Publication, PutsAWholeRunInPlaceAndSaysSo) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const fs::path out = folder / "new/out";
   const fs::path published = publish_run(place_at(out), "well");
   EXPECT_EQ(published, out / "well/run-0001");
@@ -70,7 +70,7 @@ TEST(Publication, PutsAWholeRunInPlaceAndSaysSo) {
 }
 
 TEST(Publication, WritesALineOfExactlyTheseFields) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   RunAtWork::begin(place_at(folder / "out"), "well", "/in/well",
                    {{"method", "\"\n\xFF"}});
   EXPECT_EQ(read_file(folder / "out/ledger.jsonl"),
@@ -87,7 +87,7 @@ TEST(Publication, WritesALineOfExactlyTheseFields) {
 }
 
 TEST(Publication, ListsEveryFileInTheManifest) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const fs::path run = publish_run(place_at(folder / "out"), "a/b");
   EXPECT_EQ(
       read_file(run / "manifest.json"),
@@ -101,7 +101,7 @@ TEST(Publication, ListsEveryFileInTheManifest) {
 }
 
 TEST(Publication, CountsRunsOfEachSequence) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   EXPECT_EQ(publish_run(place, "a").filename(), "run-0001");
   EXPECT_EQ(publish_run(place, "a").filename(), "run-0002");
@@ -111,7 +111,7 @@ TEST(Publication, CountsRunsOfEachSequence) {
 }
 
 TEST(Publication, NeverUsesAnAbandonedNumberAgain) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   {
     const RunAtWork left = RunAtWork::begin(place, "a", "/in/a", {});
@@ -129,7 +129,7 @@ TEST(Publication, NeverUsesAnAbandonedNumberAgain) {
 }
 
 TEST(Publication, HoldsTheSequenceWhileARunIsAtWork) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   RunAtWork first = RunAtWork::begin(place, "a", "/in/a", {});
   EXPECT_EQ(status_of([&] { RunAtWork::begin(place, "a", "/in/a", {}); }), 75);
@@ -142,7 +142,7 @@ TEST(Publication, HoldsTheSequenceWhileARunIsAtWork) {
 }
 
 TEST(Publication, GivesUpWhenTheLedgersLockIsNotToBeHad) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   recover(place);
   FileLock lock;
@@ -153,14 +153,14 @@ TEST(Publication, GivesUpWhenTheLedgersLockIsNotToBeHad) {
 }
 
 TEST(Publication, SaysWhenOutCannotBeCreated) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   write_new_file(folder / "file", "");
   EXPECT_EQ(status_of([&] { recover(place_at(folder / "file")); }), 73);
   EXPECT_EQ(status_of([&] { recover(place_at(folder / "file/out")); }), 73);
 }
 
 TEST(Publication, RefusesANameUsedForAnotherFolder) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   publish_run(place, "a");
   const std::string problem =
@@ -171,7 +171,7 @@ TEST(Publication, RefusesANameUsedForAnotherFolder) {
 }
 
 TEST(Publication, KnowsAFolderWhicheverWayItIsNamed) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   make_folders(folder / "in/a");
   fs::create_directory_symlink(folder / "in", folder / "way");
@@ -183,7 +183,7 @@ TEST(Publication, KnowsAFolderWhicheverWayItIsNamed) {
 }
 
 TEST(Publication, RefusesNamesThatAreNoSafePath) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   for (const std::string name :
        {"", ".", "..", "../a", "a/../b", "/a", "a/", "a//b", ".work", "a/.b",
@@ -200,7 +200,7 @@ TEST(Publication, RefusesNamesThatAreNoSafePath) {
 }
 
 TEST(Publication, TouchesNothingThatTheLedgerDoesNotKnow) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   make_folders(place.out / "a/run-0001");
   EXPECT_EQ(status_of([&] { publish_run(place, "a"); }), 74);
@@ -210,7 +210,7 @@ TEST(Publication, TouchesNothingThatTheLedgerDoesNotKnow) {
 }
 
 TEST(Publication, PublishesOnceAndOnlyRegularFiles) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   const PublicationPlace place = place_at(folder / "out");
   RunAtWork run = RunAtWork::begin(place, "a", "/in/a", {});
   run.publish({});
@@ -221,7 +221,7 @@ TEST(Publication, PublishesOnceAndOnlyRegularFiles) {
 }
 
 TEST(Publication, KeepsTimeInTheLedgerFromGoingBack) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   PublicationPlace place = place_at(folder / "out");
   publish_run(place, "a");
   place.clock = [] { return std::string("2020-01-01T00:00:00.000Z"); };
@@ -233,7 +233,7 @@ TEST(Publication, KeepsTimeInTheLedgerFromGoingBack) {
 }
 
 TEST(Publication, NeverWritesALineThatCouldNotBeReadBack) {
-  const TempFolder folder;
+  const TempFolder folder(TempFolder::kept_in_memory());
   PublicationPlace place = place_at(folder / "out");
   place.clock = [] { return std::string("half past nine"); };
   EXPECT_EQ(status_of([&] { publish_run(place, "a"); }), 70);

@@ -56,7 +56,7 @@ class Recovery : public ::testing::Test {
     EXPECT_EQ(files_below(out_), files);
   }
 
-  TempFolder folder_;
+  TempFolder folder_{TempFolder::kept_in_memory()};
   fs::path out_;
 };
 

@@ -54,7 +54,7 @@ class Verify : public ::testing::Test {
     return read_chain(read_file(out_ / "ledger.jsonl")).lines;
   }
 
-  TempFolder folder_;
+  TempFolder folder_{TempFolder::kept_in_memory()};
   fs::path out_;
 };
 
