@@ -62,7 +62,8 @@ void judge_offset(LimitEstimate& estimate, const BlankSample& sample,
            " of their standard deviations " +
            (difference > 0.0 ? "above" : "below") +
            " the intercept: of blank samples " + percent_figure(rate) +
-           " are to be expected at or above the detection limit"});
+           " are to be expected at or above the detection limit; a weighted "
+           "calibration or offset=\"blank-mean\" may mend it"});
 }
 
 void judge_baseline(LimitEstimate& estimate, const LimitEvidence& evidence) {
