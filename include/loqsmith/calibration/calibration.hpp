@@ -15,9 +15,9 @@ struct StandardPoint {
   int injection = 0;
   std::string level;
   double concentration = 0.0;  ///< nominal, method's unit, >= 0
-  double response = 0.0;       ///< detector units, or ratio to the internal standard
-  bool used = true;            ///< false: not in the fit; `note` says why
-  std::string note;            ///< reason words, separated by ';'
+  double response = 0.0;  ///< detector units, or ratio to the internal standard
+  bool used = true;       ///< false: not in the fit; `note` says why
+  std::string note;       ///< reason words, separated by ';'
 
   // Filled by the fit.
   double weight = 0.0;  ///< as used in the fit, before any scaling
@@ -50,7 +50,7 @@ struct Calibration {
   std::array<std::array<double, 3>, 3> covariance{};
   std::vector<StandardPoint> points;     ///< all standards, used or not
   std::vector<CalibrationLevel> levels;  ///< ascending, concentration > 0
-  double lowest = 0.0;   ///< lowest and highest level in the fit
+  double lowest = 0.0;  ///< lowest and highest level in the fit
   double highest = 0.0;
   std::optional<double> accepted_lowest;  ///< range by accepted levels
   std::optional<double> accepted_highest;

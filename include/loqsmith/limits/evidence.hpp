@@ -47,8 +47,8 @@ struct LimitEvidence {
   NoiseSettings::Measure noise_measure = NoiseSettings::Measure::HalfPeakToPeak;
   bool bounds_own = false;       ///< integration bounds="own"
   bool baseline_biased = false;  ///< asymmetric least squares or snip
-  bool carry_over_passed =
-      false;  ///< the carry-over check is present and passed
+  /// The carry-over check is present and passed.
+  bool carry_over_passed = false;
 };
 
 }  // namespace loqsmith
