@@ -15,7 +15,11 @@ sh tests/debian-packages.sh g++ cmake ninja-build libboost-dev \
 
 echo "Building loqsmith (a few minutes the first time)"
 mkdir -p build
-cmake -S . -B build/demo -G Ninja -DCMAKE_BUILD_TYPE=Release \
+launcher=
+if command -v ccache >/dev/null; then
+  launcher=-DCMAKE_CXX_COMPILER_LAUNCHER=ccache
+fi
+cmake -S . -B build/demo -G Ninja -DCMAKE_BUILD_TYPE=Release $launcher \
   -DLOQSMITH_TESTS=OFF >build/demo.log 2>&1 || { cat build/demo.log; exit 1; }
 ninja -C build/demo -j 2 --quiet loqsmith
 loqsmith=$(find build/demo -type f -name loqsmith -perm -u+x)
