@@ -3,6 +3,18 @@
 #include <algorithm>
 
 namespace loqsmith {
+namespace {
+
+std::optional<double> nominal_of(const Injection& injection,
+                                 const Sequence& sequence,
+                                 const std::string& analyte) {
+  if (injection.level.empty()) return std::nullopt;
+  const LevelEntry* entry = sequence.level_entry(injection.level, analyte);
+  if (entry == nullptr) return std::nullopt;
+  return entry->concentration;
+}
+
+}  // namespace
 
 MeasuredAnalyte collect_responses(
     const AnalyteSettings& settings, const UnitSettings& units,
@@ -12,11 +24,9 @@ MeasuredAnalyte collect_responses(
       response_rule(settings, internal_standard, injections);
   MeasuredAnalyte analyte{&settings, &units, &sequence, {}};
   for (const MeasuredInjection& measured : injections) {
-    const LevelEntry* entry =
-        sequence.level_entry(measured.injection->level, settings.target.id);
-    InjectionResponse one{measured.injection, measured.peak,
-                          response_of(measured, rule), std::nullopt};
-    if (entry != nullptr) one.nominal = entry->concentration;
+    InjectionResponse one{
+        measured.injection, measured.peak, response_of(measured, rule),
+        nominal_of(*measured.injection, sequence, settings.target.id)};
     analyte.injections.push_back(std::move(one));
   }
   std::stable_sort(analyte.injections.begin(), analyte.injections.end(),
