@@ -108,10 +108,10 @@ double sharpened_apex(const SmoothedStretch& stretch, double apex,
   whole.minutes = stretch.minutes;
   whole.signal = stretch.signal;
   const Trace top = cut_trace(whole, apex - reach, apex + reach);
-  const int points = smoothing_length({}, 0.25 * width_half_minutes,
+  const int points = smoothing_length({}, 0.5 * width_half_minutes,
                                       typical_step(top.minutes));
   const std::vector<double> smoothed =
-      savitzky_golay(top.minutes, top.signal, points, 2, 0);
+      savitzky_golay(top.minutes, top.signal, points, 4, 0);
   const auto i = static_cast<std::size_t>(
       std::max_element(smoothed.begin(), smoothed.end()) - smoothed.begin());
   if (i == 0 || i + 1 >= smoothed.size()) return apex;

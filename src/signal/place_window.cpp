@@ -13,6 +13,11 @@ namespace {
 
 constexpr std::size_t kLeastAnchorPoints = 5;
 constexpr std::size_t kFewestAnchorPoints = 2;
+// Feet stand where a thousandth of the height is left; a neighbour of the same
+// shape is down to a hundredth at this share of their distance.
+constexpr double kFlankShare = 0.8;
+// Four standard deviations of a Gaussian, in widths at half height.
+constexpr double kClearWidths = 1.7;
 
 // One side is worked out in distances from the apex, outwards positive, so
 // that left and right are one piece of code.
@@ -32,12 +37,12 @@ class Side {
       const double edge = flank_begin(valley, summit);
       limit = std::min(limit, edge);
       if (points_between(anchor_from, edge) >= kFewestAnchorPoints) break;
-      if (edge < end && anchor_from == end) {
-        foot.dropped = valley < end;
+      if (edge < end && !foot.crowded) {
+        foot.dropped = true;
         end = std::min(end, valley);
       }
       foot.crowded = true;
-      anchor_from = summit + length();
+      anchor_from = summit + clear_distance();
       limit = reach();
       inner = summit;
     }
@@ -48,6 +53,10 @@ class Side {
 
  private:
   double length() const { return left_ ? placement_.left : placement_.right; }
+  // A foot that is itself a valley says nothing of where a neighbour ends.
+  double clear_distance() const {
+    return std::max(length(), kClearWidths * placement_.width_half);
+  }
   double at(double distance) const {
     return placement_.apex + (left_ ? -distance : distance);
   }
@@ -79,15 +88,17 @@ class Side {
     return distance(lowest_between(stretch_, std::min(a, b), std::max(a, b)));
   }
 
-  // Inwards from a neighbour's apex to where it has come down to the valley.
+  // Where a neighbour's flank begins: at most where it would by the template,
+  // mirrored; further in where its signal is not yet down to the valley.
   double flank_begin(double valley, double summit) const {
+    const double mirrored = left_ ? placement_.right : placement_.left;
     const double low = smoothed(valley);
     const double level = std::max(2.0 * stretch_.gain * placement_.noise,
                                   0.005 * (smoothed(summit) - low));
     const double step = 0.05 * placement_.width_half;
     double out = summit;
     while (out - step > valley && smoothed(out) - low > level) out -= step;
-    return out;
+    return std::min(out, summit - kFlankShare * mirrored);
   }
 
   // Points [first, last) with a distance in [from, to).

@@ -42,8 +42,10 @@ double as_digitised(const SimulatedTrace& wanted, double signal) {
 double scaled_complementary_error(double z) {
   if (z < 25.0) return std::exp(z * z) * std::erfc(z);
   const double u = 1.0 / (2.0 * z * z);
-  const double series =
-      1.0 - u * (1.0 - 3.0 * u * (1.0 - 5.0 * u * (1.0 - 7.0 * u)));
+  double series = 1.0;
+  for (const double k : {11.0, 9.0, 7.0, 5.0, 3.0, 1.0}) {
+    series = 1.0 - k * u * series;
+  }
   return series * std::numbers::inv_sqrtpi_v<double> / z;
 }
 

@@ -56,10 +56,10 @@ struct ParabolaApex {
 std::optional<ParabolaApex> parabola_apex(const double (&minutes)[3],
                                           const double (&signal)[3]);
 
-/// The same apex found again with less smoothing (a quarter of the width at
-/// half height; the three highest points themselves where that is no more than
-/// 3 points), for peaks so high that noise does not move it: strong smoothing
-/// shifts the apex of a tailing peak by some hundredths of its width.
+/// The same apex found again with less smoothing (order 4 over half a width at
+/// half height; none where that is 4 points or fewer), for peaks so high that
+/// noise does not move it: strong smoothing shifts the apex of a tailing peak
+/// by some hundredths of its width.
 double sharpened_apex(const SmoothedStretch& stretch, double apex,
                       double width_half_minutes);
 

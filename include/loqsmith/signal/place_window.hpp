@@ -55,10 +55,10 @@ struct PlacedWindow {
 /// over half a width at half height and at least 5 points, but not onto a
 /// neighbour's flank. A neighbour whose flank begins inside the window bounds
 /// it at the valley (perpendicular drop); the baseline then runs on below the
-/// neighbour to the first free stretch beyond it, at the same distance from
-/// the neighbour's apex as the foot has from ours. With no free stretch on one
-/// side the baseline is level with the other side; with none on either it goes
-/// through the valleys.
+/// neighbour to the first free stretch beyond it, as far from the neighbour's
+/// apex as the foot is from ours (at least 1.7 widths at half height). With no
+/// free stretch on one side the baseline is level with the other side; with
+/// none on either it goes through the valleys.
 ///
 /// @param neighbours  summits that count as peaks, in order of time; those
 ///                    nearer to the apex than half a width (three quarters

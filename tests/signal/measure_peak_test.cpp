@@ -1,0 +1,311 @@
+#include "loqsmith/signal/measure_peak.hpp"
+
+#include <gtest/gtest.h>
+
+#include <cmath>
+#include <vector>
+
+#include "signal_support.hpp"
+#include "support/tolerance.hpp"
+
+namespace loqsmith {
+namespace {
+
+using test::agrees_to_digits;
+using test::begins_with;
+using test::gaussian_of_height;
+using test::has_reason;
+using test::no_noise;
+using test::same_bits;
+using test::simulate_trace;
+using test::SimulatedTrace;
+using test::target_at;
+using test::window_of;
+using test::within_condition;
+
+const WindowTemplate kWindow = window_of(0.19, 0.19, 0.1177);
+
+SimulatedTrace sample(double height, double noise = 1.0) {
+  SimulatedTrace wanted;
+  wanted.white_noise = noise;
+  if (height > 0.0) wanted.peaks = {gaussian_of_height(5.0, 0.05, height)};
+  return wanted;
+}
+
+Outcome<NoiseEstimate> blank_noise() {
+  return measure_noise(simulate_trace(sample(0.0), "the blank"), 5.0, 0.1177,
+                       {});
+}
+
+Outcome<Peak> measured(const Trace& trace,
+                       const TargetSettings& target = target_at(5.0),
+                       const WindowTemplate& window = kWindow) {
+  return measure_peak(trace, target, window, target.retention_minutes,
+                      blank_noise(), "blank 2");
+}
+
+Outcome<Peak> measured(const SimulatedTrace& wanted, const std::string& name) {
+  return measured(simulate_trace(wanted, name));
+}
+
+TEST(MeasurePeak, FindsAndMeasuresAPeak) {
+  const auto peak = measured(sample(400.0), "peak");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(peak->found);
+  EXPECT_TRUE(agrees_to_digits(peak->retention_minutes, 5.0, 3));
+  EXPECT_TRUE(agrees_to_digits(peak->area, 50.13, 2));
+  EXPECT_TRUE(peak->width_half_minutes && peak->plates && peak->tailing);
+  EXPECT_EQ(peak->noise_source, "blank 2");
+  EXPECT_EQ(peak->overlap, "");
+  ASSERT_TRUE(peak->signal_to_noise && peak->noise);
+  EXPECT_TRUE(within_condition(*peak->signal_to_noise,
+                               2.0 * peak->height / *peak->noise, 4.0));
+  EXPECT_TRUE(peak->reasons.empty());
+}
+
+TEST(MeasurePeak, ABlankIsMeasuredAtTheExpectedTime) {
+  const auto peak = measured(sample(0.0), "blank");
+  ASSERT_TRUE(peak);
+  EXPECT_FALSE(peak->found);
+  EXPECT_EQ(peak->retention_minutes, 5.0);
+  EXPECT_TRUE(within_condition(peak->start_minutes, 4.81, 4.0));
+  EXPECT_TRUE(within_condition(peak->end_minutes, 5.19, 4.0));
+  EXPECT_FALSE(peak->width_half_minutes);
+  EXPECT_FALSE(peak->signal_to_noise);
+  EXPECT_TRUE(peak->response_noise);
+}
+
+TEST(MeasurePeak, TheWindowIsAsLongForEveryHeight) {
+  for (const double height : {0.0, 2.0, 4.0, 30.0, 1000.0}) {
+    const auto peak = measured(sample(height), "any height");
+    ASSERT_TRUE(peak);
+    EXPECT_TRUE(
+        within_condition(peak->end_minutes - peak->start_minutes, 0.38, 40.0));
+    EXPECT_TRUE(within_condition(peak->retention_minutes - peak->start_minutes,
+                                 0.19, 100.0));
+  }
+}
+
+TEST(MeasurePeak, OfTwoTheNearestIsTakenWithAReason) {
+  SimulatedTrace wanted = sample(40.0);
+  wanted.peaks.push_back(gaussian_of_height(5.5, 0.05, 400.0));
+  const auto peak =
+      measured(simulate_trace(wanted, "two"), target_at(5.05, 0.6));
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "several-peaks"));
+  EXPECT_LT(std::abs(peak->retention_minutes - 5.0), 0.02);
+}
+
+TEST(MeasurePeak, ASpikeIsNoPeakButIsSaid) {
+  Trace trace = simulate_trace(sample(0.0), "spike");
+  trace.signal[500] += 60.0;
+  const auto peak = measured(trace);
+  ASSERT_TRUE(peak);
+  EXPECT_FALSE(peak->found);
+  EXPECT_TRUE(has_reason(*peak, "spike"));
+}
+
+TEST(MeasurePeak, AFlatTopIsSaturated) {
+  SimulatedTrace wanted = sample(300.0);
+  wanted.ceiling = 240.0;
+  const auto peak = measured(wanted, "clipped");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(peak->found);
+  EXPECT_TRUE(has_reason(*peak, "saturated"));
+  EXPECT_FALSE(has_reason(*measured(sample(300.0), "whole"), "saturated"));
+}
+
+TEST(MeasurePeak, FewPointsAreSaidAndTooFewGiveNoNumber) {
+  SimulatedTrace wanted = sample(300.0);
+  wanted.step_minutes = 0.05;  // 7 or 8 points in 0.38 minutes
+  const auto few = measured(wanted, "few");
+  ASSERT_TRUE(few);
+  EXPECT_TRUE(few->found);
+  EXPECT_TRUE(has_reason(*few, "few-points"));
+  wanted.step_minutes = 0.1;
+  const auto too_few = measured(wanted, "too few");
+  ASSERT_FALSE(too_few);
+  EXPECT_TRUE(begins_with(too_few.reason(), "too-few-points"));
+}
+
+TEST(MeasurePeak, AWindowThatTheTraceDoesNotCover) {
+  for (const double end : {4.0, 4.9, 5.1, 5.185}) {
+    SimulatedTrace wanted = sample(300.0);
+    wanted.end_minutes = end;
+    const auto peak = measured(wanted, "cut short");
+    ASSERT_FALSE(peak) << end;
+    EXPECT_TRUE(begins_with(peak.reason(), "window-not-covered"));
+  }
+  SimulatedTrace late = sample(300.0);
+  late.start_minutes = 4.9;
+  ASSERT_FALSE(measured(late, "late"));
+}
+
+TEST(MeasurePeak, ATraceThatEndsSoonAfterTheWindowShortensTheBaseline) {
+  SimulatedTrace wanted = sample(300.0);
+  wanted.end_minutes = 5.22;
+  const auto peak = measured(wanted, "nearly cut");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "baseline-shortened"));
+}
+
+TEST(MeasurePeak, NoSignal) {
+  const auto peak = measured(Trace{});
+  ASSERT_FALSE(peak);
+  EXPECT_TRUE(begins_with(peak.reason(), "no-signal"));
+}
+
+TEST(MeasurePeak, WhatThisVersionDoesNotComputeIsRefused) {
+  TargetSettings target = target_at(5.0);
+  target.integration.overlap = IntegrationSettings::Overlap::Skim;
+  const auto peak = measured(simulate_trace(sample(300.0), "skim"), target);
+  ASSERT_FALSE(peak);
+  EXPECT_TRUE(begins_with(peak.reason(), "not-available"));
+}
+
+TEST(MeasurePeak, NarrowThingsAreNoPeaksWhereAWidthIsAskedFor) {
+  TargetSettings target = target_at(5.0);
+  target.integration.minimum_width_minutes = 0.1;
+  const Trace trace = simulate_trace(sample(100.0), "width");
+  EXPECT_TRUE(measured(trace, target)->found);
+  target.integration.minimum_width_minutes = 0.15;
+  EXPECT_FALSE(measured(trace, target)->found);
+}
+
+TEST(MeasurePeak, TheThresholdDecidesWhatIsFound) {
+  TargetSettings target = target_at(5.0);
+  // Height 5 of noise 1 is some 9 deviations of the smoothed height.
+  const Trace trace = simulate_trace(sample(5.0), "threshold");
+  EXPECT_TRUE(measured(trace, target)->found);
+  target.integration.threshold = 30.0;
+  EXPECT_FALSE(measured(trace, target)->found);
+}
+
+TEST(MeasurePeak, NoiseReasonsAndWeakTemplatesArePassedOn) {
+  WindowTemplate weak = kWindow;
+  weak.weak = true;
+  Outcome<NoiseEstimate> noise = blank_noise();
+  noise.value().reasons = {"noise-from-same-trace", "noise-stretch-short"};
+  const auto peak =
+      measure_peak(simulate_trace(sample(300.0), "weak"), target_at(5.0), weak,
+                   5.0, noise, "same trace");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "weak-template"));
+  EXPECT_TRUE(has_reason(*peak, "noise-from-same-trace"));
+  EXPECT_TRUE(has_reason(*peak, "noise-stretch-short"));
+}
+
+TEST(MeasurePeak, WithoutNoiseThereIsNoRatio) {
+  const auto peak = measure_peak(simulate_trace(sample(300.0), "no noise"),
+                                 target_at(5.0), kWindow, 5.0, no_noise(), "");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(peak->found);
+  EXPECT_TRUE(has_reason(*peak, "no-noise"));
+  EXPECT_FALSE(peak->signal_to_noise);
+  EXPECT_FALSE(peak->noise);
+  EXPECT_EQ(peak->noise_source, "");
+}
+
+TEST(MeasurePeak, ZeroNoiseIsLegal) {
+  const auto noise =
+      measure_noise(simulate_trace(sample(0.0, 0.0), "silent"), 5.0, 0.1, {});
+  const auto blank =
+      measure_peak(simulate_trace(sample(0.0, 0.0), "silent"), target_at(5.0),
+                   kWindow, 5.0, noise, "blank 1");
+  ASSERT_TRUE(blank);
+  EXPECT_FALSE(blank->found);
+  EXPECT_EQ(blank->area, 0.0);
+  const auto peak =
+      measure_peak(simulate_trace(sample(3.0, 0.0), "silent"), target_at(5.0),
+                   kWindow, 5.0, noise, "blank 1");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(peak->found);
+  EXPECT_TRUE(has_reason(*peak, "noise-zero"));
+  EXPECT_FALSE(peak->signal_to_noise);
+}
+
+TEST(MeasurePeak, PointsOfNeighboursAreKeptOutOfTheBaseline) {
+  SimulatedTrace wanted = sample(100.0, 0.0);
+  wanted.peaks.push_back(gaussian_of_height(5.4, 0.05, 500.0));
+  const auto peak = measured(wanted, "near");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "baseline-shortened"));
+  EXPECT_EQ(peak->overlap, "");
+  // The few points left stand at 0.5 % of the neighbour at most.
+  EXPECT_LT(std::abs(peak->area - 12.533), 0.05 * 12.533);
+}
+
+TEST(MeasurePeak, ANeighboursValleyBoundsTheWindow) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
+  const auto peak = measured(wanted, "fused");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "overlapped"));
+  EXPECT_EQ(peak->overlap, "drop");
+  // Two equal peaks: the valley is half-way, and what one loses beyond it it
+  // gains from the other.
+  EXPECT_LT(std::abs(peak->end_minutes - 5.1), 0.006);
+  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
+}
+
+TEST(MeasurePeak, BetweenTwoNeighboursTheBaselineRunsBelowThemAll) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.offset = 50.0;
+  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
+  wanted.peaks.push_back(gaussian_of_height(4.8, 0.05, 300.0));
+  const auto peak = measured(wanted, "three");
+  ASSERT_TRUE(peak);
+  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
+  const PeakCurve curve =
+      peak_curve(simulate_trace(wanted, "three"), *peak, kWindow);
+  EXPECT_LT(std::abs(curve.baseline_start - 50.0), 1.0);
+  EXPECT_LT(std::abs(curve.baseline_end - 50.0), 1.0);
+}
+
+TEST(MeasurePeak, WithNoFreeStretchOnOneSideTheBaselineIsLevel) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
+  wanted.end_minutes = 5.36;
+  const auto peak = measured(wanted, "one side");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "baseline-one-sided"));
+  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
+  wanted.peaks.push_back(gaussian_of_height(4.8, 0.05, 300.0));
+  wanted.start_minutes = 4.64;
+  const auto both = measured(wanted, "both sides");
+  ASSERT_TRUE(both);
+  EXPECT_TRUE(has_reason(*both, "baseline-at-valley"));
+}
+
+TEST(MeasurePeak, NoiseOfTheSignalItselfMakesNoNeighbours) {
+  // A counting detector: 5 % noise on the peak, hardly any beside it.
+  SimulatedTrace wanted = sample(20000.0);
+  wanted.relative_noise = 0.05;
+  for (int i = 0; i < 20; ++i) {
+    const auto peak = measured(wanted, "counts " + std::to_string(i));
+    ASSERT_TRUE(peak);
+    EXPECT_EQ(peak->overlap, "") << i;
+    EXPECT_FALSE(has_reason(*peak, "several-peaks")) << i;
+  }
+}
+
+TEST(MeasurePeak, CurveShowsTheStretchAndItsBaseline) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.offset = 20.0;
+  wanted.drift_per_minute = 4.0;
+  const Trace trace = simulate_trace(wanted, "curve");
+  const WindowTemplate wide = window_of(0.3, 0.3, 0.1177);
+  const auto peak = measured(trace, target_at(5.0), wide);
+  ASSERT_TRUE(peak);
+  const PeakCurve curve = peak_curve(trace, *peak, wide);
+  EXPECT_EQ(curve.minutes.size(), curve.signal.size());
+  EXPECT_LT(curve.minutes.front(), peak->start_minutes - 4.0 * 0.1177 + 0.01);
+  EXPECT_GT(curve.minutes.back(), peak->end_minutes + 4.0 * 0.1177 - 0.01);
+  EXPECT_TRUE(agrees_to_digits(curve.baseline_start,
+                               20.0 + 4.0 * (peak->start_minutes - 5.0), 3));
+  EXPECT_TRUE(agrees_to_digits(curve.baseline_end,
+                               20.0 + 4.0 * (peak->end_minutes - 5.0), 3));
+}
+
+}  // namespace
+}  // namespace loqsmith
