@@ -16,29 +16,29 @@ constexpr double kFinalVolume = 5.0;  // mL
 
 struct Coating {
   const char* name;
-  double milligrams;
+  double grams;
   std::array<double, 3> in_vial;  ///< mg/L: acetone, propan-2-ol, ethanol
 };
 
 // From nothing to beyond the range (5 to 500 mg/L). C-14 is close to the
 // limits on purpose.
 constexpr std::array<Coating, 16> kCoatings{{
-    {"C-01", 501.3, {0.0, 0.0, 0.0}},
-    {"C-02", 498.7, {2.6, 0.0, 40.0}},
-    {"C-03", 503.9, {0.0, 4.0, 220.0}},
-    {"C-04", 499.2, {12.0, 30.0, 2.8}},
-    {"C-05", 500.8, {0.0, 85.0, 620.0}},
-    {"C-06", 497.5, {3.0, 0.0, 0.0}},
-    {"C-07", 502.4, {47.0, 4.2, 130.0}},
-    {"C-08", 500.1, {700.0, 0.0, 75.0}},
-    {"C-09", 499.6, {0.0, 3.8, 0.0}},
-    {"C-10", 505.0, {150.0, 12.0, 3.2}},
-    {"C-11", 496.3, {0.0, 900.0, 26.0}},
-    {"C-12", 501.7, {3.4, 0.0, 300.0}},
-    {"C-13", 500.5, {88.0, 240.0, 560.0}},
-    {"C-14", 498.1, {0.7, 2.2, 4.8}},
-    {"C-15", 502.9, {310.0, 4.0, 0.0}},
-    {"C-16", 499.9, {28.0, 60.0, 18.0}},
+    {"C-01", 0.5013, {0.0, 0.0, 0.0}},
+    {"C-02", 0.4987, {2.6, 0.0, 40.0}},
+    {"C-03", 0.5039, {0.0, 4.0, 220.0}},
+    {"C-04", 0.4992, {12.0, 30.0, 2.8}},
+    {"C-05", 0.5008, {0.0, 85.0, 620.0}},
+    {"C-06", 0.4975, {3.0, 0.0, 0.0}},
+    {"C-07", 0.5024, {47.0, 4.2, 130.0}},
+    {"C-08", 0.5001, {700.0, 0.0, 75.0}},
+    {"C-09", 0.4996, {0.0, 3.8, 0.0}},
+    {"C-10", 0.5050, {150.0, 12.0, 3.2}},
+    {"C-11", 0.4963, {0.0, 900.0, 26.0}},
+    {"C-12", 0.5017, {3.4, 0.0, 300.0}},
+    {"C-13", 0.5005, {88.0, 240.0, 560.0}},
+    {"C-14", 0.4981, {0.7, 2.2, 4.8}},
+    {"C-15", 0.5029, {310.0, 4.0, 0.0}},
+    {"C-16", 0.4999, {28.0, 60.0, 18.0}},
 }};
 
 constexpr std::array<std::pair<const char*, double>, 7> kStandards{
@@ -86,7 +86,7 @@ class Tray {
   void method_blank(const std::string& prep) {
     Vial& vial = add("method-blank", "uncoated", {0.0, 0.0, 0.0});
     vial.prep = prep;
-    vial.sample_amount = 500.0;
+    vial.sample_amount = 0.5;
     vial.final_volume = kFinalVolume;
   }
   void coating(std::size_t index, const std::string& prep,
@@ -98,7 +98,7 @@ class Tray {
     }
     Vial& vial = add("sample", from.name, std::move(in_vial));
     vial.prep = prep;
-    vial.sample_amount = from.milligrams;
+    vial.sample_amount = from.grams;
     vial.final_volume = kFinalVolume;
     vial.dilution = dilution;
     vial.internal_standard_dilution = internal_standard_dilution;
@@ -187,7 +187,6 @@ SimulatedNight tablet_coating_night() {
   night.retention_jitter_minutes = 0.001;
   night.injection_error = 0.03;
   night.peak_error = 0.004;
-  night.result_factor = 1000.0;
   night.columns = {
       "injection",     "file",         "run",      "sample",
       "role",          "level",        "dilution", "internal_standard_dilution",
