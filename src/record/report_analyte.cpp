@@ -107,7 +107,7 @@ void set_limits(std::ostream& out, const AnalyteJudgement& analyte,
     out << "<p class=\"reading\">Each row is a procedure: <span "
            "class=\"key\">\xE2\x97\x8B</span> its detection limit, <span "
            "class=\"key\">\xE2\x97\x86</span> its quantitation limit, with "
-           "95 % bounds where they are known; pale marks are not valid. The "
+           "95 % bounds where they are known; dashed ones are not valid. The "
            "upright lines are the limits that govern. Between them a result "
            "is an estimate. Strokes are the standards' levels, dots the "
            "samples.</p>\n";

@@ -120,7 +120,8 @@ stroke-width:1}
 .figure .bounds{stroke:var(--soft);stroke-width:1.2}
 .figure .detection{fill:var(--paper);stroke:var(--curve);stroke-width:2.2}
 .figure .quantitation{fill:var(--curve);stroke:var(--paper)}
-.figure .invalid{opacity:.42}
+.figure .invalid{fill:var(--paper);stroke:var(--curve);stroke-width:1.6;
+stroke-dasharray:2.5 2}
 .figure .between{fill:var(--band)}
 .figure .rule-detection,.figure .rule-quantitation{stroke:var(--estimated);
 stroke-width:1.4}
