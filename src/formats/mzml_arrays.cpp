@@ -64,7 +64,8 @@ class ArraysReader {
     }
     if (*value < 0) {
       throw WholeFileError(source_.problem(
-          node.offset, std::string(name) + " " + *text, "a number from 0 up"));
+          node.offset, std::string(name) + " " + in_quotes(*text),
+          "a number from 0 up"));
     }
     return static_cast<std::size_t>(*value);
   }
@@ -107,9 +108,11 @@ class ArraysReader {
   }
 
   static std::string list_of(const Described& array) {
+    constexpr std::size_t kMostShown = 10;
     std::vector<std::string> accessions;
     for (const CvParam& param : array.params) {
-      accessions.push_back(param.accession);
+      accessions.push_back(in_quotes(param.accession));
+      if (accessions.size() == kMostShown) break;
     }
     return accessions.empty() ? "no terms" : join(accessions, ", ");
   }

@@ -78,15 +78,18 @@ void MzmlIndexCheck::check_list(std::string_view position) {
   list_wrong_ = !points_at(position, "indexList", nullptr);
 }
 
-void MzmlIndexCheck::report(Notes& notes) const {
+std::vector<std::string> MzmlIndexCheck::warnings() const {
+  std::vector<std::string> found;
   if (wrong_ > 0) {
-    notes.add("index: " + std::to_string(wrong_) + " of " +
-              std::to_string(entries_) +
-              " offsets do not point at their elements (not used)");
+    found.push_back("index: " + std::to_string(wrong_) + " of " +
+                    std::to_string(entries_) +
+                    " offsets do not point at their elements (not used)");
   }
   if (list_wrong_) {
-    notes.add("indexListOffset does not point at the index (not used)");
+    found.emplace_back(
+        "indexListOffset does not point at the index (not used)");
   }
+  return found;
 }
 
 }  // namespace loqsmith

@@ -24,6 +24,11 @@ std::string lower_hex(std::string_view text) {
   return result;
 }
 
+void append(std::vector<std::string>& list,
+            const std::vector<std::string>& more) {
+  list.insert(list.end(), more.begin(), more.end());
+}
+
 class MzmlReader {
  public:
   MzmlReader(std::string_view bytes, std::string_view original,
@@ -38,6 +43,8 @@ class MzmlReader {
     scan_.require_whole();
     check_integrity();
     check_start_time();
+    append(contents_.warnings, index_.warnings());
+    append(contents_.warnings, scan_.notes().all());
     contents_.format = scan_.indexed() ? "indexed mzML 1.1" : "mzML 1.1";
     contents_.runs.push_back(*scan_.run());
     if (scan_.spectra() > 0) {
@@ -48,7 +55,6 @@ class MzmlReader {
     for (MzmlChromatogram& chromatogram : scan_.chromatograms()) {
       take(chromatogram, wanted);
     }
-    contents_.warnings = scan_.notes().all();
     return std::move(contents_);
   }
 
@@ -57,7 +63,7 @@ class MzmlReader {
   // damage, not tampering.
   void check_integrity() {
     if (!scan_.checksum()) {
-      scan_.notes().add("no integrity value in the file");
+      contents_.warnings.emplace_back("no integrity value in the file");
       return;
     }
     const std::string_view stated = trim(*scan_.checksum());
@@ -70,7 +76,8 @@ class MzmlReader {
           scan_.checksum_begin(), found, computed,
           "the file was damaged or edited: copy or export it again"));
     }
-    scan_.notes().add(found + " is wrong, the bytes give " + computed);
+    contents_.warnings.push_back(found + " is wrong, the bytes give " +
+                                 computed);
   }
 
   // Converted characters took one byte each before.
@@ -88,9 +95,11 @@ class MzmlReader {
     if (written.empty()) return;
     const auto moment = parse_moment(written);
     if (!moment) {
-      scan_.notes().add("start time " + in_quotes(written) + " is no date");
+      contents_.warnings.push_back("start time " + in_quotes(written) +
+                                   " is no date");
     } else if (!moment->has_zone) {
-      scan_.notes().add("start time " + written + ": zone not stated");
+      contents_.warnings.push_back("start time " + written +
+                                   ": zone not stated");
     }
   }
 
@@ -137,9 +146,7 @@ class MzmlReader {
                                        std::move(fault->found),
                                        std::move(fault->expected)));
     }
-    for (std::string& warning : point_warnings(trace)) {
-      trace.warnings.push_back(std::move(warning));
-    }
+    append(trace.warnings, point_warnings(trace));
     return trace;
   }
 

@@ -13,7 +13,9 @@ namespace {
 constexpr std::size_t kMostOfAText = 4096;
 
 std::string tag(std::string_view name) {
-  return "<" + std::string(name.substr(0, 60)) + ">";
+  constexpr std::size_t kMostOfAName = 60;
+  if (name.size() > kMostOfAName) return in_quotes(name);
+  return "<" + std::string(name) + ">";
 }
 
 }  // namespace
@@ -85,7 +87,6 @@ void MzmlScan::require_whole() {
            "a checksum at its end",
            "the document is incomplete: copy or export the file again");
   }
-  index_.report(notes_);
 }
 
 void MzmlScan::check_root(const XmlStart& start) {

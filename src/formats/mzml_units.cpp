@@ -23,8 +23,8 @@ void warn_of_disagreement(const CvParam& kind, const std::string& array,
       kind.unit_accession.substr(0, kind.unit_accession.find(':'));
   const bool usual_label = kind.unit_cv == "MS" || kind.unit_cv == "UO";
   if (usual_label && kind.unit_cv != prefix) {
-    warnings.push_back("unit " + kind.unit_accession + " of the " + array +
-                       " refers to the vocabulary " + kind.unit_cv);
+    warnings.push_back("unit " + in_quotes(kind.unit_accession) + " of the " +
+                       array + " refers to the vocabulary " + kind.unit_cv);
   }
 }
 
@@ -59,7 +59,7 @@ void read_time_unit(const CvParam& kind, MzmlSource& source,
   const auto unit = time_unit(accession);
   if (!unit) {
     throw InputError(source.problem(
-        kind.offset, "the unit " + accession + " on the time array",
+        kind.offset, "the unit " + in_quotes(accession) + " on the time array",
         "UO:0000031 (minute) or UO:0000010 (second)"));
   }
   result.unit = *unit;
@@ -81,7 +81,7 @@ void read_signal_unit(const CvParam& kind, MzmlSource& source,
   } else {
     result.header.signal_unit =
         kind.unit_name.empty() ? kind.unit_accession : kind.unit_name;
-    result.warnings.push_back("unknown unit " + kind.unit_accession +
+    result.warnings.push_back("unknown unit " + in_quotes(kind.unit_accession) +
                               " of the signal array, taken as written");
   }
 }

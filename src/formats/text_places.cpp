@@ -1,15 +1,18 @@
 #include "loqsmith/formats/text_places.hpp"
 
+#include <algorithm>
+
 namespace loqsmith {
 namespace {
 
 // The place `between` behind the place `start`.
 TextPlace step(TextPlace start, std::string_view between) {
-  const TextPlace relative = line_column(between, between.size());
-  if (relative.line == 1) {
-    return {start.line, start.column + relative.column - 1};
+  const std::size_t last = between.rfind('\n');
+  if (last == std::string_view::npos) {
+    return {start.line, start.column + between.size()};
   }
-  return {start.line + relative.line - 1, relative.column};
+  const auto lines = std::count(between.begin(), between.end(), '\n');
+  return {start.line + static_cast<std::size_t>(lines), between.size() - last};
 }
 
 }  // namespace

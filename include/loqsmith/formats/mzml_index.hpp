@@ -3,8 +3,7 @@
 #include <cstddef>
 #include <string>
 #include <string_view>
-
-#include "loqsmith/formats/notes.hpp"
+#include <vector>
 
 namespace loqsmith {
 
@@ -25,7 +24,8 @@ class MzmlIndexCheck {
   /// The text of <indexListOffset>.
   void check_list(std::string_view position);
 
-  void report(Notes& notes) const;
+  /// What is wrong, in a sentence or two; nothing where all is well.
+  std::vector<std::string> warnings() const;
 
  private:
   bool points_at(std::string_view position, std::string_view element,
