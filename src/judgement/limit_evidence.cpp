@@ -123,6 +123,18 @@ std::optional<double> noise_near_the_lowest(const MeasuredAnalyte& analyte) {
   return median(std::move(noises));
 }
 
+NoiseMeasure noise_measure(NoiseSettings::Measure measure) {
+  switch (measure) {
+    case NoiseSettings::Measure::HalfPeakToPeak:
+      return NoiseMeasure::HalfPeakToPeak;
+    case NoiseSettings::Measure::PeakToPeak:
+      return NoiseMeasure::PeakToPeak;
+    case NoiseSettings::Measure::StandardDeviation:
+      return NoiseMeasure::StandardDeviation;
+  }
+  return NoiseMeasure::HalfPeakToPeak;
+}
+
 }  // namespace
 
 LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
@@ -145,7 +157,7 @@ LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
   }
   evidence.calibration = calibration;
   evidence.noise = noise_near_the_lowest(analyte);
-  evidence.noise_measure = target.noise.measure;
+  evidence.noise_measure = noise_measure(target.noise.measure);
   evidence.bounds_own =
       target.integration.bounds == IntegrationSettings::Bounds::Own;
   evidence.baseline_biased =

@@ -11,7 +11,7 @@
 namespace loqsmith {
 namespace {
 
-using Measure = NoiseSettings::Measure;
+using Measure = NoiseMeasure;
 
 constexpr const char* kHeight = "height";
 constexpr double kRange = 10.0 * (1.0 + 1e-9);  // times the lowest

@@ -6,7 +6,7 @@
 namespace loqsmith::test {
 namespace {
 
-using Measure = NoiseSettings::Measure;
+using Measure = NoiseMeasure;
 
 LimitEvidence heights(const std::vector<std::pair<double, double>>& pairs,
                       double noise, Measure measure = Measure::HalfPeakToPeak) {

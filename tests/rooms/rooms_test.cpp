@@ -27,9 +27,7 @@ const std::map<std::string, Names>& knows() {
         {"formats", {"base", "chromatogram"}},
         {"signal", {"base", "numerics", "chromatogram"}},
         {"calibration", {"base", "numerics", "chromatogram"}},
-        // limits reads the measure of <noise> from signal's settings.
-        {"limits",
-         {"base", "numerics", "chromatogram", "calibration", "signal"}},
+        {"limits", {"base", "numerics", "chromatogram", "calibration"}},
         {"ledger", {"base"}},
     };
     map["judgement"] = kComputing;

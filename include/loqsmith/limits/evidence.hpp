@@ -7,7 +7,6 @@
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/calibration/calibration.hpp"
 #include "loqsmith/limits/settings.hpp"
-#include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
 
@@ -35,6 +34,9 @@ struct StandardHeight {
   double height = 0.0;
 };
 
+/// What the noise figure is, and so what S/N means: 2H/h, H/h or H/sd.
+enum class NoiseMeasure { HalfPeakToPeak, PeakToPeak, StandardDeviation };
+
 /// Everything that is known of one analyte in one calibration set.
 struct LimitEvidence {
   std::vector<BlankResponse> blanks;  ///< in run order
@@ -44,7 +46,7 @@ struct LimitEvidence {
   /// Noise in height units as the measure defines it (h, or sd), median over
   /// the sources used for the lowest standards; nothing: not measured.
   std::optional<double> noise;
-  NoiseSettings::Measure noise_measure = NoiseSettings::Measure::HalfPeakToPeak;
+  NoiseMeasure noise_measure = NoiseMeasure::HalfPeakToPeak;
   bool bounds_own = false;       ///< integration bounds="own"
   bool baseline_biased = false;  ///< asymmetric least squares or snip
   /// The carry-over check is present and passed.
