@@ -105,28 +105,22 @@ std::string_view XmlCursor::take_name(const std::string& what) {
 }
 
 void XmlCursor::take_reference() {
-  constexpr std::size_t kLongest = 12;
+  constexpr std::string_view kLetters =
+      "#0123456789ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz";
   const std::size_t start = offset_;
-  const std::size_t end = bytes_.substr(start, kLongest).find(';');
+  const std::size_t end = bytes_.find_first_not_of(kLetters, start + 1);
   if (end == std::string_view::npos) {
-    if (bytes_.size() - start < kLongest) {
-      const std::string_view rest = bytes_.substr(start + 1);
-      if (std::none_of(rest.begin(), rest.end(), is_xml_blank) &&
-          rest.find_first_of("<&") == std::string_view::npos) {
-        fail_incomplete("the end of a reference");
-      }
-    }
-    fail(start, "a bare \"&\"", "a reference such as \"&amp;\"");
+    fail_incomplete("the end of a reference");
   }
-  const std::string_view name = bytes_.substr(start + 1, end - 1);
+  const std::string_view name = bytes_.substr(start + 1, end - start - 1);
   const bool legal =
       name.starts_with('#') ? is_legal_number(name) : is_built_in_entity(name);
-  if (!legal) {
-    fail(start, in_quotes(bytes_.substr(start, end + 1)),
+  if (!legal || bytes_[end] != ';') {
+    fail(start, in_quotes(bytes_.substr(start, end - start + 1)),
          "one of &lt; &gt; &amp; &apos; &quot; or a reference to a legal "
          "character");
   }
-  offset_ = start + end + 1;
+  offset_ = end + 1;
 }
 
 void XmlCursor::take_character() {

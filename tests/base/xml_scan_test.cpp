@@ -47,6 +47,9 @@ std::vector<Refusal> refusals() {
       {"NoBlankBetween", "<a b='1'c='2'/>", 1, 9, "a blank"},
       {"LessThanInValue", "<a b='x<y'/>", 1, 8, "&lt;"},
       {"BareAmpersand", "<a>x & y</a>", 1, 6, "&amp;"},
+      {"AmpersandBeforeSemicolon", "<a>x & y;</a>", 1, 6, "&amp;"},
+      {"ReferenceOpen", "<a>&amp</a>", 1, 4, "&amp<"},
+      {"ReferenceBySignedNumber", "<a>&#-5;</a>", 1, 4, "&#-"},
       {"UnknownEntity", "<a>&nbsp;</a>", 1, 4, "&nbsp;"},
       {"UnknownEntityInValue", "<a b='&x;'/>", 1, 7, "&x;"},
       {"ReferenceToNul", "<a>&#0;</a>", 1, 4, "&#0;"},
@@ -146,7 +149,9 @@ TEST(XmlScan, AcceptsWhatTheStandardsAllow) {
       "<?xml version='1.0' encoding='Us-Ascii'?><a b='1'>x</a>",
       "<?xml version='1.0' encoding='iso-8859-1'?><a b='\xB5'>\xE9</a>",
       "<!-- before --><a b='1' c=\"it's\" d='say \"so\"' e = 'x'/>",
-      "<a b='&lt;&#65;&#x1F600;&quot;'>&gt;&amp;&apos;]] ></a>",
+      "<a "
+      "b='&#x0000000000000000000000041;&lt;&#65;&#x1F600;&quot;'>&gt;&amp;&"
+      "apos;]] ></a>",
       "<a><![CDATA[<b>&nothing;]]]]></a>",
       "<a><?b?><?c d?><!----><!-- - --></a>",
       "<\xC3\xA9t\xC3\xA9 \xCE\xBC='\xE2\x82\xAC'>\xF0\x9F\x98\x80</"
