@@ -136,10 +136,40 @@ void count_results(const PublishedRun& run, ProcessOutcome& outcome) {
   }
 }
 
+// "3, 5-9": run order numbers, neighbours drawn together.
+std::string number_ranges(const std::vector<int>& numbers) {
+  std::string text;
+  for (std::size_t i = 0; i < numbers.size();) {
+    std::size_t last = i;
+    while (last + 1 < numbers.size() &&
+           numbers[last + 1] == numbers[last] + 1) {
+      ++last;
+    }
+    text += (text.empty() ? "" : ", ") + std::to_string(numbers[i]);
+    if (last > i) text += "-" + std::to_string(numbers[last]);
+    i = last + 1;
+  }
+  return text;
+}
+
+// One sentence a problem, however many injections it costs.
 void describe_problems(const PublishedRun& run, ProcessOutcome& outcome) {
+  std::vector<std::pair<std::string, std::vector<int>>> grouped;
   for (const auto& [injection, problem] : run.problems) {
-    outcome.messages.push_back("injection " + std::to_string(injection) + ": " +
-                               describe(problem));
+    const std::string text = describe(problem);
+    const auto same =
+        std::find_if(grouped.begin(), grouped.end(),
+                     [&](const auto& entry) { return entry.first == text; });
+    if (same == grouped.end()) {
+      grouped.push_back({text, {injection}});
+    } else {
+      same->second.push_back(injection);
+    }
+  }
+  for (const auto& [text, injections] : grouped) {
+    outcome.messages.push_back(
+        text + (injections.size() == 1 ? " (injection " : " (injections ") +
+        number_ranges(injections) + ")");
   }
 }
 
