@@ -44,21 +44,25 @@ inline ChildEnd wait_for(pid_t child) {
   return {false, WEXITSTATUS(status)};
 }
 
-/// How a process is killed.
+/// How a process is killed: before its n-th file operation, counted from 1 and
+/// without reads, which change nothing; or, torn, after the first 20 bytes of
+/// its n-th write.
 struct Kill {
-  int operation = 0;  ///< before this file operation, counted from 1
-  /// The operation still begins: where it writes, these bytes get written, and
-  /// the kill comes before the next one.
+  int operation = 0;
   bool torn = false;
 };
 
 inline FileHook killing_hook(Kill kill) {
   int count = 0;
-  return [kill, count](FileOperation, const std::filesystem::path&) mutable {
-    ++count;
-    if (count == kill.operation + (kill.torn ? 1 : 0)) ::raise(SIGKILL);
+  return [kill, count](FileOperation operation,
+                       const std::filesystem::path&) mutable {
     FileFault fault;
-    if (count == kill.operation) fault.most_bytes = 20;
+    if (operation == FileOperation::Read) return fault;
+    if (kill.torn && count == kill.operation) ::raise(SIGKILL);
+    if (!kill.torn || operation == FileOperation::Write) ++count;
+    if (count != kill.operation) return fault;
+    if (!kill.torn) ::raise(SIGKILL);
+    fault.most_bytes = 20;
     return fault;
   };
 }

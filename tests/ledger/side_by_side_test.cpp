@@ -48,8 +48,10 @@ TEST(SideBySide, ProcessesPublishDifferentSequencesIntoOneOut) {
   std::vector<pid_t> children;
   for (int i = 0; i < kProcesses; ++i) {
     children.push_back(start_child([&] {
+      PublicationPlace place = place_at(out);
+      place.wait = std::chrono::seconds{60};
       for (int run = 0; run < kRuns; ++run) {
-        publish_run(place_at(out), "s" + std::to_string(i));
+        publish_run(place, "s" + std::to_string(i));
       }
     }));
   }
