@@ -16,7 +16,6 @@ using test::begins_with;
 using test::gaussian_of_height;
 using test::has_reason;
 using test::no_noise;
-using test::same_bits;
 using test::simulate_trace;
 using test::SimulatedTrace;
 using test::target_at;
@@ -222,71 +221,6 @@ TEST(MeasurePeak, ZeroNoiseIsLegal) {
   EXPECT_TRUE(peak->found);
   EXPECT_TRUE(has_reason(*peak, "noise-zero"));
   EXPECT_FALSE(peak->signal_to_noise);
-}
-
-TEST(MeasurePeak, PointsOfNeighboursAreKeptOutOfTheBaseline) {
-  SimulatedTrace wanted = sample(100.0, 0.0);
-  wanted.peaks.push_back(gaussian_of_height(5.4, 0.05, 500.0));
-  const auto peak = measured(wanted, "near");
-  ASSERT_TRUE(peak);
-  EXPECT_TRUE(has_reason(*peak, "baseline-shortened"));
-  EXPECT_EQ(peak->overlap, "");
-  // The few points left stand at 0.5 % of the neighbour at most.
-  EXPECT_LT(std::abs(peak->area - 12.533), 0.05 * 12.533);
-}
-
-TEST(MeasurePeak, ANeighboursValleyBoundsTheWindow) {
-  SimulatedTrace wanted = sample(300.0, 0.0);
-  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
-  const auto peak = measured(wanted, "fused");
-  ASSERT_TRUE(peak);
-  EXPECT_TRUE(has_reason(*peak, "overlapped"));
-  EXPECT_EQ(peak->overlap, "drop");
-  // Two equal peaks: the valley is half-way, and what one loses beyond it it
-  // gains from the other.
-  EXPECT_LT(std::abs(peak->end_minutes - 5.1), 0.006);
-  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
-}
-
-TEST(MeasurePeak, BetweenTwoNeighboursTheBaselineRunsBelowThemAll) {
-  SimulatedTrace wanted = sample(300.0, 0.0);
-  wanted.offset = 50.0;
-  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
-  wanted.peaks.push_back(gaussian_of_height(4.8, 0.05, 300.0));
-  const auto peak = measured(wanted, "three");
-  ASSERT_TRUE(peak);
-  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
-  const PeakCurve curve =
-      peak_curve(simulate_trace(wanted, "three"), *peak, kWindow);
-  EXPECT_LT(std::abs(curve.baseline_start - 50.0), 1.0);
-  EXPECT_LT(std::abs(curve.baseline_end - 50.0), 1.0);
-}
-
-TEST(MeasurePeak, WithNoFreeStretchOnOneSideTheBaselineIsLevel) {
-  SimulatedTrace wanted = sample(300.0, 0.0);
-  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
-  wanted.end_minutes = 5.36;
-  const auto peak = measured(wanted, "one side");
-  ASSERT_TRUE(peak);
-  EXPECT_TRUE(has_reason(*peak, "baseline-one-sided"));
-  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
-  wanted.peaks.push_back(gaussian_of_height(4.8, 0.05, 300.0));
-  wanted.start_minutes = 4.64;
-  const auto both = measured(wanted, "both sides");
-  ASSERT_TRUE(both);
-  EXPECT_TRUE(has_reason(*both, "baseline-at-valley"));
-}
-
-TEST(MeasurePeak, NoiseOfTheSignalItselfMakesNoNeighbours) {
-  // A counting detector: 5 % noise on the peak, hardly any beside it.
-  SimulatedTrace wanted = sample(20000.0);
-  wanted.relative_noise = 0.05;
-  for (int i = 0; i < 20; ++i) {
-    const auto peak = measured(wanted, "counts " + std::to_string(i));
-    ASSERT_TRUE(peak);
-    EXPECT_EQ(peak->overlap, "") << i;
-    EXPECT_FALSE(has_reason(*peak, "several-peaks")) << i;
-  }
 }
 
 TEST(MeasurePeak, CurveShowsTheStretchAndItsBaseline) {

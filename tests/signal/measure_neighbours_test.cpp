@@ -1,0 +1,110 @@
+#include <gtest/gtest.h>
+
+#include <cmath>
+#include <vector>
+
+#include "loqsmith/signal/measure_peak.hpp"
+#include "signal_support.hpp"
+
+namespace loqsmith {
+namespace {
+
+using test::gaussian_of_height;
+using test::has_reason;
+using test::simulate_trace;
+using test::SimulatedTrace;
+using test::target_at;
+using test::window_of;
+
+const WindowTemplate kWindow = window_of(0.19, 0.19, 0.1177);
+
+SimulatedTrace sample(double height, double noise = 1.0) {
+  SimulatedTrace wanted;
+  wanted.white_noise = noise;
+  if (height > 0.0) wanted.peaks = {gaussian_of_height(5.0, 0.05, height)};
+  return wanted;
+}
+
+Outcome<NoiseEstimate> blank_noise() {
+  return measure_noise(simulate_trace(sample(0.0), "the blank"), 5.0, 0.1177,
+                       {});
+}
+
+Outcome<Peak> measured(const Trace& trace,
+                       const TargetSettings& target = target_at(5.0),
+                       const WindowTemplate& window = kWindow) {
+  return measure_peak(trace, target, window, target.retention_minutes,
+                      blank_noise(), "blank 2");
+}
+
+Outcome<Peak> measured(const SimulatedTrace& wanted, const std::string& name) {
+  return measured(simulate_trace(wanted, name));
+}
+
+TEST(MeasureNeighbours, PointsOfNeighboursAreKeptOutOfTheBaseline) {
+  SimulatedTrace wanted = sample(100.0, 0.0);
+  wanted.peaks.push_back(gaussian_of_height(5.4, 0.05, 500.0));
+  const auto peak = measured(wanted, "near");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "baseline-shortened"));
+  EXPECT_EQ(peak->overlap, "");
+  // The few points left stand at 0.5 % of the neighbour at most.
+  EXPECT_LT(std::abs(peak->area - 12.533), 0.05 * 12.533);
+}
+
+TEST(MeasureNeighbours, ANeighboursValleyBoundsTheWindow) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
+  const auto peak = measured(wanted, "fused");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "overlapped"));
+  EXPECT_EQ(peak->overlap, "drop");
+  // Two equal peaks: the valley is half-way, and what one loses beyond it it
+  // gains from the other.
+  EXPECT_LT(std::abs(peak->end_minutes - 5.1), 0.006);
+  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
+}
+
+TEST(MeasureNeighbours, BetweenTwoNeighboursTheBaselineRunsBelowThemAll) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.offset = 50.0;
+  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
+  wanted.peaks.push_back(gaussian_of_height(4.8, 0.05, 300.0));
+  const auto peak = measured(wanted, "three");
+  ASSERT_TRUE(peak);
+  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
+  const PeakCurve curve =
+      peak_curve(simulate_trace(wanted, "three"), *peak, kWindow);
+  EXPECT_LT(std::abs(curve.baseline_start - 50.0), 1.0);
+  EXPECT_LT(std::abs(curve.baseline_end - 50.0), 1.0);
+}
+
+TEST(MeasureNeighbours, WithNoFreeStretchOnOneSideTheBaselineIsLevel) {
+  SimulatedTrace wanted = sample(300.0, 0.0);
+  wanted.peaks.push_back(gaussian_of_height(5.2, 0.05, 300.0));
+  wanted.end_minutes = 5.36;
+  const auto peak = measured(wanted, "one side");
+  ASSERT_TRUE(peak);
+  EXPECT_TRUE(has_reason(*peak, "baseline-one-sided"));
+  EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
+  wanted.peaks.push_back(gaussian_of_height(4.8, 0.05, 300.0));
+  wanted.start_minutes = 4.64;
+  const auto both = measured(wanted, "both sides");
+  ASSERT_TRUE(both);
+  EXPECT_TRUE(has_reason(*both, "baseline-at-valley"));
+}
+
+TEST(MeasureNeighbours, NoiseOfTheSignalItselfMakesNoNeighbours) {
+  // A counting detector: 5 % noise on the peak, hardly any beside it.
+  SimulatedTrace wanted = sample(20000.0);
+  wanted.relative_noise = 0.05;
+  for (int i = 0; i < 20; ++i) {
+    const auto peak = measured(wanted, "counts " + std::to_string(i));
+    ASSERT_TRUE(peak);
+    EXPECT_EQ(peak->overlap, "") << i;
+    EXPECT_FALSE(has_reason(*peak, "several-peaks")) << i;
+  }
+}
+
+}  // namespace
+}  // namespace loqsmith
