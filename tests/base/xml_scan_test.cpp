@@ -7,7 +7,6 @@
 #include <vector>
 
 #include "loqsmith/base/input_error.hpp"
-#include "loqsmith/base/xml_characters.hpp"
 
 namespace loqsmith {
 namespace {
@@ -22,7 +21,7 @@ struct Refusal {
   std::string says;  ///< a part of the message
 };
 
-std::vector<Refusal> refusals() {
+std::vector<Refusal> structure_refusals() {
   return {
       {"NoBytes", "", 1, 1, "incomplete"},
       {"OnlyBlanks", " \n ", 2, 2, "a root element"},
@@ -59,6 +58,11 @@ std::vector<Refusal> refusals() {
       {"CdataEndInText", "<a>]]></a>", 1, 4, "]]&gt;"},
       {"CdataOutside", "<![CDATA[x]]><a/>", 1, 1, "a comment"},
       {"DashesInComment", "<a><!-- x -- y --></a>", 1, 11, "--"},
+  };
+}
+
+std::vector<Refusal> declaration_refusals() {
+  return {
       {"LateDeclaration", "\n<?xml version='1.0'?><a/>", 2, 1, "beginning"},
       {"InstructionNamedXml", "<a><?XML x?></a>", 1, 4, "beginning"},
       {"InstructionWithColon", "<a><?b:c x?></a>", 1, 4, "colon"},
@@ -81,6 +85,11 @@ std::vector<Refusal> refusals() {
       {"Utf16LittleEndian", "\xFF\xFE<\0a\0/\0>\0"s, 1, 1, "UTF-16"},
       {"Utf16BigEndian", "\0<\0a\0/\0>"s, 1, 1, "UTF-16"},
       {"Utf32", "\0\0\0<"s, 1, 1, "UTF-32"},
+  };
+}
+
+std::vector<Refusal> character_refusals() {
+  return {
       {"NulInText", "<a>\0</a>"s, 1, 4, "0x00"},
       {"ControlInText", "<a>x\x01</a>", 1, 5, "0x01"},
       {"ControlInLongText", "<a>12345678901234567890\x0B</a>", 1, 24, "0x0B"},
@@ -99,6 +108,11 @@ std::vector<Refusal> refusals() {
        1, 45, "US-ASCII"},
       {"NotAsciiInName", "<?xml version='1.0' encoding='us-ascii'?><\xC3\xA9/>",
        1, 43, "US-ASCII"},
+  };
+}
+
+std::vector<Refusal> name_refusals() {
+  return {
       {"UndeclaredPrefix", "<p:a/>", 1, 2, "xmlns:p"},
       {"UndeclaredAttributePrefix", "<a p:b='1'/>", 1, 4, "xmlns:p"},
       {"PrefixOutOfScope", "<a><b xmlns:p='u'/><p:c/></a>", 1, 21, "xmlns:p"},
@@ -134,8 +148,18 @@ TEST_P(Refused, NamesPlaceAndFault) {
   }
 }
 
-INSTANTIATE_TEST_SUITE_P(XmlScan, Refused, testing::ValuesIn(refusals()),
-                         [](const auto& test) { return test.param.name; });
+std::string name_of(const testing::TestParamInfo<Refusal>& info) {
+  return info.param.name;
+}
+
+INSTANTIATE_TEST_SUITE_P(Structure, Refused,
+                         testing::ValuesIn(structure_refusals()), name_of);
+INSTANTIATE_TEST_SUITE_P(Declaration, Refused,
+                         testing::ValuesIn(declaration_refusals()), name_of);
+INSTANTIATE_TEST_SUITE_P(Characters, Refused,
+                         testing::ValuesIn(character_refusals()), name_of);
+INSTANTIATE_TEST_SUITE_P(Names, Refused, testing::ValuesIn(name_refusals()),
+                         name_of);
 
 TEST(XmlScan, AcceptsWhatTheStandardsAllow) {
   const std::vector<std::string> documents{
@@ -266,48 +290,6 @@ TEST(XmlScan, CountsLinesAndColumns) {
   EXPECT_EQ(line_column(text, 6).column, 1U);
   EXPECT_EQ(line_column(text, 10).line, 4U);
   EXPECT_EQ(line_column(text, 99).column, 2U);
-}
-
-TEST(XmlCharacters, FindsTheNextSpecialByteWhereverItStands) {
-  for (const char special :
-       {'<', '&', ']', '\0', '\n', '\x1F', '\x80', '\xFF'}) {
-    for (std::size_t at = 0; at < 40; ++at) {
-      std::string text(40, '~');
-      text[at] = special;
-      EXPECT_EQ(next_special(text, 0), at);
-      EXPECT_EQ(next_special(text, at + 1), text.size());
-    }
-  }
-}
-
-// The list of well-formed sequences, walked over all code points by an encoder
-// of its own.
-TEST(XmlCharacters, DecodesEveryCodePoint) {
-  for (char32_t c = 0; c <= 0x10FFFF; ++c) {
-    if (c >= 0xD800 && c <= 0xDFFF) continue;
-    std::string bytes;
-    const auto add = [&](char32_t value) {
-      bytes += static_cast<char>(static_cast<unsigned char>(value));
-    };
-    if (c < 0x80) {
-      add(c);
-    } else if (c < 0x800) {
-      add(0xC0 + c / 64);
-      add(0x80 + c % 64);
-    } else if (c < 0x10000) {
-      add(0xE0 + c / 4096);
-      add(0x80 + c / 64 % 64);
-      add(0x80 + c % 64);
-    } else {
-      add(0xF0 + c / 262144);
-      add(0x80 + c / 4096 % 64);
-      add(0x80 + c / 64 % 64);
-      add(0x80 + c % 64);
-    }
-    const CodePoint found = decode_utf8(bytes);
-    ASSERT_EQ(found.value, c);
-    ASSERT_EQ(found.length, bytes.size());
-  }
 }
 
 }  // namespace
