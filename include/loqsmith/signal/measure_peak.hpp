@@ -21,10 +21,25 @@ namespace loqsmith {
 /// "overlapped"). The area is trapezoids of signal minus baseline over uneven
 /// times; nothing is smoothed for it.
 ///
+/// The target is looked for within the settings' window to either side of the
+/// *expected* time (not of the method's own), and `found` when a peak above the
+/// threshold has its apex there. Where the found height reaches 50 noise
+/// standard deviations the apex is refined with less smoothing.
+///
+/// Reasons, each a word: "saturated", "several-peaks" (the nearest to the
+/// expected time is taken), "overlapped", "spike" (a single point that stands
+/// out inside the window), "few-points" (under 10), "weak-template",
+/// "baseline-at-valley", "baseline-one-sided", "baseline-shortened",
+/// "no-noise", "noise-zero", and those of the noise.
+///
+/// `response_noise` is predicted from the noise model for the very window and
+/// baseline used; signal-to-noise is stated for found peaks only.
+///
 /// @param noise         of the source that the settings name; may be absent
 /// @param noise_source  "blank 3" or "same trace"
 /// @return not applicable (a reason word, then words): "window-not-covered",
-///         "too-few-points" (under 5), "no-signal".
+///         "too-few-points" (under 5), "no-signal", "not-available" (what
+///         this version does not compute).
 Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
                            const WindowTemplate& window, double expected,
                            const Outcome<NoiseEstimate>& noise,
