@@ -13,6 +13,10 @@ namespace {
 
 constexpr std::size_t kLeastAnchorPoints = 5;
 constexpr std::size_t kFewestAnchorPoints = 2;
+// What is left of a neighbour where it no longer disturbs a baseline. More of a
+// tall one would lift the baseline of a low peak by more than its noise.
+constexpr double kFlankEnd = 0.0005;
+constexpr double kHiddenFlank = 0.15;
 // Feet stand where a thousandth of the height is left; a neighbour of the same
 // shape is down to a hundredth at this share of their distance.
 constexpr double kFlankShare = 0.8;
@@ -94,10 +98,12 @@ class Side {
     const double mirrored = left_ ? placement_.right : placement_.left;
     const double low = smoothed(valley);
     const double level = std::max(2.0 * stretch_.gain * placement_.noise,
-                                  0.005 * (smoothed(summit) - low));
+                                  kFlankEnd * (smoothed(summit) - low));
     const double step = 0.05 * placement_.width_half;
     double out = summit;
     while (out - step > valley && smoothed(out) - low > level) out -= step;
+    // Noise hides the last of the flank.
+    out = std::max(valley, out - kHiddenFlank * placement_.width_half);
     return std::min(out, summit - kFlankShare * mirrored);
   }
 
