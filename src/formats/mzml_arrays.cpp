@@ -20,7 +20,7 @@ struct Described {
 class ArraysReader {
  public:
   ArraysReader(const MzmlNode& chromatogram, const ParamGroups& groups,
-               MzmlSource& source, MzmlChromatogram& result)
+               DocumentSource& source, MzmlChromatogram& result)
       : chromatogram_(chromatogram),
         groups_(groups),
         source_(source),
@@ -224,7 +224,7 @@ class ArraysReader {
 
   const MzmlNode& chromatogram_;
   const ParamGroups& groups_;
-  MzmlSource& source_;
+  DocumentSource& source_;
   MzmlChromatogram& result_;
   std::optional<std::size_t> default_length_;
   std::vector<Described> arrays_;
@@ -233,7 +233,7 @@ class ArraysReader {
 }  // namespace
 
 void read_mzml_arrays(const MzmlNode& chromatogram, const ParamGroups& groups,
-                      MzmlSource& source, MzmlChromatogram& result) {
+                      DocumentSource& source, MzmlChromatogram& result) {
   ArraysReader(chromatogram, groups, source, result).run();
 }
 

@@ -24,7 +24,7 @@ const CvParam* find_param(const Params& params, std::string_view accession) {
 class HeaderReader {
  public:
   HeaderReader(const MzmlNode& node, const ParamGroups& groups,
-               MzmlSource& source, MzmlChromatogram& result)
+               DocumentSource& source, MzmlChromatogram& result)
       : node_(node), groups_(groups), source_(source), result_(result) {}
 
   void run() {
@@ -101,26 +101,15 @@ class HeaderReader {
 
   const MzmlNode& node_;
   const ParamGroups& groups_;
-  MzmlSource& source_;
+  DocumentSource& source_;
   MzmlChromatogram& result_;
 };
 
 }  // namespace
 
-InputProblem MzmlSource::problem(std::size_t offset, std::string found,
-                                 std::string expected, std::string mend) {
-  const TextPlace place = places.at(offset);
-  return {file,
-          place.line,
-          place.column,
-          std::move(found),
-          std::move(expected),
-          std::move(mend)};
-}
-
 std::vector<CvParam> resolved_params(const MzmlNode& node,
                                      const ParamGroups& groups,
-                                     MzmlSource& source) {
+                                     DocumentSource& source) {
   Params params;
   for (const MzmlNode& child : node.children) {
     if (child.name == "cvParam") {
@@ -147,7 +136,7 @@ std::vector<CvParam> resolved_params(const MzmlNode& node,
 }
 
 MzmlChromatogram read_mzml_chromatogram(
-    const MzmlNode& node, const ParamGroups& groups, MzmlSource& source,
+    const MzmlNode& node, const ParamGroups& groups, DocumentSource& source,
     const std::optional<InputProblem>& fault) {
   MzmlChromatogram result;
   try {

@@ -1,40 +1,22 @@
 #include <utility>
 
-#include "loqsmith/base/xml_scan.hpp"
 #include "loqsmith/formats/base64.hpp"
 #include "loqsmith/formats/inflate.hpp"
 #include "loqsmith/formats/mzml_arrays.hpp"
+#include "loqsmith/formats/text_pieces.hpp"
 
 namespace loqsmith {
 namespace {
 
-// Text may come in pieces, around comments and CDATA sections.
-std::string_view joined(const std::vector<MzmlText>& pieces,
-                        std::string_view document, std::string& storage) {
-  const auto view = [&](const MzmlText& piece) {
-    return document.substr(piece.begin, piece.end - piece.begin);
-  };
-  if (pieces.empty()) return {};
-  if (pieces.size() == 1 &&
-      (pieces.front().verbatim ||
-       view(pieces.front()).find('&') == std::string_view::npos)) {
-    return view(pieces.front());
-  }
-  for (const MzmlText& piece : pieces) {
-    storage +=
-        piece.verbatim ? std::string(view(piece)) : xml_text(view(piece));
-  }
-  return storage;
-}
-
 class ArrayDecoder {
  public:
-  ArrayDecoder(const MzmlArray& array, MzmlSource& source)
+  ArrayDecoder(const MzmlArray& array, DocumentSource& source)
       : array_(array), source_(source) {}
 
   std::vector<double> run(std::vector<std::string>& warnings) {
     std::string storage;
-    const std::string_view text = joined(array_.text, source_.bytes, storage);
+    const std::string_view text =
+        joined_text(array_.text, source_.bytes, storage);
     DecodedBase64 decoded = taken(decode_base64(text));
     check_length(decoded.characters, text.size(), warnings);
     std::string bytes = std::move(decoded.bytes);
@@ -81,13 +63,13 @@ class ArrayDecoder {
   }
 
   const MzmlArray& array_;
-  MzmlSource& source_;
+  DocumentSource& source_;
 };
 
 }  // namespace
 
 std::vector<double> decode_mzml_array(const MzmlArray& array,
-                                      MzmlSource& source,
+                                      DocumentSource& source,
                                       std::vector<std::string>& warnings) {
   return ArrayDecoder(array, source).run(warnings);
 }

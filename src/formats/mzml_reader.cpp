@@ -7,10 +7,10 @@
 #include "loqsmith/base/digest.hpp"
 #include "loqsmith/base/input_error.hpp"
 #include "loqsmith/base/text.hpp"
-#include "loqsmith/base/time.hpp"
 #include "loqsmith/base/xml_scan.hpp"
 #include "loqsmith/formats/mzml_arrays.hpp"
 #include "loqsmith/formats/mzml_scan.hpp"
+#include "loqsmith/formats/start_time.hpp"
 #include "loqsmith/formats/trace_checks.hpp"
 
 namespace loqsmith {
@@ -42,7 +42,9 @@ class MzmlReader {
     scan_xml(source_.bytes, source_.file, XmlLimits{}, scan_);
     scan_.require_whole();
     check_integrity();
-    check_start_time();
+    if (auto warning = start_time_warning(scan_.run()->start_time)) {
+      contents_.warnings.push_back(std::move(*warning));
+    }
     append(contents_.warnings, index_.warnings());
     append(contents_.warnings, scan_.notes().all());
     contents_.format = scan_.indexed() ? "indexed mzML 1.1" : "mzML 1.1";
@@ -90,19 +92,6 @@ class MzmlReader {
     return offset - static_cast<std::size_t>(added);
   }
 
-  void check_start_time() {
-    const std::string& written = scan_.run()->start_time;
-    if (written.empty()) return;
-    const auto moment = parse_moment(written);
-    if (!moment) {
-      contents_.warnings.push_back("start time " + in_quotes(written) +
-                                   " is no date");
-    } else if (!moment->has_zone) {
-      contents_.warnings.push_back("start time " + written +
-                                   ": zone not stated");
-    }
-  }
-
   void take(MzmlChromatogram& chromatogram,
             const std::vector<TraceSelector>* wanted) {
     TraceHeader& header = chromatogram.header;
@@ -111,12 +100,7 @@ class MzmlReader {
           {std::move(header), std::move(*chromatogram.fault)});
       return;
     }
-    const bool asked =
-        wanted == nullptr || std::any_of(wanted->begin(), wanted->end(),
-                                         [&](const TraceSelector& selector) {
-                                           return matches(selector, header);
-                                         });
-    if (!asked) {
+    if (!is_wanted(wanted, header)) {
       contents_.left_out.push_back(std::move(header));
       return;
     }
@@ -151,7 +135,7 @@ class MzmlReader {
   }
 
   std::string_view original_;
-  MzmlSource source_;
+  DocumentSource source_;
   MzmlIndexCheck index_;
   MzmlScan scan_;
   FileContents contents_;

@@ -1,18 +1,11 @@
 #include "loqsmith/formats/mzml_schema.hpp"
 
-#include <algorithm>
 #include <array>
 #include <unordered_map>
 #include <utility>
 
 namespace loqsmith {
 namespace {
-
-struct RuleText {
-  std::string_view name;
-  std::string_view attributes;
-  std::string_view children;  ///< '*': any number; '@': a group of parameters
-};
 
 // Source: mzML schemas 1.1.0 and 1.1.1 with the index wrapper up to 1.1.3
 // (HUPO Proteomics Standards Initiative), from memory.
@@ -113,59 +106,16 @@ constexpr std::array kReferences{
     std::pair{"sampleRef", "sample"},
 };
 
-std::vector<std::string_view> words(std::string_view text) {
-  std::vector<std::string_view> result;
-  while (!text.empty()) {
-    const std::size_t end = std::min(text.find(' '), text.size());
-    if (end > 0) result.push_back(text.substr(0, end));
-    text.remove_prefix(std::min(end + 1, text.size()));
-  }
-  return result;
-}
-
-MzmlRule rule_from(const RuleText& text) {
-  MzmlRule rule;
-  rule.name = text.name;
-  rule.attributes = words(text.attributes);
-  for (std::string_view word : words(text.children)) {
-    if (word == "#") {
-      rule.holds_text = true;
-    } else if (word == "@") {
-      rule.children.insert(rule.children.end(),
-                           {{"referenceableParamGroupRef", true},
-                            {"cvParam", true},
-                            {"userParam", true}});
-    } else if (word.ends_with('*')) {
-      word.remove_suffix(1);
-      rule.children.push_back({word, true});
-    } else {
-      rule.children.push_back({word, false});
-    }
-  }
-  return rule;
-}
-
-std::unordered_map<std::string_view, MzmlRule> all_rules() {
-  std::unordered_map<std::string_view, MzmlRule> rules;
-  for (const RuleText& text : kRules) rules.emplace(text.name, rule_from(text));
+std::unordered_map<std::string_view, ElementRule> all_rules() {
+  std::unordered_map<std::string_view, ElementRule> rules;
+  for (const RuleText& text : kRules)
+    rules.emplace(text.name, element_rule(text));
   return rules;
 }
 
 }  // namespace
 
-bool MzmlRule::allows_attribute(std::string_view attribute) const {
-  return std::find(attributes.begin(), attributes.end(), attribute) !=
-         attributes.end();
-}
-
-std::size_t MzmlRule::place_of(std::string_view child) const {
-  const auto it =
-      std::find_if(children.begin(), children.end(),
-                   [&](const MzmlChild& known) { return known.name == child; });
-  return static_cast<std::size_t>(it - children.begin());
-}
-
-const MzmlRule* mzml_rule(std::string_view name) {
+const ElementRule* mzml_rule(std::string_view name) {
   static const auto rules = all_rules();
   const auto it = rules.find(name);
   return it == rules.end() ? nullptr : &it->second;

@@ -29,7 +29,7 @@ void warn_of_disagreement(const CvParam& kind, const std::string& array,
 }
 
 void refuse_name_alone(const CvParam& kind, const std::string& array,
-                       MzmlSource& source) {
+                       DocumentSource& source) {
   if (!kind.unit_accession.empty() || kind.unit_name.empty()) return;
   throw InputError(source.problem(kind.offset,
                                   "the unit name " + in_quotes(kind.unit_name) +
@@ -39,7 +39,7 @@ void refuse_name_alone(const CvParam& kind, const std::string& array,
 
 }  // namespace
 
-void read_time_unit(const CvParam& kind, MzmlSource& source,
+void read_time_unit(const CvParam& kind, DocumentSource& source,
                     MzmlChromatogram& result) {
   refuse_name_alone(kind, "time array", source);
   std::string accession = kind.unit_accession;
@@ -70,7 +70,7 @@ void read_time_unit(const CvParam& kind, MzmlSource& source,
   }
 }
 
-void read_signal_unit(const CvParam& kind, MzmlSource& source,
+void read_signal_unit(const CvParam& kind, DocumentSource& source,
                       MzmlChromatogram& result) {
   refuse_name_alone(kind, "signal array", source);
   if (kind.unit_accession.empty()) return;

@@ -49,14 +49,13 @@ std::string everything(const FileContents& contents) {
   return listed(items);
 }
 
-void require_run(const FileContents& contents, const std::string& run,
-                 const std::string& name) {
-  if (run.empty()) return;
+std::vector<MeantRun> require_runs(const FileContents& contents,
+                                   const std::string& run,
+                                   const std::string& name) {
+  std::vector<MeantRun> found = find_runs(contents, run);
+  if (!found.empty() || run.empty()) return found;
   std::vector<std::string> ids;
-  for (const FileRun& known : contents.runs) {
-    if (known.id == run) return;
-    ids.push_back(in_quotes(known.id));
-  }
+  for (const FileRun& known : contents.runs) ids.push_back(in_quotes(known.id));
   throw InputError(InputProblem{
       name, 0, 0, ids.empty() ? "no run" : join(ids, ", "),
       "the run " + in_quotes(run), "correct the run in the sequence sheet"});
@@ -67,14 +66,18 @@ void require_run(const FileContents& contents, const std::string& run,
 const Trace& select_trace(const FileContents& contents,
                           const TraceSelector& selector, const std::string& run,
                           const std::string& name) {
-  require_run(contents, run, name);
+  const std::vector<MeantRun> runs = require_runs(contents, run, name);
   if (selector.kind == TraceSelector::Kind::Extracted) {
     throw InputError(InputProblem{
         name, 0, 0, "kind extracted, which is not available in this version",
         "a chromatogram of the file", "choose another kind"});
   }
   const auto meant = [&](const TraceHeader& header) {
-    return (run.empty() || header.run == run) && matches(selector, header);
+    return matches(selector, header) &&
+           (run.empty() || std::any_of(runs.begin(), runs.end(),
+                                       [&](const MeantRun& meant_run) {
+                                         return meant_run.holds(header);
+                                       }));
   };
   std::vector<const Trace*> traces;
   std::vector<const RefusedTrace*> refused;

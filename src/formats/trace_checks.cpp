@@ -66,6 +66,14 @@ bool counts_ions(const std::string& unit) {
 
 }  // namespace
 
+bool is_wanted(const std::vector<TraceSelector>* wanted,
+               const TraceHeader& header) {
+  return wanted == nullptr || std::any_of(wanted->begin(), wanted->end(),
+                                          [&](const TraceSelector& selector) {
+                                            return matches(selector, header);
+                                          });
+}
+
 std::optional<PointFault> find_point_fault(const std::vector<double>& minutes,
                                            const std::vector<double>& signal) {
   if (minutes.size() != signal.size()) {

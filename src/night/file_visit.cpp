@@ -50,13 +50,8 @@ FileVisit visit_file(const SequenceFolder& folder, const std::string& file) {
 
 const FileRun* run_of(const FileContents& contents,
                       const Injection& injection) {
-  if (injection.run.empty()) {
-    return contents.runs.size() == 1 ? &contents.runs.front() : nullptr;
-  }
-  for (const FileRun& run : contents.runs) {
-    if (run.id == injection.run || run.name == injection.run) return &run;
-  }
-  return nullptr;
+  const std::vector<MeantRun> runs = find_runs(contents, injection.run);
+  return runs.size() == 1 ? runs.front().run : nullptr;
 }
 
 }  // namespace loqsmith

@@ -18,12 +18,20 @@ struct ReadPolicy {
   bool checksum_required = true;
 };
 
+/// An experiment step inside another one (AnIML).
+struct FileStep {
+  std::string id;
+  std::string name;
+  std::vector<std::string> traces;  ///< header ids of what lies below it
+};
+
 /// One run (mzML) or outermost experiment step (AnIML) of a file.
 struct FileRun {
   std::string id;
   std::string name;
-  std::string sample_name;  ///< empty: the file does not say
-  std::string start_time;   ///< as written in the file; empty: not stated
+  std::string sample_name;        ///< empty: the file does not say
+  std::string start_time;         ///< as written in the file; empty: not stated
+  std::vector<FileStep> steps{};  ///< those inside it, at any depth
 };
 
 /// What a chromatogram file holds.
@@ -50,8 +58,22 @@ FileContents read_chromatogram_file(
     std::string_view bytes, const std::string& name, const ReadPolicy& policy,
     const std::vector<TraceSelector>* wanted = nullptr);
 
-/// The one trace of the file (of its run `run`, when not empty) that the
-/// selector means.
+/// What a text of the sequence's `run` column means in a file.
+struct MeantRun {
+  const FileRun* run = nullptr;
+  const FileStep* step = nullptr;  ///< nothing: the whole run
+
+  bool holds(const TraceHeader& header) const;
+};
+
+/// The runs that `run` means: those with this id, otherwise those with a step
+/// of this id, otherwise with this name, otherwise with a step of this name.
+/// Empty text means every run.
+std::vector<MeantRun> find_runs(const FileContents& contents,
+                                const std::string& run);
+
+/// The one trace of the file (of its run `run`, when not empty: find_runs) that
+/// the selector means.
 /// @throws InputError for none (lists what there is), several (lists the
 ///         candidates), or one that was refused (with its own problem).
 const Trace& select_trace(const FileContents& contents,

@@ -15,13 +15,13 @@ namespace loqsmith {
 ///         time unit where the policy gives none
 /// @throws WholeFileError for lengths below zero
 void read_mzml_arrays(const MzmlNode& chromatogram, const ParamGroups& groups,
-                      MzmlSource& source, MzmlChromatogram& result);
+                      DocumentSource& source, MzmlChromatogram& result);
 
 /// The array's numbers: text joined, base64, zlib, widened.
 /// @throws InputError for every disagreement between what is written and what
 ///         is there
 std::vector<double> decode_mzml_array(const MzmlArray& array,
-                                      MzmlSource& source,
+                                      DocumentSource& source,
                                       std::vector<std::string>& warnings);
 
 }  // namespace loqsmith

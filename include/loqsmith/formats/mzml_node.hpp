@@ -7,14 +7,9 @@
 #include <utility>
 #include <vector>
 
-namespace loqsmith {
+#include "loqsmith/formats/text_pieces.hpp"
 
-/// A run of text in the document.
-struct MzmlText {
-  std::size_t begin = 0;
-  std::size_t end = 0;
-  bool verbatim = false;  ///< no references to expand
-};
+namespace loqsmith {
 
 /// One mzML element with what is below it, as long as it is needed. Views point
 /// into the document.
@@ -23,7 +18,7 @@ struct MzmlNode {
   std::size_t offset = 0;
   std::vector<std::pair<std::string_view, std::string>> attributes;
   std::vector<MzmlNode> children;
-  std::vector<MzmlText> text;
+  std::vector<TextPiece> text;
 
   /// The attribute's value; nullptr where it is not written.
   const std::string* attribute(std::string_view wanted) const;

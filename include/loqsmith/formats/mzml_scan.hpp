@@ -27,7 +27,7 @@ namespace loqsmith {
 /// list or binary, doubled ids) refuses the file.
 class MzmlScan : public XmlHandler {
  public:
-  MzmlScan(MzmlSource& source, MzmlIndexCheck& index)
+  MzmlScan(DocumentSource& source, MzmlIndexCheck& index)
       : source_(source), index_(index) {}
 
   void start_element(const XmlStart& start) override;
@@ -48,19 +48,19 @@ class MzmlScan : public XmlHandler {
 
  private:
   struct Frame {
-    const MzmlRule* rule = nullptr;  ///< none: a stranger, stepped over
-    std::size_t place = 0;           ///< of the last child
+    const ElementRule* rule = nullptr;  ///< none: a stranger, stepped over
+    std::size_t place = 0;              ///< of the last child
     bool has_children = false;
     std::optional<std::string> count;  ///< as a list states it
     std::size_t items = 0;
   };
 
   void check_root(const XmlStart& start);
-  const MzmlRule* rule_of_child(Frame& parent, const XmlStart& start);
+  const ElementRule* rule_of_child(Frame& parent, const XmlStart& start);
   void check_order(Frame& parent, std::size_t place, const XmlStart& start);
-  void check_attributes(const MzmlRule& rule, const XmlStart& start);
+  void check_attributes(const ElementRule& rule, const XmlStart& start);
   void check_reference(const XmlAttribute& attribute);
-  void begin_node(const MzmlRule& rule, const XmlStart& start);
+  void begin_node(const ElementRule& rule, const XmlStart& start);
   void end_node();
   void keep_group(const MzmlNode& node);
   void keep_sample(const MzmlNode& node);
@@ -74,7 +74,7 @@ class MzmlScan : public XmlHandler {
   [[noreturn]] void refuse(std::size_t offset, std::string found,
                            std::string expected, std::string mend = {});
 
-  MzmlSource& source_;
+  DocumentSource& source_;
   MzmlIndexCheck& index_;
   Notes notes_;
   std::vector<Frame> frames_;

@@ -9,12 +9,12 @@ namespace loqsmith {
 /// chromatogram is refused. Milliseconds and hours convert exactly but stand
 /// outside the vocabulary's list: a warning.
 /// @throws InputError: none, a name without accession, a unit that is not read
-void read_time_unit(const CvParam& kind, MzmlSource& source,
+void read_time_unit(const CvParam& kind, DocumentSource& source,
                     MzmlChromatogram& result);
 
 /// Unit of the signal into header.signal_unit; empty where none is stated.
 /// @throws InputError for a name without accession
-void read_signal_unit(const CvParam& kind, MzmlSource& source,
+void read_signal_unit(const CvParam& kind, DocumentSource& source,
                       MzmlChromatogram& result);
 
 }  // namespace loqsmith

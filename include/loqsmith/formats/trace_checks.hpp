@@ -5,8 +5,14 @@
 #include <vector>
 
 #include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/chromatogram/trace_selector.hpp"
 
 namespace loqsmith {
+
+/// True where one of the selectors matches, or where nothing is said and every
+/// trace is wanted.
+bool is_wanted(const std::vector<TraceSelector>* wanted,
+               const TraceHeader& header);
 
 /// Why points are no chromatogram.
 struct PointFault {
