@@ -1,4 +1,4 @@
-// Sample runs, processed as a user does it, held against their truth.
+// Both sample runs, processed as a user does it, held against their truth.
 
 #include <gtest/gtest.h>
 
@@ -113,6 +113,8 @@ TEST_P(SampleRun, TheSheetsArePublishedVerbatimAndTheLedgerHolds) {
 
 INSTANTIATE_TEST_SUITE_P(WellWater, SampleRun,
                          testing::Values(&well_water_night));
+INSTANTIATE_TEST_SUITE_P(TabletCoating, SampleRun,
+                         testing::Values(&tablet_coating_night));
 
 }  // namespace
 }  // namespace loqsmith::test
