@@ -9,8 +9,8 @@ namespace {
 
 class Criteria {
  public:
-  Criteria(const AnalyteSettings& settings, const CalibrationSet& set)
-      : analyte_(settings.target.id),
+  Criteria(const AnalyteRules& settings, const CalibrationSet& set)
+      : analyte_(settings.analyte),
         accept_(*settings.acceptance.calibration),
         set_(set) {}
 
@@ -120,7 +120,7 @@ class Criteria {
 
 }  // namespace
 
-CalibrationVerdict check_calibration(const AnalyteSettings& settings,
+CalibrationVerdict check_calibration(const AnalyteRules& settings,
                                      const CalibrationSet& set) {
   if (!settings.acceptance.calibration) return {};
   return Criteria(settings, set).check();

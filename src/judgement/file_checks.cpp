@@ -62,7 +62,10 @@ std::vector<CheckRow> check_file_warnings(const SequenceFacts& facts) {
       findings.add(file.injection, warning);
     }
   }
-  return findings.rows();
+  // Accepted, only worth saying: a plain mzML file always has one.
+  std::vector<CheckRow> rows = findings.rows();
+  for (CheckRow& row : rows) row.passed = true;
+  return rows;
 }
 
 std::vector<CheckRow> always_checked(const Sequence& sequence,

@@ -9,6 +9,7 @@
 #include "loqsmith/judgement/limit_evidence.hpp"
 #include "loqsmith/judgement/measured_analyte.hpp"
 #include "loqsmith/judgement/result_row.hpp"
+#include "loqsmith/judgement/signal_unit.hpp"
 #include "loqsmith/judgement/standards.hpp"
 #include "loqsmith/judgement/trace_checks.hpp"
 
@@ -21,7 +22,7 @@ void append(std::vector<CheckRow>& rows, std::vector<CheckRow> more) {
 
 CalibrationSet calibrate(const MeasuredAnalyte& analyte,
                          const std::string& template_reason) {
-  const AnalyteSettings& settings = *analyte.settings;
+  const AnalyteRules& settings = *analyte.settings;
   OfferedStandards offered = offer_standards(analyte);
   CalibrationSet set;
   set.set = "1";
@@ -86,7 +87,7 @@ void check_standards(AnalyteFindings& findings, std::vector<CheckRow>& rows,
                      const CalibrationSet& set) {
   const auto& acceptance = analyte.settings->acceptance.check_standard;
   if (!acceptance) return;
-  const std::string& id = analyte.settings->target.id;
+  const std::string& id = analyte.settings->analyte;
   if (!set.calibration) {
     rows.push_back(nothing_to_check_against(id));
     return;
@@ -98,28 +99,32 @@ void check_standards(AnalyteFindings& findings, std::vector<CheckRow>& rows,
 
 }  // namespace
 
-AnalyteJudgement judge_analyte(
-    const AnalyteSettings& settings, const UnitSettings& units,
-    const InternalStandardSettings* internal_standard, const Sequence& sequence,
-    const std::vector<MeasuredInjection>& injections,
-    const std::string& template_reason) {
-  const MeasuredAnalyte analyte = collect_responses(
-      settings, units, internal_standard, sequence, injections);
-  CalibrationSet set = calibrate(analyte, template_reason);
+AnalyteJudgement judge_analyte(const AnalyteRules& settings,
+                               const UnitSettings& units,
+                               const Sequence& sequence,
+                               const std::vector<MeasuredInjection>& injections,
+                               const std::string& template_reason) {
+  const MeasuredAnalyte analyte =
+      collect_responses(settings, units, sequence, injections);
+  const Outcome<std::string> unit = common_signal_unit(injections);
+  const std::string refused =
+      template_reason.empty() && !unit ? unit.reason() : template_reason;
+  CalibrationSet set = calibrate(analyte, refused);
   compute_limits_of(set, analyte);
 
   AnalyteJudgement judgement;
-  judgement.analyte = settings.target.id;
+  judgement.analyte = settings.analyte;
   judgement.concentration_unit = units.concentration;
   AnalyteFindings findings;
   if (!template_reason.empty()) findings.withholding = {"not-learned"};
+  if (!unit) findings.withholding.emplace_back("mixed-units");
   CalibrationVerdict calibration = check_calibration(settings, set);
   find_about_calibration(findings, set, settings.acceptance,
                          calibration.failed);
   judgement.checks = std::move(calibration.rows);
   check_standards(findings, judgement.checks, analyte, set);
   append(judgement.checks,
-         unchecked_rows(settings.acceptance, settings.target.id));
+         unchecked_rows(settings.acceptance, settings.analyte));
   append(judgement.checks, check_traces(analyte));
 
   for (const InjectionResponse& one : analyte.injections) {

@@ -123,23 +123,10 @@ std::optional<double> noise_near_the_lowest(const MeasuredAnalyte& analyte) {
   return median(std::move(noises));
 }
 
-NoiseMeasure noise_measure(NoiseSettings::Measure measure) {
-  switch (measure) {
-    case NoiseSettings::Measure::HalfPeakToPeak:
-      return NoiseMeasure::HalfPeakToPeak;
-    case NoiseSettings::Measure::PeakToPeak:
-      return NoiseMeasure::PeakToPeak;
-    case NoiseSettings::Measure::StandardDeviation:
-      return NoiseMeasure::StandardDeviation;
-  }
-  return NoiseMeasure::HalfPeakToPeak;
-}
-
 }  // namespace
 
 LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
                                     const Calibration& calibration) {
-  const TargetSettings& target = analyte.settings->target;
   LimitEvidence evidence;
   for (const InjectionResponse& one : analyte.injections) {
     const int number = one.injection->number;
@@ -157,11 +144,9 @@ LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
   }
   evidence.calibration = calibration;
   evidence.noise = noise_near_the_lowest(analyte);
-  evidence.noise_measure = noise_measure(target.noise.measure);
-  evidence.bounds_own =
-      target.integration.bounds == IntegrationSettings::Bounds::Own;
-  evidence.baseline_biased =
-      target.integration.baseline != IntegrationSettings::Baseline::Valley;
+  evidence.noise_measure = analyte.settings->noise_measure;
+  evidence.bounds_own = analyte.settings->bounds_own;
+  evidence.baseline_biased = analyte.settings->baseline_biased;
   return evidence;
 }
 

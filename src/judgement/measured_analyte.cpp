@@ -2,6 +2,8 @@
 
 #include <algorithm>
 
+#include "loqsmith/judgement/signal_unit.hpp"
+
 namespace loqsmith {
 namespace {
 
@@ -17,16 +19,20 @@ std::optional<double> nominal_of(const Injection& injection,
 }  // namespace
 
 MeasuredAnalyte collect_responses(
-    const AnalyteSettings& settings, const UnitSettings& units,
-    const InternalStandardSettings* internal_standard, const Sequence& sequence,
+    const AnalyteRules& settings, const UnitSettings& units,
+    const Sequence& sequence,
     const std::vector<MeasuredInjection>& injections) {
-  const ResponseRule rule =
-      response_rule(settings, internal_standard, injections);
+  const ResponseRule rule = response_rule(settings, injections);
   MeasuredAnalyte analyte{&settings, &units, &sequence, {}};
+  const Outcome<std::string> unit = common_signal_unit(injections);
   for (const MeasuredInjection& measured : injections) {
+    const std::string refused =
+        unit && measured.peak ? why_unit_differs(measured, *unit) : "";
     InjectionResponse one{
-        measured.injection, measured.peak, response_of(measured, rule),
-        nominal_of(*measured.injection, sequence, settings.target.id)};
+        measured.injection, measured.peak,
+        refused.empty() ? response_of(measured, rule)
+                        : Outcome<Response>(NotApplicable{refused}),
+        nominal_of(*measured.injection, sequence, settings.analyte)};
     analyte.injections.push_back(std::move(one));
   }
   std::stable_sort(analyte.injections.begin(), analyte.injections.end(),

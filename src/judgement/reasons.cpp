@@ -9,11 +9,12 @@ namespace {
 
 // Most serious first. First why there is no number, then why the number may
 // not be used, then why to be careful with it.
-constexpr std::array<std::string_view, 35> kDoubtful{
+constexpr std::array<std::string_view, 36> kDoubtful{
     "peak-not-found",
     "file-refused",
     "trace-missing",
     "not-learned",
+    "mixed-units",
     "window-not-covered",
     "too-few-points",
     "no-signal",

@@ -10,14 +10,13 @@ namespace {
 // blank is carry-over.
 constexpr double kCarriedOver = 0.1;
 
-std::optional<double> peak_response(const Peak& peak,
-                                    IntegrationSettings::Response measure) {
+std::optional<double> peak_response(const Peak& peak, ResponseKind measure) {
   switch (measure) {
-    case IntegrationSettings::Response::Area:
+    case ResponseKind::Area:
       return peak.area;
-    case IntegrationSettings::Response::Height:
+    case ResponseKind::Height:
       return peak.height;
-    case IntegrationSettings::Response::Template:
+    case ResponseKind::Template:
       return peak.template_response;
   }
   return std::nullopt;
@@ -25,7 +24,7 @@ std::optional<double> peak_response(const Peak& peak,
 
 /// A_is d; nothing where no internal standard was seen.
 std::optional<double> undiluted_internal_standard(
-    const MeasuredInjection& measured, IntegrationSettings::Response measure) {
+    const MeasuredInjection& measured, ResponseKind measure) {
   if (!measured.internal_standard || !*measured.internal_standard) {
     return std::nullopt;
   }
@@ -74,12 +73,11 @@ Outcome<Response> ratio(Response response, const MeasuredInjection& measured,
 
 }  // namespace
 
-ResponseRule response_rule(const AnalyteSettings& settings,
-                           const InternalStandardSettings* internal_standard,
+ResponseRule response_rule(const AnalyteRules& settings,
                            const std::vector<MeasuredInjection>& injections) {
   ResponseRule rule;
-  rule.measure = settings.target.integration.response;
-  rule.has_internal_standard = internal_standard != nullptr;
+  rule.measure = settings.response;
+  rule.has_internal_standard = !settings.internal_standard.empty();
   double sum = 0.0;
   std::size_t n = 0;
   for (const MeasuredInjection& measured : injections) {

@@ -16,11 +16,10 @@ ResultRow describe_injection(const InjectionResponse& one,
   row.injection = one.injection->number;
   row.sample = one.injection->sample;
   row.role = one.injection->role;
-  row.analyte = analyte.settings->target.id;
+  row.analyte = analyte.settings->analyte;
   row.set = set.set;
   row.dilution = one.injection->dilution;
-  row.unit = analyte.units->result.empty() ? analyte.units->concentration
-                                           : analyte.units->result;
+  row.unit = result_unit(*one.injection, *analyte.units);
   if (one.response) row.response = one.response->value;
   if (!one.peak) return row;
   row.found = one.peak->found;

@@ -16,12 +16,23 @@ constexpr int kDecimalDigits = 12;
 
 }  // namespace
 
+bool stays_in_the_vial(const Injection& injection, const UnitSettings& units) {
+  return !units.sample_amount.empty() && !injection.sample_amount;
+}
+
 double sample_factor(const Injection& injection, const UnitSettings& units) {
   double factor = injection.dilution;
+  if (stays_in_the_vial(injection, units)) return factor;
   if (injection.final_volume && injection.sample_amount) {
     factor = factor * *injection.final_volume / *injection.sample_amount;
   }
   return factor * units.factor;
+}
+
+std::string result_unit(const Injection& injection, const UnitSettings& units) {
+  return units.result.empty() || stays_in_the_vial(injection, units)
+             ? units.concentration
+             : units.result;
 }
 
 double in_sample(double vial, double factor) {

@@ -26,7 +26,7 @@ std::vector<CheckRow> rows_of(const std::string& check,
   std::vector<CheckRow> rows;
   CheckRow row;
   row.check = check;
-  row.analyte = analyte.settings->target.id;
+  row.analyte = analyte.settings->analyte;
   row.action = check_action_name(CheckAction::Flag);
   for (const InjectionResponse& one : analyte.injections) {
     if (!found(one)) continue;

@@ -62,6 +62,7 @@ class InjectionAtWork {
       return std::move(result_);
     }
     for (std::size_t i = 0; i < learned_.targets.size(); ++i) {
+      result_.signal_units.emplace_back();
       result_.peaks.push_back(measure_target(i));
     }
     result_.fact.data_hash = any_trace_ ? hash_.finish_hex() : std::string{};
@@ -87,6 +88,9 @@ class InjectionAtWork {
       return NotApplicable{"file-refused: " + result_.fact.problem};
     }
     const Trace* trace = find_trace(target.trace);
+    if (trace != nullptr) {
+      result_.signal_units.back() = trace->header.signal_unit;
+    }
     if (trace == nullptr) {
       return NotApplicable{"trace-missing: " + trace_problem_[target.trace]};
     }

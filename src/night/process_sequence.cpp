@@ -38,37 +38,45 @@ std::string name_of(const ProcessOptions& options) {
   return real.filename().string();
 }
 
-// The judgement of one analyte from what was measured of it.
+std::size_t place_of(const Learned& learned, const std::string& id) {
+  const auto found = std::find_if(
+      learned.targets.begin(), learned.targets.end(),
+      [&](const TargetSettings& target) { return target.id == id; });
+  return static_cast<std::size_t>(found - learned.targets.begin());
+}
+
+// What was measured of one analyte (and its internal standard) in an injection.
+MeasuredInjection measured_of(const Learned& learned,
+                              const AnalyteSettings& analyte,
+                              const Injection& row,
+                              const InjectionMeasured& measured) {
+  const std::size_t own = place_of(learned, analyte.target.id);
+  MeasuredInjection injection{&row, measured.peaks[own], std::nullopt,
+                              measured.signal_units[own]};
+  if (analyte.internal_standard.empty()) return injection;
+  const std::size_t standard = place_of(learned, analyte.internal_standard);
+  injection.internal_standard = measured.peaks[standard];
+  if (measured.signal_units[standard] != injection.signal_unit) {
+    injection.signal_unit += " / " + measured.signal_units[standard];
+  }
+  return injection;
+}
+
 AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
                        const Measured& measured,
                        const AnalyteSettings& analyte) {
-  const Method& method = folder.sheets.method;
-  const auto place = [&](const std::string& id) {
-    const auto found = std::find_if(
-        learned.targets.begin(), learned.targets.end(),
-        [&](const TargetSettings& target) { return target.id == id; });
-    return static_cast<std::size_t>(found - learned.targets.begin());
-  };
-  const InternalStandardSettings* standard =
-      analyte.internal_standard.empty()
-          ? nullptr
-          : method.internal_standard(analyte.internal_standard);
-  const std::size_t own = place(analyte.target.id);
   std::vector<MeasuredInjection> injections;
   const std::vector<Injection>& rows = folder.sheets.sequence.injections;
   for (std::size_t i = 0; i < rows.size(); ++i) {
     if (rows[i].role == Role::Conditioning) continue;
-    const std::vector<Outcome<Peak>>& peaks = measured.injections[i].peaks;
-    MeasuredInjection injection{&rows[i], peaks[own], std::nullopt};
-    if (standard != nullptr) {
-      injection.internal_standard = peaks[place(standard->target.id)];
-    }
-    injections.push_back(std::move(injection));
+    injections.push_back(
+        measured_of(learned, analyte, rows[i], measured.injections[i]));
   }
-  std::string not_learned;
-  if (!learned.windows[own]) not_learned = learned.windows[own].reason();
-  return judge_analyte(analyte, method.units, standard, folder.sheets.sequence,
-                       injections, not_learned);
+  const Outcome<WindowTemplate>& window =
+      learned.windows[place_of(learned, analyte.target.id)];
+  return judge_analyte(analyte, folder.sheets.method.units,
+                       folder.sheets.sequence, injections,
+                       window ? std::string{} : window.reason());
 }
 
 SequenceFacts facts_of(const SequenceFolder& folder, const Measured& measured) {

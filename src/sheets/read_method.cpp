@@ -49,10 +49,46 @@ TargetSettings target_settings(const MethodElement& element,
   return target;
 }
 
+ResponseKind response_kind(IntegrationSettings::Response response) {
+  switch (response) {
+    case IntegrationSettings::Response::Area:
+      return ResponseKind::Area;
+    case IntegrationSettings::Response::Height:
+      return ResponseKind::Height;
+    case IntegrationSettings::Response::Template:
+      return ResponseKind::Template;
+  }
+  return ResponseKind::Area;
+}
+
+NoiseMeasure noise_measure(NoiseSettings::Measure measure) {
+  switch (measure) {
+    case NoiseSettings::Measure::HalfPeakToPeak:
+      return NoiseMeasure::HalfPeakToPeak;
+    case NoiseSettings::Measure::PeakToPeak:
+      return NoiseMeasure::PeakToPeak;
+    case NoiseSettings::Measure::StandardDeviation:
+      return NoiseMeasure::StandardDeviation;
+  }
+  return NoiseMeasure::HalfPeakToPeak;
+}
+
+// What judging needs to know of how the target is measured.
+void tell_judgement(AnalyteSettings& settings) {
+  const IntegrationSettings& integration = settings.target.integration;
+  settings.analyte = settings.target.id;
+  settings.response = response_kind(integration.response);
+  settings.bounds_own = integration.bounds == IntegrationSettings::Bounds::Own;
+  settings.baseline_biased =
+      integration.baseline != IntegrationSettings::Baseline::Valley;
+  settings.noise_measure = noise_measure(settings.target.noise.measure);
+}
+
 AnalyteSettings analyte_settings(const MethodElement& analyte,
                                  const MethodElement& method) {
   AnalyteSettings settings;
   settings.target = target_settings(analyte, method, &analyte);
+  tell_judgement(settings);
   settings.internal_standard =
       Section(*analyte.rule, &analyte).text("internal-standard").value_or("");
   settings.calibration = calibration_settings(analyte.child("calibration"),

@@ -24,9 +24,9 @@ CalibrationSet set_of(Calibration calibration) {
   return set;
 }
 
-AnalyteSettings asking(const CalibrationAcceptance& acceptance) {
-  AnalyteSettings settings;
-  settings.target.id = "zinol";
+AnalyteRules asking(const CalibrationAcceptance& acceptance) {
+  AnalyteRules settings;
+  settings.analyte = "zinol";
   settings.acceptance.calibration = acceptance;
   return settings;
 }

@@ -253,7 +253,7 @@ TEST(JudgeAnalyte, NarrowedRangeEndsAtTheHighestAcceptedLevel) {
 
 TEST(JudgeAnalyte, InternalStandardFromEndToEnd) {
   NightBuilder night = ordinary_night();
-  night.with_internal_standard = true;
+  night.settings.internal_standard = "is1";
   for (NightRow& row : night.rows) {
     const bool blank = row.injection.role == Role::SolventBlank;
     row.internal_standard = peak_of(blank ? 0.0 : 100.0, !blank);

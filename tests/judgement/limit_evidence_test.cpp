@@ -102,16 +102,15 @@ TEST(LimitEvidence, SettingsThatBiasBlanksAreHandedOn) {
   night.standard(1.0);
   EXPECT_FALSE(evidence_of(night).bounds_own);
   EXPECT_FALSE(evidence_of(night).baseline_biased);
-  night.settings.target.integration.bounds = IntegrationSettings::Bounds::Own;
-  night.settings.target.integration.baseline =
-      IntegrationSettings::Baseline::Snip;
+  night.settings.bounds_own = true;
+  night.settings.baseline_biased = true;
   EXPECT_TRUE(evidence_of(night).bounds_own);
   EXPECT_TRUE(evidence_of(night).baseline_biased);
 }
 
 TEST(LimitEvidence, BlanksWithoutInternalStandardAreNoted) {
   NightBuilder night;
-  night.with_internal_standard = true;
+  night.settings.internal_standard = "is1";
   night.standard(1.0).internal_standard = test::peak_of(100.0);
   night.add(Role::SolventBlank, 0.1).internal_standard =
       test::peak_of(0.0, false);

@@ -25,6 +25,7 @@ struct NightRow {
   Injection injection;
   Outcome<Peak> peak = NotApplicable{"not measured"};
   std::optional<Outcome<Peak>> internal_standard;
+  std::string signal_unit = {};
 };
 
 /// One analyte "zinol" of a night, put together by hand. The detector gives an
@@ -32,7 +33,7 @@ struct NightRow {
 class NightBuilder {
  public:
   NightBuilder() {
-    settings.target.id = "zinol";
+    settings.analyte = "zinol";
     units.concentration = "ug/L";
     units.result = "ug/L";
   }
@@ -71,30 +72,24 @@ class NightBuilder {
     measured_.clear();
     for (std::size_t i = 0; i < rows.size(); ++i) {
       if (rows[i].injection.role == Role::Conditioning) continue;
-      measured_.push_back(
-          {&sequence.injections[i], rows[i].peak, rows[i].internal_standard});
+      measured_.push_back({&sequence.injections[i], rows[i].peak,
+                           rows[i].internal_standard, rows[i].signal_unit});
     }
     return measured_;
   }
 
   MeasuredAnalyte collect() {
     measured();
-    return collect_responses(
-        settings, units, with_internal_standard ? &internal_standard : nullptr,
-        sequence, measured_);
+    return collect_responses(settings, units, sequence, measured_);
   }
 
   AnalyteJudgement judge(const std::string& template_reason = {}) {
     measured();
-    return judge_analyte(settings, units,
-                         with_internal_standard ? &internal_standard : nullptr,
-                         sequence, measured_, template_reason);
+    return judge_analyte(settings, units, sequence, measured_, template_reason);
   }
 
-  AnalyteSettings settings;
+  AnalyteRules settings;
   UnitSettings units;
-  InternalStandardSettings internal_standard;
-  bool with_internal_standard = false;
   double sensitivity = 2.0;
   std::deque<NightRow> rows;
   std::vector<LevelEntry> levels;

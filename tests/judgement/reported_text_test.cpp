@@ -70,6 +70,33 @@ TEST(SampleUnits, FactorFollowsDilutionAndPreparation) {
   EXPECT_TRUE(test::same_bits(sample_factor(injection, units), 0.25));
 }
 
+TEST(SampleUnits, AVialBesideWeighedSamplesKeepsItsConcentration) {
+  UnitSettings units;
+  units.concentration = "mg/L";
+  units.result = "ug/g";
+  units.factor = 1000.0;
+  units.sample_amount = "mg";
+  units.final_volume = "mL";
+  Injection check;
+  check.dilution = 2.0;
+  EXPECT_TRUE(test::same_bits(sample_factor(check, units), 2.0));
+  EXPECT_EQ(result_unit(check, units), "mg/L");
+  Injection weighed;
+  weighed.final_volume = 5.0;
+  weighed.sample_amount = 500.0;
+  EXPECT_TRUE(test::same_bits(sample_factor(weighed, units), 10.0));
+  EXPECT_EQ(result_unit(weighed, units), "ug/g");
+}
+
+TEST(SampleUnits, WithoutPreparationTheFactorConvertsEveryVial) {
+  UnitSettings units;
+  units.concentration = "ug/L";
+  units.result = "mg/L";
+  units.factor = 0.001;
+  EXPECT_TRUE(test::same_bits(sample_factor(Injection{}, units), 0.001));
+  EXPECT_EQ(result_unit(Injection{}, units), "mg/L");
+}
+
 TEST(SampleUnits, DropsTheArithmeticsOwnErrorOnly) {
   EXPECT_TRUE(test::same_bits(in_sample(0.1, 3.0), 0.3));
   EXPECT_TRUE(test::same_bits(in_sample(0.0345, 100.0), 3.45));

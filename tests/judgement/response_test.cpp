@@ -19,16 +19,14 @@ TEST(Response, AreaOrHeight) {
   NightBuilder night;
   night.add(Role::Sample, 7.0);
   EXPECT_TRUE(same_bits(night.collect().injections[0].response->value, 7.0));
-  night.settings.target.integration.response =
-      IntegrationSettings::Response::Height;
+  night.settings.response = ResponseKind::Height;
   EXPECT_TRUE(same_bits(night.collect().injections[0].response->value, 70.0));
 }
 
 TEST(Response, TemplateThatWasNotComputedIsNoZero) {
   NightBuilder night;
   night.add(Role::Sample, 7.0);
-  night.settings.target.integration.response =
-      IntegrationSettings::Response::Template;
+  night.settings.response = ResponseKind::Template;
   const MeasuredAnalyte analyte = night.collect();
   ASSERT_FALSE(analyte.injections[0].response.has_value());
   night.rows[0].peak.value().template_response = 5.0;
@@ -49,7 +47,7 @@ TEST(Response, InternalStandardAlgebraHoldsThroughDilution) {
   constexpr double kStandardResponse = 2.0;
   constexpr double kAdded = 50.0;
   NightBuilder night;
-  night.with_internal_standard = true;
+  night.settings.internal_standard = "is1";
   for (const double dilution : {1.0, 2.0, 10.0, 25.0}) {
     for (const double sensitivity : {0.5, 1.0, 1.7}) {
       const double in_vial = 80.0 / dilution;
@@ -78,7 +76,7 @@ TEST(Response, WithoutInternalStandardPeakThereIsNoResult) {
       peak_of(-1.0), unseen};
   for (const auto& peak : absent) {
     NightBuilder night;
-    night.with_internal_standard = true;
+    night.settings.internal_standard = "is1";
     night.add(Role::Sample, 7.0).internal_standard = peak;
     const MeasuredAnalyte analyte = night.collect();
     ASSERT_FALSE(analyte.injections[0].response.has_value());
@@ -90,7 +88,7 @@ TEST(Response, WithoutInternalStandardPeakThereIsNoResult) {
 
 NightBuilder night_with_standards() {
   NightBuilder night;
-  night.with_internal_standard = true;
+  night.settings.internal_standard = "is1";
   night.standard(10.0).internal_standard = peak_of(90.0);
   auto& diluted = night.standard(20.0);
   diluted.internal_standard = peak_of(11.0);
@@ -122,7 +120,7 @@ TEST(Response, CarriedOverInternalStandardInABlankCountsAsNone) {
 
 TEST(Response, NoStandardShowsOneThenTheBlankHasNoResultEither) {
   NightBuilder night;
-  night.with_internal_standard = true;
+  night.settings.internal_standard = "is1";
   night.add(Role::SolventBlank, 5.0).internal_standard = peak_of(0.1, false);
   EXPECT_FALSE(night.collect().injections[0].response.has_value());
 }
@@ -147,7 +145,7 @@ TEST(Standards, OnlyThoseWhoseLevelContainsTheAnalyte) {
 
 TEST(Standards, SaturatedOrUnseenOnesAreNotUsed) {
   NightBuilder night;
-  night.with_internal_standard = true;
+  night.settings.internal_standard = "is1";
   for (const double x : {0.0, 1.0, 2.0, 3.0}) {
     night.standard(x).internal_standard = peak_of(100.0);
   }

@@ -92,6 +92,17 @@ TEST(Tables, StandardsShowWhichWereUsed) {
             "toluene,1,9,L2,5,99,,,,no,saturated\n");
 }
 
+TEST(Tables, AStandardWithoutAResponseKeepsItsPlaceInRunOrder) {
+  PublishedRun run = test::small_run();
+  run.analytes[0].sets[0].unmeasured = {{4, "L3", 1, "file-refused"},
+                                        {12, "L2", 5, "no-signal"}};
+  EXPECT_TRUE(table(write_standards_table, run)
+                  .ends_with("toluene,1,4,L3,1,,,,,no,file-refused\n"
+                             "toluene,1,9,L2,5,99,,,,no,saturated\n"
+                             "toluene,1,12,L2,5,,,,,no,no-signal\n"))
+      << table(write_standards_table, run);
+}
+
 TEST(Tables, PeaksHaveARowForEveryTargetAndInjection) {
   EXPECT_EQ(table(write_peaks_table, test::small_run()),
             "injection,analyte,found,retention_time,start,end,area,height,"

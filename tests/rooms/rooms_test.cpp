@@ -30,8 +30,8 @@ const std::map<std::string, Names>& knows() {
         {"limits", {"base", "numerics", "chromatogram", "calibration"}},
         {"ledger", {"base"}},
     };
-    map["judgement"] = kComputing;
-    map["judgement"].erase("judgement");
+    map["judgement"] = map["limits"];
+    map["judgement"].insert("limits");
     map["sheets"] = kComputing;
     map["record"] = kComputing;
     map["record"].insert("sheets");

@@ -29,7 +29,7 @@ struct CalibrationVerdict {
 ///
 /// Source: criteria after US EPA SW-846 method 8000D and ICH M10 (2022), 3.3.5;
 /// from memory.
-CalibrationVerdict check_calibration(const AnalyteSettings& settings,
+CalibrationVerdict check_calibration(const AnalyteRules& settings,
                                      const CalibrationSet& set);
 
 }  // namespace loqsmith

@@ -21,6 +21,8 @@ struct MeasuredInjection {
   Outcome<Peak> peak = NotApplicable{"not measured"};
   /// Nothing: the analyte has no internal standard.
   std::optional<Outcome<Peak>> internal_standard;
+  /// Unit of the response as the file states it; empty: not stated.
+  std::string signal_unit = {};
 };
 
 /// From responses to verdicts: responses (area, height or ratio to the
@@ -29,11 +31,11 @@ struct MeasuredInjection {
 ///
 /// @param template_reason  why the analyte could not be learned; empty: it was.
 ///                         Then every result is withheld with that reason.
-AnalyteJudgement judge_analyte(
-    const AnalyteSettings& settings, const UnitSettings& units,
-    const InternalStandardSettings* internal_standard, const Sequence& sequence,
-    const std::vector<MeasuredInjection>& injections,
-    const std::string& template_reason);
+AnalyteJudgement judge_analyte(const AnalyteRules& settings,
+                               const UnitSettings& units,
+                               const Sequence& sequence,
+                               const std::vector<MeasuredInjection>& injections,
+                               const std::string& template_reason);
 
 /// What `night` found about the files; the checks that every run makes.
 struct SequenceFacts {

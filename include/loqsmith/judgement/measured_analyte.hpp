@@ -21,7 +21,7 @@ struct InjectionResponse {
 
 /// One analyte of the night, before anything is judged. In run order.
 struct MeasuredAnalyte {
-  const AnalyteSettings* settings = nullptr;
+  const AnalyteRules* settings = nullptr;
   const UnitSettings* units = nullptr;
   const Sequence* sequence = nullptr;
   std::vector<InjectionResponse> injections;
@@ -29,8 +29,7 @@ struct MeasuredAnalyte {
 
 /// The arguments must outlive what is returned.
 MeasuredAnalyte collect_responses(
-    const AnalyteSettings& settings, const UnitSettings& units,
-    const InternalStandardSettings* internal_standard, const Sequence& sequence,
-    const std::vector<MeasuredInjection>& injections);
+    const AnalyteRules& settings, const UnitSettings& units,
+    const Sequence& sequence, const std::vector<MeasuredInjection>& injections);
 
 }  // namespace loqsmith

@@ -6,7 +6,6 @@
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/judgement/judge_analyte.hpp"
-#include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
 
@@ -22,15 +21,14 @@ struct Response {
 
 /// How the responses of one analyte are formed, the same for every injection.
 struct ResponseRule {
-  IntegrationSettings::Response measure = IntegrationSettings::Response::Area;
+  ResponseKind measure = ResponseKind::Area;
   bool has_internal_standard = false;
   /// Mean of the standards' internal-standard responses, each referred to the
   /// undiluted internal standard; nothing: no standard shows one.
   std::optional<double> mean_internal_standard;
 };
 
-ResponseRule response_rule(const AnalyteSettings& settings,
-                           const InternalStandardSettings* internal_standard,
+ResponseRule response_rule(const AnalyteRules& settings,
                            const std::vector<MeasuredInjection>& injections);
 
 /// The response of one injection. With an internal standard

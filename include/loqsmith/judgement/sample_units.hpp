@@ -1,13 +1,25 @@
 #pragma once
 
+#include <string>
+
 #include "loqsmith/chromatogram/sequence.hpp"
 #include "loqsmith/judgement/settings.hpp"
 
 namespace loqsmith {
 
+/// True where the injection was not prepared although the method states its
+/// results for an amount of sample (a standard, a check standard, a solvent
+/// blank beside weighed samples): then its result stays a concentration.
+bool stays_in_the_vial(const Injection& injection, const UnitSettings& units);
+
 /// From the vial to the sample: dilution x final_volume / sample_amount x
-/// factor; without preparation columns dilution x factor. Always > 0.
+/// factor; where the method uses no preparation columns dilution x factor;
+/// where the injection stays in the vial its dilution alone. Always > 0.
 double sample_factor(const Injection& injection, const UnitSettings& units);
+
+/// Unit of the injection's result: the method's result unit, or its
+/// concentration unit where the injection stays in the vial.
+std::string result_unit(const Injection& injection, const UnitSettings& units);
 
 /// A vial concentration, limit or uncertainty in the sample's unit.
 ///

@@ -5,8 +5,8 @@
 #include <string>
 
 #include "loqsmith/calibration/settings.hpp"
+#include "loqsmith/limits/evidence.hpp"
 #include "loqsmith/limits/settings.hpp"
-#include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
 
@@ -75,15 +75,17 @@ struct UnitSettings {
   std::string final_volume;
 };
 
-struct InternalStandardSettings {
-  TargetSettings target;
-  double concentration = 0.0;  ///< in the undiluted vial, > 0
-};
+/// What of a peak the response is.
+enum class ResponseKind { Area, Height, Template };
 
-/// Everything the method says of one analyte, its own settings already merged
-/// over the method's.
-struct AnalyteSettings {
-  TargetSettings target;
+/// Everything that judging one analyte needs of the method, the analyte's own
+/// settings already merged over the method's.
+struct AnalyteRules {
+  std::string analyte;  ///< id
+  ResponseKind response = ResponseKind::Area;
+  bool bounds_own = false;       ///< integrated over the feet found
+  bool baseline_biased = false;  ///< asymmetric least squares or snip
+  NoiseMeasure noise_measure = NoiseMeasure::HalfPeakToPeak;
   std::string internal_standard;  ///< id; empty: external calibration
   CalibrationSettings calibration;
   LimitSettings limits;

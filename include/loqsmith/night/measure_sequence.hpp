@@ -17,6 +17,7 @@ struct InjectionMeasured {
   int injection = 0;
   std::vector<Outcome<Peak>>
       peaks;  ///< one a target of Learned; conditioning: none
+  std::vector<std::string> signal_units;  ///< one a peak; empty: not stated
   SequenceFacts::FileFact fact;
   std::vector<InputProblem> problems;
   std::vector<FigureCurve> curves;

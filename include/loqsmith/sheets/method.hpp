@@ -5,6 +5,7 @@
 
 #include "loqsmith/chromatogram/trace_selector.hpp"
 #include "loqsmith/judgement/settings.hpp"
+#include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
 
@@ -13,6 +14,17 @@ struct DefaultUsed {
   std::string element;    ///< "integration", "analyte[atrazine]/calibration"
   std::string attribute;  ///< "baseline"
   std::string value;      ///< "valley"
+};
+
+struct InternalStandardSettings {
+  TargetSettings target;
+  double concentration = 0.0;  ///< in the undiluted vial, > 0
+};
+
+/// Everything the method says of one analyte: how it is measured and how it is
+/// judged, its own settings already merged over the method's.
+struct AnalyteSettings : AnalyteRules {
+  TargetSettings target;
 };
 
 /// method.xml, whole and merged.
