@@ -10,17 +10,23 @@
 namespace loqsmith {
 namespace {
 
+struct Reading {
+  DocumentSource source;
+  std::size_t generated_left = kMostGenerated;
+};
+
 // The signal comes first: its numbers are stored, so that no more times are
 // generated than there are values.
-Trace decode(const AnimlTrace& described, DocumentSource& source) {
+Trace decode(const AnimlTrace& described, Reading& reading) {
+  DocumentSource& source = reading.source;
   source.places.pass(described.time.node->offset);
   Trace trace;
   trace.header = described.header;
   trace.warnings = described.warnings;
-  trace.signal =
-      decode_animl_series(described.signal, trace.header.points, source);
-  trace.minutes =
-      decode_animl_series(described.time, trace.header.points, source);
+  trace.signal = decode_animl_series(described.signal, trace.header.points,
+                                     reading.generated_left, source);
+  trace.minutes = decode_animl_series(described.time, trace.header.points,
+                                      reading.generated_left, source);
   for (double& time : trace.minutes) {
     time = time * described.unit.numerator / described.unit.denominator;
   }
@@ -36,7 +42,7 @@ Trace decode(const AnimlTrace& described, DocumentSource& source) {
 }
 
 void take(AnimlTrace& described, const std::vector<TraceSelector>* wanted,
-          DocumentSource& source, FileContents& contents) {
+          Reading& reading, FileContents& contents) {
   TraceHeader& header = described.header;
   if (described.fault) {
     contents.refused.push_back(
@@ -48,7 +54,7 @@ void take(AnimlTrace& described, const std::vector<TraceSelector>* wanted,
     return;
   }
   try {
-    contents.traces.push_back(decode(described, source));
+    contents.traces.push_back(decode(described, reading));
   } catch (const InputError& error) {
     InputProblem problem = error.problems().front();
     problem.found += " (trace " + in_quotes(header.id) + ")";
@@ -61,7 +67,8 @@ void take(AnimlTrace& described, const std::vector<TraceSelector>* wanted,
 FileContents read_animl(std::string_view bytes, const std::string& name,
                         const ReadPolicy& policy,
                         const std::vector<TraceSelector>* wanted) {
-  DocumentSource source{bytes, name, policy, TextPlaces(bytes)};
+  Reading reading{{bytes, name, policy, TextPlaces(bytes)}};
+  DocumentSource& source = reading.source;
   AnimlTree tree(source);
   scan_xml(bytes, name, XmlLimits{}, tree);
   source.places = TextPlaces(bytes);  // from the beginning again
@@ -74,7 +81,7 @@ FileContents read_animl(std::string_view bytes, const std::string& name,
   contents.warnings = tree.notes().all();
   source.places = TextPlaces(bytes);
   for (AnimlTrace& trace : steps.traces()) {
-    take(trace, wanted, source, contents);
+    take(trace, wanted, reading, contents);
   }
   return contents;
 }

@@ -9,6 +9,9 @@
 namespace loqsmith {
 namespace {
 
+// Some 150 bytes each; values and what is stepped over do not count.
+constexpr std::size_t kMostNodes = 2'000'000;
+
 std::string tag(std::string_view name) { return "<" + std::string(name) + ">"; }
 
 }  // namespace
@@ -81,6 +84,11 @@ void AnimlTree::begin_frame(const ElementRule& rule, const XmlStart& start) {
              parent.name == "IndividualValueSet") {
     parent.values.push_back({rule.name, start.end, start.end});
   } else {
+    if (++node_count_ > kMostNodes) {
+      refuse(start.offset,
+             "more than " + std::to_string(kMostNodes) + " elements",
+             "fewer elements");
+    }
     node = &parent.children.emplace_back();
   }
   if (node != nullptr) {
@@ -155,8 +163,11 @@ const ElementRule* AnimlTree::rule_of_child(const XmlStart& start) {
 void AnimlTree::check_order(std::size_t place, const XmlStart& start) {
   Frame& parent = frames_.back();
   const std::string_view name = start.local_name;
-  // The values of a set may come in any order.
-  const bool ordered = parent.rule->name != "IndividualValueSet";
+  // The values of a set may come in any order. Kinds of value sets must not be
+  // mixed at all, which their decoder says; only the Unit must come last.
+  const bool ordered = parent.rule->name != "IndividualValueSet" &&
+                       (parent.rule->name != "Series" ||
+                        parent.place + 1 == parent.rule->children.size());
   if (ordered && parent.has_children && place < parent.place) {
     fault(start.offset,
           tag(name) + " too late inside " + tag(parent.rule->name),

@@ -30,8 +30,11 @@ bool is_generated(const AnimlNode& set) {
 class SeriesDecoder {
  public:
   SeriesDecoder(const AnimlSeries& series, std::size_t length,
-                DocumentSource& source)
-      : series_(series), length_(length), source_(source) {}
+                std::size_t& generated_left, DocumentSource& source)
+      : series_(series),
+        length_(length),
+        generated_left_(generated_left),
+        source_(source) {}
 
   std::vector<double> run() {
     std::vector<const AnimlNode*> sets;
@@ -208,10 +211,15 @@ class SeriesDecoder {
       fail(*series_.node, std::to_string(next) + " values",
            std::to_string(length_) + ", the length of the SeriesSet");
     }
-    if (!series_.is_time && generated > kMostGenerated) {
+    if (!series_.is_time) spend(generated);
+  }
+
+  void spend(std::size_t generated) {
+    if (generated > generated_left_) {
       fail(*series_.node, std::to_string(generated) + " generated values",
-           "at most " + std::to_string(kMostGenerated));
+           "at most " + std::to_string(kMostGenerated) + " in a file");
     }
+    generated_left_ -= generated;
   }
 
   // Each generated value by one multiplication, so that rounding errors do not
@@ -235,6 +243,7 @@ class SeriesDecoder {
 
   const AnimlSeries& series_;
   std::size_t length_;
+  std::size_t& generated_left_;
   DocumentSource& source_;
 };
 
@@ -242,8 +251,9 @@ class SeriesDecoder {
 
 std::vector<double> decode_animl_series(const AnimlSeries& series,
                                         std::size_t length,
+                                        std::size_t& generated_left,
                                         DocumentSource& source) {
-  return SeriesDecoder(series, length, source).run();
+  return SeriesDecoder(series, length, generated_left, source).run();
 }
 
 std::string animl_encoding(const AnimlNode& series) {

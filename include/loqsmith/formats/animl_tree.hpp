@@ -85,6 +85,7 @@ class AnimlTree : public XmlHandler {
   Notes notes_;
   AnimlNode root_;
   std::vector<Frame> frames_;
+  std::size_t node_count_ = 0;
   std::size_t skipped_depth_ = 0;  ///< open elements that are stepped over
   std::set<std::string, std::less<>> ids_;
   std::map<std::size_t, InputProblem> faults_;  ///< by the node's offset
