@@ -46,7 +46,8 @@ std::string everything(const FileContents& contents) {
   for (const RefusedTrace& refused : contents.refused) {
     items.push_back(shown(refused.header) + " refused");
   }
-  return listed(items);
+  if (contents.skipped.empty()) return listed(items);
+  return listed(items) + "; skipped: " + listed(contents.skipped);
 }
 
 std::vector<MeantRun> require_runs(const FileContents& contents,

@@ -217,6 +217,14 @@ TEST(AnimlReader, SkipsWhatIsNoTraceAndSaysWhy) {
     EXPECT_NE(contents.skipped[i].find(reasons[i]), std::string::npos)
         << contents.skipped[i];
   }
+  TraceSelector selector;
+  selector.name = "Remark";
+  try {
+    select_trace(contents, selector, "", "a.animl");
+    FAIL();
+  } catch (const InputError& error) {
+    EXPECT_NE(std::string(error.what()).find(reasons[0]), std::string::npos);
+  }
 }
 
 TEST(AnimlReader, DecodesOnlyWhatIsWanted) {
