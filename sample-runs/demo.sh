@@ -10,7 +10,7 @@ case $out in
 esac
 
 sh tests/debian-packages.sh g++ cmake ninja-build libboost-dev \
-  libboost-program-options-dev libeigen3-dev libpugixml-dev libssl-dev \
+  libboost-program-options-dev libeigen3-dev libssl-dev \
   nlohmann-json3-dev libdeflate-dev
 
 echo "Building loqsmith (a few minutes the first time)"

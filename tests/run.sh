@@ -5,7 +5,7 @@ set -eu
 cd "$(dirname "$0")/.."
 
 sh tests/debian-packages.sh g++ cmake ninja-build libboost-dev \
-  libboost-program-options-dev libeigen3-dev libpugixml-dev libssl-dev \
+  libboost-program-options-dev libeigen3-dev libssl-dev \
   nlohmann-json3-dev libdeflate-dev libgtest-dev libxml2-utils locales
 
 launcher=

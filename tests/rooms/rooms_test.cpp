@@ -47,9 +47,11 @@ const std::map<std::string, Names>& knows() {
 // Heavy or dangerous headers and the rooms whose sources may include them.
 const std::vector<std::pair<std::string, Names>>& guarded_headers() {
   static const std::vector<std::pair<std::string, Names>> kGuarded{
-      {"Eigen/", {"numerics"}},           {"boost/math/", {"numerics"}},
-      {"boost/program_options", {"cli"}}, {"pugixml", {"formats", "sheets"}},
-      {"nlohmann/", {"ledger"}},          {"openssl/", {"base"}},
+      {"Eigen/", {"numerics"}},
+      {"boost/math/", {"numerics"}},
+      {"boost/program_options", {"cli"}},
+      {"nlohmann/", {"ledger"}},
+      {"openssl/", {"base"}},
       {"libdeflate", {"formats"}},
   };
   return kGuarded;
