@@ -4,6 +4,7 @@
 #include <cmath>
 #include <cstddef>
 
+#include "loqsmith/signal/autocovariance.hpp"
 #include "loqsmith/signal/peak_free.hpp"
 #include "loqsmith/signal/point_noise.hpp"
 #include "loqsmith/signal/summits.hpp"
@@ -15,13 +16,6 @@ constexpr double kReachWidths = 10.0;
 constexpr std::size_t kFewestPoints = 20;
 constexpr std::size_t kMostLags = 20;
 constexpr double kCut = 3.5;
-
-// Residuals about a line, and which of them count.
-struct Residuals {
-  std::vector<double> values;
-  std::vector<bool> used;
-  std::size_t count = 0;
-};
 
 Residuals residuals_about_line(const Trace& near,
                                const std::vector<bool>& free) {
@@ -39,23 +33,11 @@ Residuals residuals_about_line(const Trace& near,
     const double r =
         near.signal[i] - line.intercept - line.slope * near.minutes[i];
     const bool use = free[i] && std::abs(r) <= cut;
-    residuals.values.push_back(r);
+    residuals.values.push_back(use ? r : 0.0);
     residuals.used.push_back(use);
     if (use) ++residuals.count;
   }
   return residuals;
-}
-
-// Mean product of residuals `lag` points apart.
-double covariance(const Residuals& residuals, std::size_t lag) {
-  double sum = 0.0;
-  std::size_t pairs = 0;
-  for (std::size_t i = 0; i + lag < residuals.values.size(); ++i) {
-    if (!residuals.used[i] || !residuals.used[i + lag]) continue;
-    sum += residuals.values[i] * residuals.values[i + lag];
-    ++pairs;
-  }
-  return pairs > 0 ? sum / static_cast<double>(pairs) : 0.0;
 }
 
 struct Creep {
@@ -120,11 +102,11 @@ NoiseModel fit_noise_model(const Trace& trace, double start_minutes,
     return white_noise(point_to_point_noise(near.signal));
   }
   const double n = static_cast<double>(residuals.count);
-  const double variance = covariance(residuals, 0) * n / (n - 2.0);
+  const double variance = autocovariance(residuals, 0) * n / (n - 2.0);
   std::vector<double> covariances;
   const std::size_t lags = std::min(kMostLags, residuals.count / 5);
   for (std::size_t lag = 1; lag <= lags; ++lag) {
-    covariances.push_back(covariance(residuals, lag));
+    covariances.push_back(autocovariance(residuals, lag));
   }
   const Creep creep = fit_creep(covariances, variance);
   if (creep.variance * creep.correlation < 2.0 * variance / std::sqrt(n)) {
