@@ -42,11 +42,13 @@ double standard_deviation(std::span<const double> values) {
 }
 
 double median(std::span<const double> values) {
-  std::vector<double> sorted(values.begin(), values.end());
-  std::sort(sorted.begin(), sorted.end());
-  const std::size_t half = sorted.size() / 2;
-  if (sorted.size() % 2 == 1) return sorted[half];
-  return sorted[half - 1] + 0.5 * (sorted[half] - sorted[half - 1]);
+  std::vector<double> parted(values.begin(), values.end());
+  const auto middle =
+      parted.begin() + static_cast<std::ptrdiff_t>(parted.size() / 2);
+  std::nth_element(parted.begin(), middle, parted.end());
+  if (parted.size() % 2 == 1) return *middle;
+  const double below = *std::max_element(parted.begin(), middle);
+  return below + 0.5 * (*middle - below);
 }
 
 double robust_deviation(std::span<const double> values) {

@@ -187,6 +187,21 @@ void mend_missing_anchors(const SmoothedStretch& stretch,
   add_reason(window, true, "baseline-one-sided");
 }
 
+double noise_around(const SmoothedStretch& stretch, const Summit& summit,
+                    double width_half) {
+  const std::vector<double>& t = stretch.minutes;
+  const auto first =
+      std::lower_bound(t.begin(), t.end(), summit.minutes - width_half) -
+      t.begin();
+  const auto last =
+      std::upper_bound(t.begin(), t.end(), summit.minutes + width_half) -
+      t.begin();
+  return point_to_point_noise(
+      std::span(stretch.signal)
+          .subspan(static_cast<std::size_t>(first),
+                   static_cast<std::size_t>(last - first)));
+}
+
 }  // namespace
 
 double PlacedWindow::right_share(double minutes) const {
@@ -240,21 +255,10 @@ std::vector<Summit> significant_summits(const SmoothedStretch& stretch,
           ? 0.0
           : 1e-12 * std::abs(*std::max_element(stretch.smoothed.begin(),
                                                stretch.smoothed.end()));
-  const std::vector<double>& t = stretch.minutes;
+  const double unit = multiple * std::sqrt(2.0) * stretch.gain;
   for (const Summit& summit : summits) {
-    const auto first =
-        std::lower_bound(t.begin(), t.end(), summit.minutes - width_half) -
-        t.begin();
-    const auto last =
-        std::upper_bound(t.begin(), t.end(), summit.minutes + width_half) -
-        t.begin();
-    const double local = point_to_point_noise(
-        std::span(stretch.signal)
-            .subspan(static_cast<std::size_t>(first),
-                     static_cast<std::size_t>(last - first)));
-    const double least =
-        multiple * std::sqrt(2.0) * stretch.gain * std::max(noise, local);
-    if (summit.prominence > std::max(least, rounding)) {
+    if (!(summit.prominence > std::max(unit * noise, rounding))) continue;
+    if (summit.prominence > unit * noise_around(stretch, summit, width_half)) {
       significant.push_back(summit);
     }
   }

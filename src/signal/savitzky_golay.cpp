@@ -1,25 +1,26 @@
 #include "loqsmith/signal/savitzky_golay.hpp"
 
 #include <algorithm>
-#include <array>
 #include <cmath>
+
+#include "loqsmith/signal/local_fit.hpp"
 
 namespace loqsmith {
 namespace {
 
-// Value, slope and curvature of one polynomial at the place asked for.
-using Jet = std::array<double, 3>;
+// How even times must be for the classical weights.
+constexpr double kEven = 0.01;
 
 Jet times_shifted(const Jet& p, double u) {
   return {u * p[0], u * p[1] + p[0], u * p[2] + 2.0 * p[1]};
 }
 
-bool evenly_spaced(std::span<const double> minutes) {
+bool even_to(std::span<const double> minutes, double share) {
   const double mean_step = (minutes.back() - minutes.front()) /
                            static_cast<double>(minutes.size() - 1);
   for (std::size_t i = 1; i < minutes.size(); ++i) {
     const double step = minutes[i] - minutes[i - 1];
-    if (!(std::abs(step - mean_step) <= 0.01 * mean_step)) return false;
+    if (!(std::abs(step - mean_step) <= share * mean_step)) return false;
   }
   return true;
 }
@@ -92,6 +93,26 @@ std::vector<double> savitzky_golay_weights(int points, int order,
   return local_polynomial_weights(nodes, 0.0, order, derivative);
 }
 
+bool evenly_spaced(std::span<const double> minutes) {
+  // Any part is then even to twice as much.
+  return minutes.size() < 2 || even_to(minutes, 0.45 * kEven);
+}
+
+void smooth_ends(std::span<const double> minutes,
+                 std::span<const double> signal, std::size_t half, int order,
+                 int derivative, std::vector<double>& result) {
+  const std::size_t n = signal.size();
+  const std::size_t points = std::min(2 * half + 1, n);
+  const auto d = static_cast<std::size_t>(derivative);
+  const LocalFit first(minutes.first(points), signal.first(points), order);
+  const std::size_t middle = std::min(half, n);
+  for (std::size_t i = 0; i < middle; ++i) result[i] = first.at(minutes[i])[d];
+  const LocalFit last(minutes.last(points), signal.last(points), order);
+  for (std::size_t i = n - std::min(half, n - middle); i < n; ++i) {
+    result[i] = last.at(minutes[i])[d];
+  }
+}
+
 std::vector<double> savitzky_golay(std::span<const double> minutes,
                                    std::span<const double> signal, int points,
                                    int order, int derivative) {
@@ -102,16 +123,16 @@ std::vector<double> savitzky_golay(std::span<const double> minutes,
     return result;
   }
   const Length used = usable_length(n, points, order, derivative);
+  // Of too few points all are used, for all places alike.
+  const std::size_t half = used.points % 2 == 1 ? used.points / 2 : n;
+  smooth_ends(minutes, signal, half, used.order, derivative, result);
   const std::vector<double> classical = savitzky_golay_weights(
       static_cast<int>(used.points), used.order, derivative);
-  for (std::size_t i = 0; i < n; ++i) {
-    const std::size_t half = used.points / 2;
-    const std::size_t first =
-        std::min(i > half ? i - half : 0, n - used.points);
-    const auto times = minutes.subspan(first, used.points);
-    const auto values = signal.subspan(first, used.points);
-    const bool middle = i == first + half && used.points % 2 == 1;
-    if (middle && evenly_spaced(times)) {
+  const bool all_even = evenly_spaced(minutes);
+  for (std::size_t i = half; i + half < n; ++i) {
+    const auto times = minutes.subspan(i - half, used.points);
+    const auto values = signal.subspan(i - half, used.points);
+    if (all_even || even_to(times, kEven)) {
       const double step =
           (times.back() - times.front()) / static_cast<double>(used.points - 1);
       result[i] = weighted(classical, values) / std::pow(step, derivative);

@@ -2,8 +2,10 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 #include "loqsmith/numerics/mean.hpp"
+#include "loqsmith/signal/moving_parabola.hpp"
 #include "loqsmith/signal/savitzky_golay.hpp"
 
 namespace loqsmith {
@@ -85,7 +87,12 @@ Trace cut_trace(const Trace& trace, double from_minutes, double to_minutes) {
 
 double typical_step(std::span<const double> minutes) {
   if (minutes.size() < 2) return 0.0;
+  if (evenly_spaced(minutes)) {
+    return (minutes.back() - minutes.front()) /
+           static_cast<double>(minutes.size() - 1);
+  }
   std::vector<double> steps;
+  steps.reserve(minutes.size());
   for (std::size_t i = 1; i < minutes.size(); ++i) {
     steps.push_back(minutes[i] - minutes[i - 1]);
   }
@@ -123,8 +130,10 @@ SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
   ready.signal = stretch.signal;
   ready.spikes = find_spikes(stretch.signal, noise.standard_deviation());
   const std::vector<double> clean = without_spikes(stretch, ready.spikes);
-  ready.smoothed = savitzky_golay(ready.minutes, clean, points, order, 0);
-  ready.slope = savitzky_golay(ready.minutes, clean, points, order, 1);
+  ValueAndSlope smoothed =
+      smooth_value_and_slope(ready.minutes, clean, points, order);
+  ready.smoothed = std::move(smoothed.value);
+  ready.slope = std::move(smoothed.slope);
   ready.points = points > order ? points : 1;
   ready.order = points > order ? order : 0;
   ready.gain = smoothing_gain(points, order, noise);

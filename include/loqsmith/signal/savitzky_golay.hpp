@@ -43,6 +43,15 @@ std::vector<double> savitzky_golay(std::span<const double> minutes,
                                    std::span<const double> signal, int points,
                                    int order, int derivative);
 
+/// True when the classical weights serve for every part of these times.
+bool evenly_spaced(std::span<const double> minutes);
+
+/// The first and last `half` points of `result` from the fits of the first and
+/// last 2 half + 1 points (of all, where they are fewer).
+void smooth_ends(std::span<const double> minutes,
+                 std::span<const double> signal, std::size_t half, int order,
+                 int derivative, std::vector<double>& result);
+
 /// Standard deviation of a smoothed point over that of a point, for
 /// independent noise: the square root of the middle weight.
 double smoothing_noise_gain(int points, int order);

@@ -14,20 +14,29 @@ namespace loqsmith {
 /// always `signal`; the rest only decides where.
 struct SmoothedStretch {
   std::vector<double> minutes;
-  std::vector<double> signal;       ///< as in the trace
+  std::vector<double> signal;       ///< as in the trace, or above its baseline
   std::vector<double> smoothed;     ///< without spikes, Savitzky-Golay
   std::vector<double> slope;        ///< of the same, per minute
   std::vector<std::size_t> spikes;  ///< single points left out of both
   int points = 1;                   ///< smoothing length used
   int order = 0;                    ///< of its polynomial, below points
   double gain = 1.0;  ///< sd of a smoothed point over that of a point
+  /// Where an estimated baseline has been taken off the signal: the trace's
+  /// own. Empty: `signal` is that.
+  std::vector<double> detector;
+  bool baseline_settled = true;  ///< see EstimatedBaseline
+
+  const std::vector<double>& as_detected() const {
+    return detector.empty() ? signal : detector;
+  }
 };
 
 /// The points of the trace from one time to another, and one point beyond
 /// either end where there is one.
 Trace cut_trace(const Trace& trace, double from_minutes, double to_minutes);
 
-/// Middle of the distances between points; zero for fewer than 2 points.
+/// Middle of the distances between points (their mean, where they are even);
+/// zero for fewer than 2 points.
 double typical_step(std::span<const double> minutes);
 
 /// Smoothing length that the settings ask for: their own, or the odd number
