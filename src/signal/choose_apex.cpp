@@ -45,9 +45,9 @@ std::optional<Candidate> examine(const SmoothedStretch& stretch,
   if (!placed) return {};
   Candidate candidate{summit, 0.0, 0.0};
   candidate.height = summit.value - placed->baseline_at(summit.minutes);
+  if (!(candidate.height > 0.0)) return {};
   candidate.deviation = weighted_noise(
       smoothed_height_weights(stretch, *placed, summit.minutes), noise);
-  if (!(candidate.height > 0.0)) return {};
   if (!(candidate.height >=
         target.integration.threshold * candidate.deviation)) {
     return {};

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 #include <cstddef>
+#include <span>
 
 #include "loqsmith/signal/autocovariance.hpp"
 #include "loqsmith/signal/peak_free.hpp"
@@ -120,7 +121,13 @@ double weighted_noise(const std::vector<double>& weights,
   double squares = 0.0;
   double crossed = 0.0;
   double carried = 0.0;
-  for (const double weight : weights) {
+  // Most points of a stretch have no weight: only those between the first and
+  // the last that have one matter.
+  const auto counts = [](double weight) { return weight != 0.0; };
+  const auto first = std::find_if(weights.begin(), weights.end(), counts);
+  const auto last = std::find_if(weights.rbegin(), weights.rend(), counts);
+  if (first == weights.end()) return 0.0;
+  for (const double weight : std::span(first, last.base())) {
     crossed += weight * carried;
     carried = noise.correlation * (carried + weight);
     squares += weight * weight;

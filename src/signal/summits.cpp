@@ -35,10 +35,6 @@ std::size_t first_at_or_after(const std::vector<double>& minutes, double at) {
       std::lower_bound(minutes.begin(), minutes.end(), at) - minutes.begin());
 }
 
-double lowest_value(const SmoothedStretch& stretch, double from, double to) {
-  return smoothed_at(stretch, lowest_between(stretch, from, to));
-}
-
 // Lowest value on the way from summit k to the next higher one (or the end).
 double valley_towards(const std::vector<Summit>& summits,
                       const std::vector<double>& valleys, std::size_t k,
@@ -52,16 +48,34 @@ double valley_towards(const std::vector<Summit>& summits,
   }
 }
 
+// Lowest value between two places that lie between points: of these two and
+// of the points [first, last) that part them.
+double lowest_of(const SmoothedStretch& stretch, std::size_t first,
+                 std::size_t last, double one_end, double other_end) {
+  double lowest = std::min(one_end, other_end);
+  for (std::size_t i = first; i < last; ++i) {
+    lowest = std::min(lowest, stretch.smoothed[i]);
+  }
+  return lowest;
+}
+
+// @param behind  first point behind each summit
 void measure_prominence(const SmoothedStretch& stretch,
+                        const std::vector<std::size_t>& behind,
                         std::vector<Summit>& summits) {
   if (summits.empty()) return;
   std::vector<double> valleys;
-  double from = stretch.minutes.front();
-  for (const Summit& summit : summits) {
-    valleys.push_back(lowest_value(stretch, from, summit.minutes));
-    from = summit.minutes;
+  valleys.reserve(summits.size() + 1);
+  double before = stretch.smoothed.front();
+  std::size_t from = 0;
+  for (std::size_t k = 0; k < summits.size(); ++k) {
+    valleys.push_back(
+        lowest_of(stretch, from, behind[k], before, summits[k].value));
+    before = summits[k].value;
+    from = behind[k];
   }
-  valleys.push_back(lowest_value(stretch, from, stretch.minutes.back()));
+  valleys.push_back(lowest_of(stretch, from, stretch.smoothed.size(), before,
+                              stretch.smoothed.back()));
   for (std::size_t k = 0; k < summits.size(); ++k) {
     const double higher = std::max(valley_towards(summits, valleys, k, true),
                                    valley_towards(summits, valleys, k, false));
@@ -142,7 +156,9 @@ SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
 
 std::vector<Summit> find_summits(const SmoothedStretch& stretch) {
   std::vector<Summit> summits;
+  std::vector<std::size_t> behind;
   const std::vector<double>& slope = stretch.slope;
+  const std::vector<double>& t = stretch.minutes;
   const std::size_t n = slope.size();
   std::size_t up = n;  // last point on the rise
   for (std::size_t i = 0; i < n; ++i) {
@@ -150,13 +166,20 @@ std::vector<Summit> find_summits(const SmoothedStretch& stretch) {
       up = i;
     } else if (slope[i] < 0.0 && up < n) {
       const double share = slope[up] / (slope[up] - slope[i]);
-      const double at = stretch.minutes[up] +
-                        share * (stretch.minutes[i] - stretch.minutes[up]);
-      summits.push_back({at, smoothed_at(stretch, at), 0.0});
+      const double at = t[up] + share * (t[i] - t[up]);
+      std::size_t next = up + 1;
+      while (next < i && t[next] <= at) ++next;
+      const double along = (at - t[next - 1]) / (t[next] - t[next - 1]);
+      summits.push_back(
+          {at,
+           stretch.smoothed[next - 1] +
+               along * (stretch.smoothed[next] - stretch.smoothed[next - 1]),
+           0.0});
+      behind.push_back(next);
       up = n;
     }
   }
-  measure_prominence(stretch, summits);
+  measure_prominence(stretch, behind, summits);
   return summits;
 }
 
