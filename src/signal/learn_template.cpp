@@ -62,6 +62,17 @@ double median_foot(const Peaks& peaks, double TeacherPeak::*foot,
   return median_of(free.empty() ? peaks : free, foot);
 }
 
+// The middle of what the teachers' own fits say, where any succeeded.
+void learn_model(const Peaks& teachers, WindowTemplate& window) {
+  Peaks fitted;
+  for (const TeacherPeak& peak : teachers) {
+    if (peak.sigma_minutes > 0.0) fitted.push_back(peak);
+  }
+  if (fitted.empty()) return;
+  window.sigma_minutes = median_of(fitted, &TeacherPeak::sigma_minutes);
+  window.tau_minutes = median_of(fitted, &TeacherPeak::tau_minutes);
+}
+
 std::vector<std::pair<int, double>> retention_drift(const Peaks& seen) {
   std::vector<std::pair<int, double>> drift;
   for (const TeacherPeak& peak : seen) {
@@ -99,6 +110,7 @@ Outcome<WindowTemplate> learn_template(const std::vector<TeacherPeak>& seen) {
                                      &TeacherPeak::right_overlapped);
   window.width_half_minutes =
       median_of(teachers, &TeacherPeak::width_half_minutes);
+  learn_model(teachers, window);
   for (const TeacherPeak& peak : teachers) {
     window.teachers.push_back(peak.injection);
   }

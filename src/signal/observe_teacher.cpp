@@ -105,6 +105,8 @@ TeacherPeak teacher_peak(const TeacherFeet& feet, int injection, Role role) {
   peak.saturated = feet.saturated;
   peak.left_overlapped = feet.left_overlapped;
   peak.right_overlapped = feet.right_overlapped;
+  peak.sigma_minutes = feet.sigma;
+  peak.tau_minutes = feet.tau;
   return peak;
 }
 

@@ -6,6 +6,7 @@
 #include <vector>
 
 #include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/model_overlap.hpp"
 #include "loqsmith/signal/noise.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
 #include "loqsmith/signal/place_window.hpp"
@@ -45,6 +46,7 @@ class Teacher {
   bool has_peak() const { return seen_; }
   double apex() const { return apex_; }
   const SmoothedStretch& stretch() const { return stretch_; }
+  const std::vector<Summit>& summits() const { return summits_; }
 
   Outcome<PlacedWindow> place(double left, double right) const {
     return place_window(stretch_, summits_,
@@ -142,6 +144,21 @@ std::optional<double> half_width(const SmoothedStretch& stretch,
   return width->total();
 }
 
+// Width, shape and overlapped feet from the fit; false where it fails.
+bool take_from_fit(const Teacher& teacher, const PlacedWindow& window,
+                   double width_half, TeacherFeet& feet) {
+  const Outcome<TaughtShape> taught =
+      teach_shape(teacher.stretch(), teacher.summits(), window, feet.apex,
+                  width_half, feet.noise);
+  if (!taught) return false;
+  feet.sigma = taught->sigma;
+  feet.tau = taught->tau;
+  feet.width_half = taught->width_half;
+  if (feet.left_overlapped) feet.left = taught->left;
+  if (feet.right_overlapped) feet.right = taught->right;
+  return true;
+}
+
 }  // namespace
 
 Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
@@ -177,15 +194,18 @@ Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
     feet.height =
         signal_near(stretch, feet.apex) - window->baseline_at(feet.apex);
   }
-  const auto width = half_width(stretch, *window, feet.apex, feet.height);
-  if (!width) {
-    return NotApplicable{"no-peak: it does not fall to half of its height"};
-  }
-  feet.width_half = *width;
   feet.left = feet.apex - window->left.minutes;
   feet.right = window->right.minutes - feet.apex;
   feet.left_overlapped = teacher.overlapped(*window, true);
   feet.right_overlapped = teacher.overlapped(*window, false);
+  const auto width = half_width(stretch, *window, feet.apex, feet.height);
+  const bool fitted =
+      target.integration.overlap == IntegrationSettings::Overlap::Model &&
+      take_from_fit(teacher, *window, width.value_or(width_half), feet);
+  if (!fitted && !width) {
+    return NotApplicable{"no-peak: it does not fall to half of its height"};
+  }
+  if (!fitted) feet.width_half = *width;
   feet.saturated =
       is_saturated(stretch.minutes, stretch.signal, window->left.minutes,
                    window->right.minutes, feet.height, feet.width_half);

@@ -23,6 +23,9 @@ struct TeacherPeak {
   bool saturated = false;           ///< flat top
   bool left_overlapped = false;     ///< a neighbour's valley is the left foot
   bool right_overlapped = false;
+  /// Only where the target's overlap is `model` and its fit succeeds; 0 else.
+  double sigma_minutes = 0.0;
+  double tau_minutes = 0.0;
 };
 
 /// Where the target is to be looked for and over what window it is measured.
@@ -34,6 +37,10 @@ struct WindowTemplate {
   std::vector<int> teachers;  ///< injections whose feet entered, in run order
   /// Retention time in run order; piecewise linear, constant beyond the last.
   std::vector<std::pair<int, double>> drift;  ///< injection, minutes
+  /// Medians of the fitted exponentially modified Gaussians, only where the
+  /// target's overlap is `model`; a sigma of 0: not known.
+  double sigma_minutes = 0.0;
+  double tau_minutes = 0.0;
 };
 
 /// The peak nearest the method's retention time within its window.

@@ -17,6 +17,8 @@ struct TeacherFeet {
   bool saturated = false;
   bool left_overlapped = false;
   bool right_overlapped = false;
+  double sigma = 0.0;  ///< of the fitted peak, overlap `model` only; 0: none
+  double tau = 0.0;
 };
 
 /// Where a peak begins and ends.
@@ -30,7 +32,10 @@ struct TeacherFeet {
 /// foot does not creep along a tail or a bent baseline. A second baseline just
 /// outside these feet then gives the final ones. A neighbour's valley ends the
 /// way; it counts as overlap when the signal there is still above 2.5 % of the
-/// height.
+/// height. Where the settings' overlap is `model` the peak is fitted together
+/// with its neighbours: width and overlapped feet are then those of the fitted
+/// peak (0.1 % of its height), so that the template spans a whole peak even
+/// where none of the standards shows one.
 ///
 /// @param apex        as seen so far, minutes
 /// @param width_half  as seen so far
