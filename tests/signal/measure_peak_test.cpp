@@ -156,8 +156,8 @@ TEST(MeasurePeak, NoSignal) {
 
 TEST(MeasurePeak, WhatThisVersionDoesNotComputeIsRefused) {
   TargetSettings target = target_at(5.0);
-  target.integration.overlap = IntegrationSettings::Overlap::Skim;
-  const auto peak = measured(simulate_trace(sample(300.0), "skim"), target);
+  target.integration.bounds = IntegrationSettings::Bounds::Own;
+  const auto peak = measured(simulate_trace(sample(300.0), "own"), target);
   ASSERT_FALSE(peak);
   EXPECT_TRUE(begins_with(peak.reason(), "not-available"));
 }
