@@ -21,8 +21,7 @@ ElementRule integration() {
                          {"snip", kLater}}),
                  "valley", "What is subtracted."),
        defaulted("overlap",
-                 choice({{"drop"}, {"skim", kLater}, {"model", kLater}}),
-                 "drop",
+                 choice({{"drop"}, {"skim"}, {"model"}}), "drop",
                  "Perpendicular drop, tangent skim, or exponentially modified "
                  "Gaussians fitted together."),
        defaulted("smoothing-points",

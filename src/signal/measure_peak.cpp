@@ -5,6 +5,7 @@
 
 #include "loqsmith/signal/choose_apex.hpp"
 #include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/point_noise.hpp"
@@ -22,8 +23,7 @@ constexpr double kMarginWidths = 10.0;
 bool available(const IntegrationSettings& settings) {
   return settings.response != IntegrationSettings::Response::Template &&
          settings.bounds == IntegrationSettings::Bounds::Template &&
-         settings.baseline == IntegrationSettings::Baseline::Valley &&
-         settings.overlap == IntegrationSettings::Overlap::Drop;
+         settings.baseline == IntegrationSettings::Baseline::Valley;
 }
 
 // The part of the trace that one target needs: its window of times, the feet,
@@ -108,11 +108,28 @@ class Measurement {
     peak_.area = integrate_window(stretch_, placed_);
     peak_.height = signal_near(stretch_, apex) - placed_.baseline_at(apex);
     if (placed_.left.dropped || placed_.right.dropped) peak_.overlap = "drop";
+    part_from_neighbours();
+  }
+
+  void part_from_neighbours() {
+    parted_ = part_overlap(stretch_, chosen_, placed_, window_,
+                           target_.integration.overlap, peak_.retention_minutes,
+                           point_noise_, peak_.reasons);
+    if (!parted_) return;
+    peak_.overlap = parted_->overlap;
+    peak_.retention_minutes = parted_->apex;
+    peak_.start_minutes = parted_->window.left.minutes;
+    peak_.end_minutes = parted_->window.right.minutes;
+    peak_.area = parted_->area;
+    peak_.height = parted_->height;
+    for (const std::string& word : parted_->reasons) add_reason(word);
   }
 
   std::optional<WidthAt> width(double fraction) const {
-    return width_at(stretch_, placed_, peak_.retention_minutes, peak_.height,
-                    fraction, point_noise_);
+    const bool alone = parted_ && parted_->alone;
+    return width_at(
+        alone ? *parted_->alone : stretch_, parted_ ? parted_->window : placed_,
+        peak_.retention_minutes, peak_.height, fraction, point_noise_);
   }
 
   void state_shape() {
@@ -127,8 +144,8 @@ class Measurement {
     }
     const double half =
         peak_.width_half_minutes.value_or(window_.width_half_minutes);
-    if (is_saturated(stretch_.minutes, stretch_.signal, peak_.start_minutes,
-                     peak_.end_minutes, peak_.height, half)) {
+    if (is_saturated(stretch_.minutes, stretch_.signal, placed_.left.minutes,
+                     placed_.right.minutes, peak_.height, half)) {
       add_reason("saturated");
     }
   }
@@ -178,8 +195,10 @@ class Measurement {
     const bool by_height =
         target_.integration.response == IntegrationSettings::Response::Height;
     const std::vector<double> weights =
-        by_height ? height_weights(stretch_, placed_, peak_.retention_minutes)
-                  : area_weights(stretch_, placed_);
+        parted_ && by_height ? parted_->height_weights
+        : parted_            ? parted_->area_weights
+        : by_height ? height_weights(stretch_, placed_, peak_.retention_minutes)
+                    : area_weights(stretch_, placed_);
     peak_.response_noise = weighted_noise(weights, model_);
   }
 
@@ -214,6 +233,7 @@ class Measurement {
   SmoothedStretch stretch_;
   ChosenApex chosen_;
   PlacedWindow placed_;
+  std::optional<PartedPeak> parted_;
   Peak peak_;
 };
 
@@ -229,7 +249,7 @@ Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
   if (!available(target.integration)) {
     return NotApplicable{
         "not-available: this version integrates over the template window, "
-        "with a straight baseline and perpendicular drop"};
+        "with a straight baseline"};
   }
   Outcome<Peak> peak =
       Measurement(trace, target, window, expected, noise).measure();

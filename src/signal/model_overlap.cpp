@@ -217,7 +217,10 @@ Outcome<PartedPeak> model_overlap(const SmoothedStretch& stretch,
     return NotApplicable{"model-not-converged: the fit ran away"};
   }
   PartedPeak peak = modelled(stretch, placed, overlap.points(), *fit, area);
-  if (assumed) peak.reasons.emplace_back("model-shape-assumed");
+  const bool given = std::any_of(
+      guesses.begin(), guesses.end(),
+      [](const EmgGuess& one) { return one.shape == Shape::Given; });
+  if (assumed && given) peak.reasons.emplace_back("model-shape-assumed");
   if (fit->residual_deviation > kMisfit * overlap.noise()) {
     peak.reasons.emplace_back("model-misfit");
   }
