@@ -1,7 +1,12 @@
 # cmake -C tests/build-modes/asan-ubsan.cmake: every test under the address and
 # undefined-behaviour sanitizers. Dividing a double by zero is not among them:
 # IEEE 754 defines it, and our guards test the outcome.
+#
+# Unoptimised, because compiling under sanitizers takes longer than testing; the
+# rooms in which simulations spend their time are compiled with -O1
+# (LOQSMITH_BUSY_ROOM_FLAGS).
 set(CMAKE_BUILD_TYPE Debug CACHE STRING "")
 set(CMAKE_CXX_FLAGS_DEBUG
-    "-O1 -g1 -fno-omit-frame-pointer -fsanitize=address,undefined -fno-sanitize-recover=undefined"
+    "-O0 -g1 -fno-omit-frame-pointer -fsanitize=address,undefined -fno-sanitize-recover=undefined"
     CACHE STRING "")
+set(LOQSMITH_BUSY_ROOM_FLAGS "-O1" CACHE STRING "")
