@@ -9,7 +9,7 @@ namespace {
 
 // Most serious first. First why there is no number, then why the number may
 // not be used, then why to be careful with it.
-constexpr std::array<std::string_view, 36> kDoubtful{
+constexpr std::array<std::string_view, 39> kDoubtful{
     "peak-not-found",
     "file-refused",
     "trace-missing",
@@ -35,6 +35,9 @@ constexpr std::array<std::string_view, 36> kDoubtful{
     "several-peaks",
     "overlapped",
     "internal-standard-overlapped",
+    "model-not-converged",
+    "model-misfit",
+    "model-shape-assumed",
     "spike",
     "few-points",
     "weak-template",

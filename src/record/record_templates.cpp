@@ -7,6 +7,10 @@ void record_window(JsonWriter& json, const WindowTemplate& window) {
   json.member("left_minutes", window.left_minutes);
   json.member("right_minutes", window.right_minutes);
   json.member("width_half_minutes", window.width_half_minutes);
+  if (window.sigma_minutes > 0.0) {
+    json.member("sigma_minutes", window.sigma_minutes);
+    json.member("tau_minutes", window.tau_minutes);
+  }
   json.member("weak", window.weak);
   json.begin_array("teachers");
   for (const int injection : window.teachers) {

@@ -1,11 +1,19 @@
 #include "loqsmith/signal/choose_apex.hpp"
 #include "loqsmith/signal/measure_peak.hpp"
+#include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/point_noise.hpp"
 #include "loqsmith/signal/summits.hpp"
 
 namespace loqsmith {
 namespace {
+
+// How the peak was parted from its neighbours.
+IntegrationSettings::Overlap overlap_of(const Peak& peak) {
+  if (peak.overlap == "skim") return IntegrationSettings::Overlap::Skim;
+  if (peak.overlap == "model") return IntegrationSettings::Overlap::Model;
+  return IntegrationSettings::Overlap::Drop;
+}
 
 // The baseline as it was laid when the peak was measured.
 Outcome<PlacedWindow> baseline_again(const Trace& trace, const Peak& peak,
@@ -25,9 +33,18 @@ Outcome<PlacedWindow> baseline_again(const Trace& trace, const Peak& peak,
       settings.smoothing_order, white_noise(noise));
   const std::vector<Summit> neighbours = significant_summits(
       stretch, find_summits(stretch), settings.threshold, noise, width);
-  return place_window(stretch, neighbours,
-                      {apex, window.left_minutes, window.right_minutes, width,
-                       peak.found, noise});
+  const Outcome<PlacedWindow> placed =
+      place_window(stretch, neighbours,
+                   {apex, window.left_minutes, window.right_minutes, width,
+                    peak.found, noise});
+  if (!placed) return placed;
+  ChosenApex chosen;
+  if (peak.found) chosen.minutes = apex;
+  chosen.neighbours = neighbours;
+  std::vector<std::string> reasons;
+  const auto parted = part_overlap(stretch, chosen, *placed, window,
+                                   overlap_of(peak), apex, noise, reasons);
+  return parted ? parted->window : *placed;
 }
 
 }  // namespace

@@ -201,6 +201,27 @@ TEST(Overlap, RiderAndParentShareWhatDropShares) {
   EXPECT_GT(parent->area, parent_drop->area);
 }
 
+TEST(Overlap, CurveShowsTheSkimmingLine) {
+  Pair pair;
+  pair.noise = 0.0;
+  pair.tau = 0.06;
+  pair.first_height = 2000.0;
+  pair.resolution = 1.5;
+  const double at = second_apex(pair);
+  const Trace trace = simulate_trace(trace_of(pair), "tail");
+  const WindowTemplate window = taught_alone(pair, Overlap::Skim);
+  const auto rider = measured(trace, pair, Overlap::Skim, window, at);
+  ASSERT_TRUE(rider);
+  const PeakCurve curve = peak_curve(trace, *rider, window);
+  // The line leaves the trace where the window begins, to within the mean of
+  // the points about it.
+  const double there =
+      interpolate(trace.minutes, trace.signal, rider->start_minutes);
+  EXPECT_LT(std::abs(curve.baseline_start - there), 0.02 * rider->height);
+  const double truth = 20.0 + 2.0 * (rider->start_minutes - 7.0);
+  EXPECT_GT(curve.baseline_start, truth + 0.5 * (there - truth));
+}
+
 TEST(Overlap, ABlankOnASteepFlankIsNotSkimmed) {
   Pair pair;
   pair.first_height = 2000.0;

@@ -27,7 +27,9 @@ struct Peak {
   std::string noise_source;  ///< "blank 3", "same trace"; empty: none
   std::optional<double> response_noise;  ///< predicted sd at zero amount
   std::string baseline = "valley";
-  std::string overlap;  ///< "drop" where a neighbour bounds the window
+  /// "drop", "skim" or "model": how a neighbour that bounds the window was
+  /// parted from it; empty where none does.
+  std::string overlap;
   bool manual = false;
   std::vector<std::string> reasons;  ///< words that say what to be careful of
 };

@@ -18,7 +18,8 @@ namespace loqsmith {
 /// The straight baseline runs through the mean of the points just outside each
 /// foot, over half a width at half height and at least 5 points. A neighbour's
 /// valley inside the window bounds it (`overlap` = "drop", reason
-/// "overlapped"). The area is trapezoids of signal minus baseline over uneven
+/// "overlapped"), unless the settings' overlap says otherwise: see skim.hpp and
+/// model_overlap.hpp. The area is trapezoids of signal minus baseline over uneven
 /// times; nothing is smoothed for it.
 ///
 /// The target is looked for within the settings' window to either side of the
@@ -29,6 +30,8 @@ namespace loqsmith {
 /// Reasons, each a word: "saturated", "several-peaks" (the nearest to the
 /// expected time is taken), "overlapped", "spike" (a single point that stands
 /// out inside the window), "few-points" (under 10), "weak-template",
+/// "model-not-converged" (the fit of overlapped peaks failed, the drop stands),
+/// "model-misfit" (they do not look like its peaks), "model-shape-assumed",
 /// "baseline-at-valley", "baseline-one-sided", "baseline-shortened",
 /// "no-noise", "noise-zero", and those of the noise.
 ///
