@@ -17,6 +17,9 @@ std::optional<double> peak_response(const Peak& peak, ResponseKind measure) {
     case ResponseKind::Height:
       return peak.height;
     case ResponseKind::Template:
+      // The template has unit area: where it does not fit, the area says the
+      // same in the same unit, and the peak's reasons say that it does.
+      if (peak.area_instead) return peak.area;
       return peak.template_response;
   }
   return std::nullopt;
@@ -29,7 +32,9 @@ std::optional<double> undiluted_internal_standard(
     return std::nullopt;
   }
   const Peak& peak = measured.internal_standard->value();
-  const std::optional<double> response = peak_response(peak, measure);
+  std::optional<double> response = peak_response(peak, measure);
+  // One that is measured by area itself is so in every injection.
+  if (!response && measure == ResponseKind::Template) response = peak.area;
   if (!peak.found || !response || !(*response > 0.0)) return std::nullopt;
   return *response * measured.injection->internal_standard_dilution;
 }
@@ -57,6 +62,7 @@ Outcome<Response> ratio(Response response, const MeasuredInjection& measured,
   const bool blank = measured.injection->role == Role::SolventBlank;
   if (own && !(blank && carried_over(*own, rule))) {
     response.value /= *own;
+    response.divisor = *own;
     const auto more =
         internal_standard_reasons(measured.internal_standard->value());
     response.reasons.insert(response.reasons.end(), more.begin(), more.end());
@@ -64,6 +70,7 @@ Outcome<Response> ratio(Response response, const MeasuredInjection& measured,
   }
   if (blank && rule.mean_internal_standard) {
     response.value /= *rule.mean_internal_standard;
+    response.divisor = *rule.mean_internal_standard;
     response.reasons.push_back("mean-internal-standard");
     return response;
   }
@@ -97,7 +104,7 @@ Outcome<Response> response_of(const MeasuredInjection& measured,
   const Peak& peak = measured.peak.value();
   const std::optional<double> value = peak_response(peak, rule.measure);
   if (!value) return NotApplicable{"no-signal: response was not computed"};
-  Response response{*value, peak.reasons};
+  Response response{.value = *value, .reasons = peak.reasons};
   if (!rule.has_internal_standard) return response;
   return ratio(std::move(response), measured, rule);
 }

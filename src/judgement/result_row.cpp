@@ -117,7 +117,7 @@ VerdictFacts facts_before_placing(const InjectionResponse& one,
   VerdictFacts facts;
   facts.withholding = findings.withholding;
   facts.careful = findings.careful;
-  facts.identified = one.peak && one.peak->found;
+  facts.identified = one.peak && one.peak->identified();
   if (one.response) {
     facts.careful.insert(facts.careful.end(), one.response->reasons.begin(),
                          one.response->reasons.end());

@@ -17,7 +17,7 @@ std::string why_not_used(const InjectionResponse& standard) {
   for (const char* word : {"saturated", "internal-standard-saturated"}) {
     if (has(reasons, word)) return word;
   }
-  if (*standard.nominal > 0.0 && !standard.peak->found) {
+  if (*standard.nominal > 0.0 && !standard.peak->identified()) {
     return "peak-not-found";
   }
   return {};

@@ -3,6 +3,26 @@
 namespace loqsmith {
 namespace {
 
+// The mean shape and the noise that its weights follow.
+void record_shape(JsonWriter& json, const WindowTemplate& window) {
+  const TemplateShape& shape = window.shape;
+  json.begin_object("shape");
+  json.member("first_offset_minutes", -shape.left_minutes);
+  json.member("step_minutes", shape.step_minutes);
+  member_whole(json, "lessons", static_cast<int>(shape.lessons));
+  json.member("noise", shape.noise);
+  json.member("scatter", shape.scatter);
+  json.begin_array("values");
+  for (const double value : shape.values) json.value(value);
+  json.end_array();
+  json.begin_object("weights_noise");
+  json.member("white_variance", window.weights_noise.white_variance);
+  json.member("creeping_variance", window.weights_noise.creeping_variance);
+  json.member("correlation", window.weights_noise.correlation);
+  json.end_object();
+  json.end_object();
+}
+
 void record_window(JsonWriter& json, const WindowTemplate& window) {
   json.member("left_minutes", window.left_minutes);
   json.member("right_minutes", window.right_minutes);
@@ -25,6 +45,7 @@ void record_window(JsonWriter& json, const WindowTemplate& window) {
     json.end_object();
   }
   json.end_array();
+  if (!window.shape.empty()) record_shape(json, window);
 }
 
 }  // namespace

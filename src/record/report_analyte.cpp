@@ -160,6 +160,26 @@ void traces(std::ostream& out, const PublishedRun& run,
   out << "</div>\n";
 }
 
+// What the template response scales; nothing where no shape was learned.
+void template_shape(std::ostream& out, const PublishedRun& run,
+                    const std::string& analyte) {
+  for (const TargetRecord& record : run.targets) {
+    if (record.target != analyte || !record.window) continue;
+    const TemplateShape& shape = record.window->shape;
+    if (shape.empty()) continue;
+    out << "<h3>Template</h3>\n<div class=\"figures\">\n";
+    figure(out,
+           "Mean shape of " + std::to_string(shape.lessons) +
+               (shape.lessons == 1 ? " peak" : " peaks") +
+               " of standards, brought to one apex and to unit area; they "
+               "differ from it by " +
+               html_number(100.0 * shape.scatter, 2) +
+               " % of it beyond their noise.",
+           [&] { figure_shape(out, analyte, shape); });
+    out << "</div>\n";
+  }
+}
+
 }  // namespace
 
 void report_analyte(std::ostream& out, const PublishedRun& run,
@@ -174,6 +194,7 @@ void report_analyte(std::ostream& out, const PublishedRun& run,
     set_figures(out, analyte, set);
     set_limits(out, analyte, set);
   }
+  template_shape(out, run, analyte.analyte);
   traces(out, run, analyte.analyte);
   if (!analyte.checks.empty()) {
     out << "<h3>Checks</h3>\n";

@@ -4,6 +4,7 @@
 
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/learn.hpp"
+#include "loqsmith/signal/typical_noise.hpp"
 
 namespace loqsmith {
 namespace {
@@ -12,6 +13,7 @@ constexpr double kTeachingHeight = 50.0;
 constexpr double kWeakTeachingHeight = 10.0;
 // As many of the highest standards as give a median that one cannot move.
 constexpr std::size_t kWeakTeachers = 3;
+constexpr std::size_t kFewestSlicePoints = 5;
 
 using Peaks = std::vector<TeacherPeak>;
 
@@ -60,6 +62,25 @@ double median_foot(const Peaks& peaks, double TeacherPeak::*foot,
     if (!(peak.*is_overlapped)) free.push_back(peak);
   }
   return median_of(free.empty() ? peaks : free, foot);
+}
+
+// The mean shape of those teachers that stand alone.
+void learn_shape(const Peaks& teachers, WindowTemplate& window) {
+  std::vector<ShapeLesson> lessons;
+  std::vector<NoiseModel> noises;
+  for (const TeacherPeak& peak : teachers) {
+    if (peak.slice.offsets.size() < kFewestSlicePoints || overlapped(peak)) {
+      continue;
+    }
+    lessons.push_back({peak.slice, peak.left_minutes, peak.right_minutes,
+                       peak.height / peak.height_over_noise});
+    noises.push_back(peak.noise_model);
+  }
+  const Outcome<TemplateShape> shape =
+      mean_shape(lessons, window.left_minutes, window.right_minutes);
+  if (!shape) return;
+  window.shape = *shape;
+  window.weights_noise = typical_noise(noises);
 }
 
 // The middle of what the teachers' own fits say, where any succeeded.
@@ -111,6 +132,7 @@ Outcome<WindowTemplate> learn_template(const std::vector<TeacherPeak>& seen) {
   window.width_half_minutes =
       median_of(teachers, &TeacherPeak::width_half_minutes);
   learn_model(teachers, window);
+  learn_shape(teachers, window);
   for (const TeacherPeak& peak : teachers) {
     window.teachers.push_back(peak.injection);
   }

@@ -110,6 +110,12 @@ TeacherPeak teacher_peak(const TeacherFeet& feet, int injection, Role role) {
   return peak;
 }
 
+void add_shape(TeacherPeak& peak, const Trace& trace, const TeacherFeet& feet) {
+  peak.slice = slice_of_peak(trace, feet);
+  peak.noise_model = fit_noise_model(trace, feet.apex - feet.left,
+                                     feet.apex + feet.right, feet.width_half);
+}
+
 }  // namespace
 
 Outcome<TeacherPeak> observe_teacher(const Trace& trace,
@@ -126,7 +132,12 @@ Outcome<TeacherPeak> observe_teacher(const Trace& trace,
     if (!feet) {
       why.reason = feet.reason();
     } else if (feet->height >= kLeastHeight * feet->noise) {
-      return teacher_peak(*feet, injection, role);
+      TeacherPeak peak = teacher_peak(*feet, injection, role);
+      if (target.integration.response ==
+          IntegrationSettings::Response::Template) {
+        add_shape(peak, trace, *feet);
+      }
+      return peak;
     }
   }
   return why;

@@ -33,6 +33,30 @@ TEST(Response, TemplateThatWasNotComputedIsNoZero) {
   EXPECT_TRUE(same_bits(night.collect().injections[0].response->value, 5.0));
 }
 
+TEST(Response, AreaStandsInWhereTheTemplateDoesNotFit) {
+  NightBuilder night;
+  night.add(Role::Sample, 7.0);
+  night.settings.response = ResponseKind::Template;
+  Peak& peak = night.rows[0].peak.value();
+  peak.area_instead = true;
+  peak.reasons = {"shape-differs"};
+  const MeasuredAnalyte analyte = night.collect();
+  ASSERT_TRUE(analyte.injections[0].response);
+  EXPECT_TRUE(same_bits(analyte.injections[0].response->value, 7.0));
+  EXPECT_TRUE(
+      has_word(analyte.injections[0].response->reasons, "shape-differs"));
+}
+
+TEST(Response, AnInternalStandardOfItsOwnAreaServesATemplate) {
+  NightBuilder night;
+  night.settings.internal_standard = "is1";
+  night.settings.response = ResponseKind::Template;
+  auto& row = night.add(Role::Sample, 1.0);
+  row.peak.value().template_response = 6.0;
+  row.internal_standard = peak_of(4.0);
+  EXPECT_TRUE(same_bits(night.collect().injections[0].response->value, 1.5));
+}
+
 TEST(Response, KeepsThePeaksOwnReasonWhereThereIsNone) {
   NightBuilder night;
   night.add(Role::Sample, 1.0).peak = NotApplicable{"trace-missing: none fits"};

@@ -47,6 +47,16 @@ struct ResultRows : testing::Test {
   AnalyteFindings findings;
 };
 
+TEST_F(ResultRows, AShapeThatFitsIdentifiesWithoutAPeak) {
+  night.add(Role::Sample, 4.0, false);
+  EXPECT_EQ(judge().status, Status::Withheld);
+  night.rows.back().peak.value().shape_passed = true;
+  const ResultRow row = judge();
+  EXPECT_EQ(row.status, Status::Reportable);
+  EXPECT_FALSE(row.found);
+  EXPECT_FALSE(has_word(row.reasons, "response-without-peak"));
+}
+
 TEST_F(ResultRows, AtALimitCountsAsAbove) {
   const double just_below_detection = std::nextafter(1.0, 0.0);
   const double just_below_quantitation = std::nextafter(2.0, 0.0);

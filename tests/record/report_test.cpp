@@ -59,6 +59,22 @@ TEST(Report, EveryCellOfTheGridSaysWhatTheTableSays) {
   EXPECT_EQ(count(html, "<td id=\"r"), rows.size() - 1);
 }
 
+TEST(Report, DrawsTheShapeWhereOneWasLearned) {
+  PublishedRun run = test::example_run();
+  const std::string before = page(run);
+  EXPECT_EQ(count(before, "Mean peak shape of"), 0U);
+  TemplateShape& shape = run.targets[0].window.value().shape;
+  shape = {.left_minutes = 0.1,
+           .step_minutes = 0.05,
+           .values = {0.0, 5.0, 10.0, 5.0, 0.0},
+           .lessons = 3,
+           .noise = 0.01,
+           .scatter = 0.02};
+  const std::string after = page(run);
+  EXPECT_EQ(count(after, "Mean peak shape of simazine"), 1U);
+  EXPECT_EQ(count(after, "<svg"), count(before, "<svg") + 1);
+}
+
 // Elements <data> carry the tables' own text.
 std::string data_value(const std::string& csv_number) {
   return "<data value=\"" + csv_number + "\">";

@@ -14,6 +14,9 @@ struct Response {
   /// Signal unit x minute (area), signal unit (height), or the ratio to the
   /// internal standard (no unit). Signed.
   double value = 0.0;
+  /// What the peak's own response was divided by; its predicted noise is to be
+  /// divided likewise. 1 without internal standard.
+  double divisor = 1.0;
   /// Words that say what to be careful of, of the peak and of its internal
   /// standard ("internal-standard-saturated").
   std::vector<std::string> reasons;
@@ -50,6 +53,9 @@ ResponseRule response_rule(const AnalyteRules& settings,
 /// or less than a tenth of the standards' mean (which is carry-over, not an
 /// addition), its response is divided by that mean instead, with the reason
 /// "mean-internal-standard".
+///
+/// With the template response an injection whose shape differs is represented
+/// by its area, which has the same unit and scale, with the peak's reason.
 ///
 /// @return not applicable, beginning with a reason word: the peak's own reason,
 ///         "internal-standard-missing" (not measured, not found, not above

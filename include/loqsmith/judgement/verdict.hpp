@@ -21,7 +21,8 @@ struct VerdictFacts {
   /// Reason words that withhold: no number, no calibration, a failed check
   /// whose action is to withhold.
   std::vector<std::string> withholding;
-  bool identified = false;  ///< the apex lies in the window
+  /// The apex lies in the window, or the template's shape test passed.
+  bool identified = false;
   /// Nothing: there is no number to place; then something withholds.
   std::optional<Placing> placing;
   /// The decision threshold is a critical value, not the detection limit.

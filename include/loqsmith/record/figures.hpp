@@ -36,6 +36,10 @@ bool has_limits_figure(const AnalyteJudgement& analyte,
 void figure_trace(std::ostream& out, const FigureCurve& curve,
                   const std::string& signal_unit, double span);
 
+/// The mean peak shape that the template response scales, over its window.
+void figure_shape(std::ostream& out, const std::string& analyte,
+                  const TemplateShape& shape);
+
 /// Largest minus smallest signal of the stretch.
 double signal_span(const PeakCurve& curve);
 

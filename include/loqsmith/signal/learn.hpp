@@ -6,7 +6,9 @@
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/role.hpp"
 #include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/signal/noise_model.hpp"
 #include "loqsmith/signal/settings.hpp"
+#include "loqsmith/signal/template_shape.hpp"
 
 namespace loqsmith {
 
@@ -26,6 +28,9 @@ struct TeacherPeak {
   /// Only where the target's overlap is `model` and its fit succeeds; 0 else.
   double sigma_minutes = 0.0;
   double tau_minutes = 0.0;
+  /// Only where the target's response is `template`; otherwise empty.
+  PeakSlice slice = {};
+  NoiseModel noise_model = {};  ///< of the same trace, beside the peak
 };
 
 /// Where the target is to be looked for and over what window it is measured.
@@ -41,6 +46,12 @@ struct WindowTemplate {
   /// target's overlap is `model`; a sigma of 0: not known.
   double sigma_minutes = 0.0;
   double tau_minutes = 0.0;
+  /// Only where the target's response is `template`; otherwise empty. Learned
+  /// from the teachers of the window; overlapped ones never teach it.
+  TemplateShape shape = {};
+  /// The one noise model that the template's weights follow in the whole
+  /// sequence; until the blanks are known, that of the teachers' traces.
+  NoiseModel weights_noise = {};
 };
 
 /// The peak nearest the method's retention time within its window.

@@ -13,6 +13,8 @@ struct TeacherFeet {
   double right = 0.0;  ///< right foot minus apex
   double width_half = 0.0;
   double height = 0.0;
+  double baseline_left = 0.0;  ///< signal of the baseline at the feet
+  double baseline_right = 0.0;
   double noise = 0.0;  ///< standard deviation of a point beside the peak
   bool saturated = false;
   bool left_overlapped = false;
