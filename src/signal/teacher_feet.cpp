@@ -144,7 +144,8 @@ std::optional<double> half_width(const SmoothedStretch& stretch,
   return width->total();
 }
 
-// Width, shape and overlapped feet from the fit; false where it fails.
+// The shape from the fit, and what a neighbour hides: width and overlapped
+// feet. False where it fails.
 bool take_from_fit(const Teacher& teacher, const PlacedWindow& window,
                    double width_half, TeacherFeet& feet) {
   const Outcome<TaughtShape> taught =
@@ -153,7 +154,10 @@ bool take_from_fit(const Teacher& teacher, const PlacedWindow& window,
   if (!taught) return false;
   feet.sigma = taught->sigma;
   feet.tau = taught->tau;
-  feet.width_half = taught->width_half;
+  const bool hidden = feet.left_overlapped || feet.right_overlapped;
+  if (hidden || !(feet.width_half > 0.0)) {
+    feet.width_half = taught->width_half;
+  }
   if (feet.left_overlapped) feet.left = taught->left;
   if (feet.right_overlapped) feet.right = taught->right;
   return true;
@@ -199,13 +203,13 @@ Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
   feet.left_overlapped = teacher.overlapped(*window, true);
   feet.right_overlapped = teacher.overlapped(*window, false);
   const auto width = half_width(stretch, *window, feet.apex, feet.height);
+  feet.width_half = width.value_or(0.0);
   const bool fitted =
       target.integration.overlap == IntegrationSettings::Overlap::Model &&
       take_from_fit(teacher, *window, width.value_or(width_half), feet);
   if (!fitted && !width) {
     return NotApplicable{"no-peak: it does not fall to half of its height"};
   }
-  if (!fitted) feet.width_half = *width;
   feet.saturated =
       is_saturated(stretch.minutes, stretch.signal, window->left.minutes,
                    window->right.minutes, feet.height, feet.width_half);

@@ -47,6 +47,18 @@ TEST(Overlap, StandardsTeachSigmaAndTauForModelOnly) {
   EXPECT_EQ(taught_alone(pair, Overlap::Drop).sigma_minutes, 0.0);
 }
 
+TEST(Overlap, StandardsAloneTeachTheSameWindowToAll) {
+  const Pair pair;
+  const WindowTemplate drop = taught_alone(pair, Overlap::Drop);
+  for (const Overlap overlap : {Overlap::Skim, Overlap::Model}) {
+    const WindowTemplate other = taught_alone(pair, overlap);
+    EXPECT_TRUE(test::same_bits(other.left_minutes, drop.left_minutes));
+    EXPECT_TRUE(test::same_bits(other.right_minutes, drop.right_minutes));
+    EXPECT_TRUE(
+        test::same_bits(other.width_half_minutes, drop.width_half_minutes));
+  }
+}
+
 TEST(Overlap, FusedStandardsTeachAWholeWindow) {
   Pair pair;
   pair.resolution = 0.7;

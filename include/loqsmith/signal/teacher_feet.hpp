@@ -35,9 +35,9 @@ struct TeacherFeet {
 /// outside these feet then gives the final ones. A neighbour's valley ends the
 /// way; it counts as overlap when the signal there is still above 2.5 % of the
 /// height. Where the settings' overlap is `model` the peak is fitted together
-/// with its neighbours: width and overlapped feet are then those of the fitted
-/// peak (0.1 % of its height), so that the template spans a whole peak even
-/// where none of the standards shows one.
+/// with its neighbours. Where one overlaps, width and overlapped feet are those
+/// of the fitted peak (0.1 % of its height), so that the template spans a whole
+/// peak even where none of the standards shows one.
 ///
 /// @param apex        as seen so far, minutes
 /// @param width_half  as seen so far
