@@ -99,6 +99,18 @@ bool shows_a_height(const InjectionResponse& one) {
          !has(one.peak->reasons, "saturated");
 }
 
+void add_predicted_noise(const InjectionResponse& one, BlankKind kind,
+                         LimitEvidence& evidence) {
+  if (!one.peak || !one.response) return;
+  if (one.peak->response_noise) {
+    evidence.predicted_noise.push_back(
+        {one.injection->number, kind,
+         *one.peak->response_noise / one.response->divisor});
+  } else if (evidence.predicted_noise_absent.empty()) {
+    evidence.predicted_noise_absent = one.peak->response_noise_absent;
+  }
+}
+
 std::optional<double> median(std::vector<double> values) {
   if (values.empty()) return std::nullopt;
   std::sort(values.begin(), values.end());
@@ -135,6 +147,7 @@ LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
       evidence.blanks.push_back({number, *kind, one.response->value,
                                  follows_high(analyte, number, calibration),
                                  one.injection->prep});
+      add_predicted_noise(one, *kind, evidence);
     }
     const auto spike = spike_result(one, analyte, calibration);
     if (spike) evidence.spikes.push_back(*spike);

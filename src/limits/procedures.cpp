@@ -3,6 +3,7 @@
 #include "loqsmith/limits/blank_deviation.hpp"
 #include "loqsmith/limits/calibration_residual.hpp"
 #include "loqsmith/limits/established.hpp"
+#include "loqsmith/limits/noise_model_limit.hpp"
 #include "loqsmith/limits/signal_to_noise_limit.hpp"
 
 namespace loqsmith {
@@ -16,7 +17,7 @@ const std::vector<LimitProcedure>& limit_procedures() {
       {"intercept-deviation", "ICH Q2(R2) (2023) 3.2.3", false, nullptr},
       {"signal-to-noise", "Ph. Eur. 2.2.46; ICH Q2(R2) (2023) 3.2.2", false,
        signal_to_noise_limit},
-      {"noise-model", "ISO 11843-7 (2018)", true, nullptr},
+      {"noise-model", "ISO 11843-7 (2018)", true, noise_model_limit},
       {"spike-replicates", "US EPA 40 CFR 136 Appendix B, Revision 2 (2016)",
        false, nullptr},
       {"critical-and-detectable", "Currie 1995 (IUPAC); ISO 11843-2 (2000)",

@@ -34,7 +34,11 @@ NoiseFor noise_for(const Learned& learned, std::size_t target,
   Outcome<NoiseEstimate> noise = measure_noise_beside(
       trace, expected - window.left_minutes, expected + window.right_minutes,
       window.width_half_minutes, settings.noise);
-  if (noise && settings.noise.source == NoiseSettings::Source::Blank) {
+  if (!noise) return {std::move(noise), "same trace"};
+  add_whole_trace_noise(noise.value(), trace, expected - window.left_minutes,
+                        expected + window.right_minutes,
+                        window.width_half_minutes);
+  if (settings.noise.source == NoiseSettings::Source::Blank) {
     noise.value().reasons.emplace_back("noise-from-same-trace");
   }
   return {std::move(noise), "same trace"};

@@ -98,7 +98,11 @@ PublishedRun assemble(const SequenceFolder& folder, const Learned& learned,
   run.inputs.insert(run.inputs.end(), measured.inputs.begin(),
                     measured.inputs.end());
   for (std::size_t i = 0; i < learned.targets.size(); ++i) {
-    run.targets.push_back({learned.targets[i].id, learned.windows[i]});
+    TargetRecord target{learned.targets[i].id, learned.windows[i]};
+    for (const BlankNoise& blank : learned.blank_noise[i]) {
+      target.blank_noise.emplace_back(blank.injection, blank.noise);
+    }
+    run.targets.push_back(std::move(target));
   }
   for (const AnalyteSettings& analyte : folder.sheets.method.analytes) {
     run.analytes.push_back(judge(folder, learned, measured, analyte));

@@ -2,6 +2,7 @@
 #include <ostream>
 
 #include "loqsmith/base/csv.hpp"
+#include "loqsmith/judgement/reasons.hpp"
 #include "loqsmith/record/cells.hpp"
 #include "loqsmith/record/tables.hpp"
 
@@ -31,6 +32,14 @@ const std::vector<std::string> kHead = {"injection",
                                         "manual",
                                         "note"};
 
+// The peak's reasons, and why no response noise is predicted.
+std::vector<std::string> words_of(const Peak& peak) {
+  std::vector<std::string> words = peak.reasons;
+  const std::string absent = reason_word(peak.response_noise_absent);
+  if (!absent.empty()) words.push_back(absent);
+  return words;
+}
+
 std::vector<std::string> cells_of(int injection, const std::string& target,
                                   const Peak& peak) {
   return {injection_cell(injection),
@@ -54,7 +63,7 @@ std::vector<std::string> cells_of(int injection, const std::string& target,
           text_cell(peak.baseline),
           text_cell(peak.overlap),
           yes_no_cell(peak.manual),
-          words_cell(peak.reasons)};
+          words_cell(words_of(peak))};
 }
 
 std::vector<std::string> absent_cells(int injection, const std::string& target,

@@ -28,6 +28,7 @@ void write_record(std::ostream& out, const PublishedRun& run) {
   record_provenance(json, run);
   json.member("needs_a_person", needs_a_person(run));
   record_templates(json, run);
+  record_noise(json, run);
   record_analytes(json, run);
   record_checks(json, run);
   json.end_object();

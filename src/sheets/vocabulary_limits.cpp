@@ -76,7 +76,7 @@ std::vector<ElementRule> basic_procedures() {
       procedure("noise-model",
                 "From the predicted response noise at zero; instrument noise "
                 "only.",
-                {detection_factor("3.29"), quantitation_factor()}, kLater),
+                {detection_factor("3.29"), quantitation_factor()}, kNow),
       procedure("spike-replicates", "From low spikes and method blanks.",
                 {defaulted("confidence", number(between(0.5, 1.0)), "0.99",
                            "Level of Student's t."),

@@ -9,6 +9,7 @@
 #include "loqsmith/signal/peak_shape.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/point_noise.hpp"
+#include "loqsmith/signal/response_noise.hpp"
 #include "loqsmith/signal/saturation.hpp"
 #include "loqsmith/signal/summits.hpp"
 
@@ -199,7 +200,13 @@ class Measurement {
         : parted_            ? parted_->area_weights
         : by_height ? height_weights(stretch_, placed_, peak_.retention_minutes)
                     : area_weights(stretch_, placed_);
-    peak_.response_noise = weighted_noise(weights, model_);
+    const Outcome<double> spread =
+        predict_response_noise(weights, model_, *noise_);
+    if (spread) {
+      peak_.response_noise = *spread;
+    } else {
+      peak_.response_noise_absent = spread.reason();
+    }
   }
 
   void gather_reasons() {

@@ -6,6 +6,8 @@
 
 #include "loqsmith/signal/peak_free.hpp"
 #include "loqsmith/signal/point_noise.hpp"
+#include "loqsmith/signal/summits.hpp"
+#include "loqsmith/signal/trace_noise.hpp"
 
 namespace loqsmith {
 namespace {
@@ -60,6 +62,8 @@ Outcome<NoiseEstimate> measure_noise(const Trace& trace, double center_minutes,
   if (noise) {
     noise.value().model = fit_noise_model(trace, center_minutes, center_minutes,
                                           width_half_minutes);
+    add_whole_trace_noise(noise.value(), trace, center_minutes, center_minutes,
+                          width_half_minutes);
   }
   return noise;
 }
@@ -78,6 +82,16 @@ Outcome<NoiseEstimate> measure_noise_beside(const Trace& trace,
         fit_noise_model(trace, start_minutes, end_minutes, width_half_minutes);
   }
   return noise;
+}
+
+void add_whole_trace_noise(NoiseEstimate& noise, const Trace& trace,
+                           double start_minutes, double end_minutes,
+                           double width_half_minutes) {
+  const PeakFreeTrace free =
+      peak_free_trace(trace, start_minutes, end_minutes, width_half_minutes);
+  noise.whole = whole_trace_noise(free, width_half_minutes);
+  noise.segments = segment_noise(free.used_minutes, free.used_signal,
+                                 typical_step(trace.minutes));
 }
 
 double noise_figure(const NoiseEstimate& noise,

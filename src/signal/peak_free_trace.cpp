@@ -112,7 +112,7 @@ std::size_t add_residuals(Stretch stretch, PeakFreeTrace& whole) {
   const std::vector<double> left = residuals_about_parabola(minutes, signal);
   std::size_t next = 0;
   for (std::size_t i = 0; i < stretch.free.size(); ++i) {
-    const bool use = whole.residuals.used[whole.residuals.values.size()];
+    const bool use = whole.residuals.used[whole.residuals.values.size()] != 0;
     whole.residuals.values.push_back(use ? left[next++] : 0.0);
   }
   append(whole.used_minutes, minutes);

@@ -33,6 +33,45 @@ TEST(LimitEvidence, BlanksByKindSignedAndInRunOrder) {
   EXPECT_EQ(evidence.blanks[2].injection, 3);
 }
 
+TEST(LimitEvidence, PredictedNoiseOfBlanksInTheirResponsesUnit) {
+  NightBuilder night;
+  night.add(Role::SolventBlank, 0.3, false).peak.value().response_noise = 0.5;
+  night.add(Role::MethodBlank, 0.2, false).peak.value().response_noise = 0.25;
+  night.add(Role::SolventBlank, 0.1, false).peak.value().response_noise_absent =
+      "noise-trace-short: 41 widths";
+  night.add(Role::Sample, 1.0).peak.value().response_noise = 7.0;
+  const LimitEvidence evidence = evidence_of(night);
+  ASSERT_EQ(evidence.predicted_noise.size(), 2U);
+  EXPECT_EQ(evidence.predicted_noise[0].injection, 1);
+  EXPECT_EQ(evidence.predicted_noise[0].kind, BlankKind::Solvent);
+  EXPECT_TRUE(same_bits(evidence.predicted_noise[0].sd, 0.5));
+  EXPECT_EQ(evidence.predicted_noise[1].kind, BlankKind::Method);
+  EXPECT_TRUE(same_bits(evidence.predicted_noise[1].sd, 0.25));
+  EXPECT_EQ(evidence.predicted_noise_absent, "noise-trace-short: 41 widths");
+}
+
+// Divided as the response itself: by the blank's own internal standard, and
+// where it has none by the standards' mean.
+TEST(LimitEvidence, PredictedNoiseIsDividedByTheInternalStandard) {
+  NightBuilder night;
+  night.settings.internal_standard = "neutral";
+  const auto internal_standard = [](NightRow& row, double area, bool found) {
+    row.internal_standard = test::peak_of(area, found);
+  };
+  internal_standard(night.standard(10.0), 40.0, true);
+  internal_standard(night.standard(20.0), 60.0, true);
+  NightRow& with = night.add(Role::MethodBlank, 0.3, false);
+  with.peak.value().response_noise = 0.5;
+  internal_standard(with, 25.0, true);
+  NightRow& without = night.add(Role::SolventBlank, 0.3, false);
+  without.peak.value().response_noise = 0.5;
+  internal_standard(without, 0.1, false);
+  const LimitEvidence evidence = evidence_of(night);
+  ASSERT_EQ(evidence.predicted_noise.size(), 2U);
+  EXPECT_TRUE(same_bits(evidence.predicted_noise[0].sd, 0.02));
+  EXPECT_TRUE(same_bits(evidence.predicted_noise[1].sd, 0.01));
+}
+
 // Half the range is 50; the detector gives 2 a unit.
 TEST(LimitEvidence, AfterHighGoesByTheInjectionRightBefore) {
   NightBuilder night;

@@ -46,6 +46,31 @@ TEST(RecordJson, KeepsTemplatesAndWhyThereIsNone) {
   EXPECT_EQ(templates[1]["not_applicable"], "no peak fit to teach");
 }
 
+TEST(RecordJson, KeepsTheNoiseOfTheBlanks) {
+  PublishedRun run = test::example_run();
+  NoiseEstimate noise;
+  noise.points = 50;
+  noise.standard_deviation = 0.25;
+  noise.segments = SegmentNoise{0.75, 0.5, 12, -3.0};
+  noise.whole = NoiseModel{0.25, 0.5, 0.75};
+  run.targets[0].blank_noise = {{9, noise}};
+  noise.whole = NotApplicable{"noise-trace-short: 41 widths"};
+  run.targets[0].blank_noise.emplace_back(20, noise);
+  const auto record = record_of(run)["noise"];
+  EXPECT_EQ(record[0]["target"], "simazine");
+  const auto blank = record[0]["blanks"][0];
+  EXPECT_EQ(blank["injection"], 9);
+  EXPECT_EQ(blank["points"], 50);
+  EXPECT_EQ(blank["standard_deviation"], 0.25);
+  EXPECT_EQ(blank["segments"]["count"], 12);
+  EXPECT_EQ(blank["segments"]["peak_to_peak"], 0.75);
+  EXPECT_EQ(blank["segments"]["drift_per_hour"], -3.0);
+  EXPECT_EQ(blank["whole_trace"]["creeping_variance"], 0.5);
+  EXPECT_EQ(record[0]["blanks"][1]["whole_trace"]["not_applicable"],
+            "noise-trace-short: 41 widths");
+  EXPECT_TRUE(record[1]["blanks"].empty());
+}
+
 TEST(RecordJson, NumbersReadBackAsTheSameBits) {
   const PublishedRun run = test::example_run();
   const auto analytes = record_of(run)["analytes"];

@@ -134,8 +134,7 @@ class Simulation {
 
 SimulatedTrace white_detector() {
   SimulatedTrace detector;
-  detector.start_minutes = 3.0;
-  detector.end_minutes = 7.0;
+  detector.end_minutes = 10.4;  // 88 widths at half height
   detector.offset = 30.0;
   detector.drift_per_minute = 2.0;
   detector.white_noise = 1.0;

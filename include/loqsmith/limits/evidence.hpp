@@ -19,6 +19,14 @@ struct BlankResponse {
   std::string prep;
 };
 
+/// Standard deviation of one blank's response that the instrument's noise
+/// predicts, in the responses' own unit.
+struct PredictedNoise {
+  int injection = 0;
+  BlankKind kind = BlankKind::Solvent;  ///< never All
+  double sd = 0.0;                      ///< zero where the signal has no noise
+};
+
 /// One low spike's signed, uncensored found concentration, in the vial.
 struct SpikeResult {
   int injection = 0;
@@ -40,6 +48,11 @@ enum class NoiseMeasure { HalfPeakToPeak, PeakToPeak, StandardDeviation };
 /// Everything that is known of one analyte in one calibration set.
 struct LimitEvidence {
   std::vector<BlankResponse> blanks;  ///< in run order
+  /// In run order, of blanks after high injections as well: what they carry
+  /// over is a peak and does not enter.
+  std::vector<PredictedNoise> predicted_noise;
+  /// Why some blank has none: a reason word, then words; empty where all do.
+  std::string predicted_noise_absent;
   std::vector<SpikeResult> spikes;
   std::vector<StandardHeight> heights;
   std::optional<Calibration> calibration;

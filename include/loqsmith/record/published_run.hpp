@@ -37,6 +37,8 @@ struct InputFile {
 struct TargetRecord {
   std::string target;
   Outcome<WindowTemplate> window = NotApplicable{"not learned"};
+  /// Of the solvent blanks that noise is taken from, by injection.
+  std::vector<std::pair<int, NoiseEstimate>> blank_noise = {};
 };
 
 /// A stretch of trace for the report's figures.

@@ -17,6 +17,11 @@ void record_provenance(JsonWriter& json, const PublishedRun& run);
 /// injections taught it.
 void record_templates(JsonWriter& json, const PublishedRun& run);
 
+/// `noise`: of each blank at each target's time, in signal units, with the
+/// segment noise and drift of its whole trace and the noise model from which
+/// the spread of responses is predicted.
+void record_noise(JsonWriter& json, const PublishedRun& run);
+
 /// `analytes`: calibration, limits with all their terms, and the decision on
 /// each result with its reasons.
 void record_analytes(JsonWriter& json, const PublishedRun& run);

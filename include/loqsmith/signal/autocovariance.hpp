@@ -9,8 +9,8 @@ namespace loqsmith {
 /// count; those of points that do not count are zero.
 struct Residuals {
   std::vector<double> values;
-  std::vector<bool> used;
-  std::size_t count = 0;  ///< of those used
+  std::vector<unsigned char> used;  ///< 1 or 0
+  std::size_t count = 0;            ///< of those used
 };
 
 /// Mean product of used residuals `lag` points apart; zero where there is no

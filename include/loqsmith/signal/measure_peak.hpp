@@ -35,8 +35,10 @@ namespace loqsmith {
 /// "baseline-at-valley", "baseline-one-sided", "baseline-shortened",
 /// "no-noise", "noise-zero", and those of the noise.
 ///
-/// `response_noise` is predicted from the noise model for the very window and
-/// baseline used; signal-to-noise is stated for found peaks only.
+/// `response_noise` is predicted from the noise of a whole trace for the very
+/// window and baseline used (see response_noise.hpp), and absent with its
+/// reason where that trace is too short; signal-to-noise is stated for found
+/// peaks only.
 ///
 /// @param noise         of the source that the settings name; may be absent
 /// @param noise_source  "blank 3" or "same trace"
