@@ -9,28 +9,16 @@
 namespace loqsmith {
 namespace {
 
-const std::vector<std::string> kHead = {"injection",
-                                        "analyte",
-                                        "found",
-                                        "retention_time",
-                                        "start",
-                                        "end",
-                                        "area",
-                                        "height",
-                                        "template_response",
-                                        "width_half",
-                                        "tailing",
-                                        "asymmetry",
-                                        "plates",
-                                        "resolution",
-                                        "signal_to_noise",
-                                        "noise",
-                                        "noise_source",
-                                        "response_noise",
-                                        "baseline",
-                                        "overlap",
-                                        "manual",
-                                        "note"};
+const std::vector<std::string> kHead = {
+    "injection",      "analyte",        "found",
+    "retention_time", "start",          "end",
+    "area",           "height",         "template_response",
+    "width_half",     "tailing",        "asymmetry",
+    "plates",         "resolution",     "signal_to_noise",
+    "noise",          "noise_source",   "response_noise",
+    "baseline",       "overlap",        "manual",
+    "note",           "capacity_factor"};
+constexpr std::size_t kNote = 21;
 
 // The peak's reasons, and why no response noise is predicted.
 std::vector<std::string> words_of(const Peak& peak) {
@@ -63,7 +51,8 @@ std::vector<std::string> cells_of(int injection, const std::string& target,
           text_cell(peak.baseline),
           text_cell(peak.overlap),
           yes_no_cell(peak.manual),
-          words_cell(words_of(peak))};
+          words_cell(words_of(peak)),
+          number_cell(peak.capacity_factor)};
 }
 
 std::vector<std::string> absent_cells(int injection, const std::string& target,
@@ -71,7 +60,7 @@ std::vector<std::string> absent_cells(int injection, const std::string& target,
   std::vector<std::string> cells(kHead.size());
   cells.front() = injection_cell(injection);
   cells[1] = text_cell(target);
-  cells.back() = text_cell(reason);
+  cells[kNote] = text_cell(reason);
   return cells;
 }
 

@@ -32,6 +32,22 @@ double smoothed_width(const SmoothedStretch& stretch,
   return reach(-1.0) + reach(1.0);
 }
 
+// A summit beside a dip: one foot stands in the dip, so that the baseline is
+// too low. The signal rises again beyond that foot, and hardly falls on the
+// other side of the summit.
+bool is_beside_dip(const SmoothedStretch& stretch, const PlacedWindow& window,
+                   const Candidate& candidate) {
+  constexpr double kShare = 0.3;
+  const double least = kShare * candidate.height;
+  if (candidate.summit.prominence >= least) return false;
+  const double length = window.right.minutes - window.left.minutes;
+  const auto rises_beyond = [&](const Foot& foot, double direction) {
+    const double beyond = foot.anchor_minutes + direction * length;
+    return smoothed_at(stretch, beyond) - foot.anchor_signal > least;
+  };
+  return rises_beyond(window.left, -1.0) || rises_beyond(window.right, 1.0);
+}
+
 std::optional<Candidate> examine(const SmoothedStretch& stretch,
                                  const TargetSettings& target,
                                  const WindowTemplate& window,
@@ -46,12 +62,15 @@ std::optional<Candidate> examine(const SmoothedStretch& stretch,
   Candidate candidate{summit, 0.0, 0.0};
   candidate.height = summit.value - placed->baseline_at(summit.minutes);
   if (!(candidate.height > 0.0)) return {};
-  candidate.deviation = weighted_noise(
-      smoothed_height_weights(stretch, *placed, summit.minutes), noise);
+  candidate.deviation = std::max(
+      stretch.rounding,
+      weighted_noise(smoothed_height_weights(stretch, *placed, summit.minutes),
+                     noise));
   if (!(candidate.height >=
         target.integration.threshold * candidate.deviation)) {
     return {};
   }
+  if (is_beside_dip(stretch, *placed, candidate)) return {};
   const double least = target.integration.minimum_width_minutes;
   if (least > 0.0 &&
       smoothed_width(stretch, *placed, summit.minutes, candidate.height,
@@ -74,6 +93,29 @@ bool is_ripple(const SmoothedStretch& stretch, const Candidate& candidate,
     const double valley = smoothed_at(stretch, lowest_between(stretch, a, b));
     return candidate.summit.value - valley < least;
   });
+}
+
+bool has_both_feet(const SmoothedStretch& stretch, const WindowTemplate& window,
+                   const std::vector<Summit>& neighbours, double apex,
+                   double noise) {
+  return static_cast<bool>(
+      place_window(stretch, neighbours,
+                   {apex, window.left_minutes, window.right_minutes,
+                    window.width_half_minutes, true, noise}));
+}
+
+// A peak in the window, nearer to the expected time than `least`, that the end
+// of the trace cuts.
+bool is_nearest_cut(const SmoothedStretch& stretch,
+                    const WindowTemplate& window,
+                    const std::vector<Summit>& neighbours, double expected,
+                    double least, double noise) {
+  return std::any_of(neighbours.begin(), neighbours.end(),
+                     [&](const Summit& summit) {
+                       return std::abs(summit.minutes - expected) < least &&
+                              !has_both_feet(stretch, window, neighbours,
+                                             summit.minutes, noise);
+                     });
 }
 
 }  // namespace
@@ -99,7 +141,11 @@ ChosenApex choose_apex(const SmoothedStretch& stretch,
   std::erase_if(candidates, [&](const Candidate& candidate) {
     return is_ripple(stretch, candidate, all, multiple, deviation);
   });
-  if (candidates.empty()) return chosen;
+  if (candidates.empty()) {
+    chosen.cut = is_nearest_cut(stretch, window, chosen.neighbours, expected,
+                                target.window_minutes, deviation);
+    return chosen;
+  }
   if (candidates.size() > 1) chosen.reasons.emplace_back("several-peaks");
   const Candidate& nearest =
       *std::min_element(candidates.begin(), candidates.end(),
@@ -107,6 +153,9 @@ ChosenApex choose_apex(const SmoothedStretch& stretch,
                           return std::abs(a.summit.minutes - expected) <
                                  std::abs(b.summit.minutes - expected);
                         });
+  chosen.cut =
+      is_nearest_cut(stretch, window, chosen.neighbours, expected,
+                     std::abs(nearest.summit.minutes - expected), deviation);
   chosen.minutes = nearest.summit.minutes;
   chosen.height = nearest.height;
   chosen.height_deviation = nearest.deviation;

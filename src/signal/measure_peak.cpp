@@ -4,6 +4,8 @@
 #include <cmath>
 
 #include "loqsmith/signal/choose_apex.hpp"
+#include "loqsmith/signal/estimated_baseline.hpp"
+#include "loqsmith/signal/fit_template.hpp"
 #include "loqsmith/signal/integrate.hpp"
 #include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
@@ -12,6 +14,7 @@
 #include "loqsmith/signal/response_noise.hpp"
 #include "loqsmith/signal/saturation.hpp"
 #include "loqsmith/signal/summits.hpp"
+#include "loqsmith/signal/trace_trouble.hpp"
 
 namespace loqsmith {
 namespace {
@@ -22,9 +25,10 @@ constexpr double kSharpHeight = 50.0;
 constexpr double kMarginWidths = 10.0;
 
 bool available(const IntegrationSettings& settings) {
-  return settings.response != IntegrationSettings::Response::Template &&
-         settings.bounds == IntegrationSettings::Bounds::Template &&
-         settings.baseline == IntegrationSettings::Baseline::Valley;
+  return settings.bounds == IntegrationSettings::Bounds::Template &&
+         !(is_estimated(settings.baseline) &&
+           (settings.response == IntegrationSettings::Response::Template ||
+            settings.overlap != IntegrationSettings::Overlap::Drop));
 }
 
 // The part of the trace that one target needs: its window of times, the feet,
@@ -48,6 +52,17 @@ NoiseModel noise_of_this_trace(const Trace& near,
   return known > 0.0 ? noise->model.scaled(own / known) : white_noise(own);
 }
 
+// The whole trace's noise tells the colour better than a stretch around the
+// peak; how large it is here, the trace at hand says.
+NoiseModel colour_of_noise(const Outcome<NoiseEstimate>& noise,
+                           const NoiseModel& here) {
+  if (!noise || !noise->whole) return here;
+  const double known = noise->whole->point_to_point();
+  const double seen = here.point_to_point();
+  if (!(seen > known) || !(known > 0.0)) return *noise->whole;
+  return noise->whole->scaled(seen / known);
+}
+
 // One target in one trace, measured step by step.
 class Measurement {
  public:
@@ -58,11 +73,9 @@ class Measurement {
     const Trace near = surroundings(trace, target, window, expected);
     model_ = noise_of_this_trace(near, noise);
     point_noise_ = model_.standard_deviation();
-    const int points =
-        smoothing_length(target.integration, window.width_half_minutes,
-                         typical_step(near.minutes));
-    stretch_ = smooth_stretch(near, points, target.integration.smoothing_order,
-                              model_);
+    stretch_ = smooth_stretch_above(
+        near, target.integration, window.width_half_minutes,
+        std::max(window.left_minutes, window.right_minutes), model_);
   }
 
   Outcome<Peak> measure() {
@@ -70,6 +83,9 @@ class Measurement {
       return NotApplicable{"window-not-covered: the trace has no points there"};
     }
     chosen_ = choose_apex(stretch_, target_, window_, expected_, model_);
+    if (chosen_.cut) {
+      return NotApplicable{"peak-cut: the trace does not hold both its feet"};
+    }
     const Outcome<PlacedWindow> placed =
         place(chosen_.minutes.value_or(expected_));
     if (!placed) return NotApplicable{placed.reason()};
@@ -80,7 +96,16 @@ class Measurement {
                            " in the window, at least 5 are needed"};
     }
     if (points < kFewPoints) add_reason("few-points");
+    const bool whole = covers(stretch_.minutes,
+                              expected_ - target_.window_minutes,
+                              expected_ + target_.window_minutes);
+    if (!whole && !chosen_.minutes) {
+      return NotApplicable{
+          "window-not-covered: no peak in what the trace holds of the window"};
+    }
+    if (!whole) add_reason("window-cut-short");
     state_response();
+    if (by(IntegrationSettings::Response::Template)) state_template();
     if (peak_.found) state_shape();
     state_noise();
     gather_reasons();
@@ -89,10 +114,11 @@ class Measurement {
 
  private:
   Outcome<PlacedWindow> place(double apex) const {
-    return place_window(stretch_, chosen_.neighbours,
-                        {apex, window_.left_minutes, window_.right_minutes,
-                         window_.width_half_minutes,
-                         chosen_.minutes.has_value(), point_noise_});
+    return place_window_above(
+        stretch_, chosen_.neighbours,
+        {apex, window_.left_minutes, window_.right_minutes,
+         window_.width_half_minutes, chosen_.minutes.has_value(),
+         point_noise_});
   }
 
   void state_response() {
@@ -103,6 +129,7 @@ class Measurement {
       const Outcome<PlacedWindow> again = place(apex);
       if (again) placed_ = *again;
     }
+    peak_.baseline = baseline_name(target_.integration.baseline);
     peak_.retention_minutes = apex;
     peak_.start_minutes = placed_.left.minutes;
     peak_.end_minutes = placed_.right.minutes;
@@ -126,6 +153,24 @@ class Measurement {
     for (const std::string& word : parted_->reasons) add_reason(word);
   }
 
+  bool by(IntegrationSettings::Response response) const {
+    return target_.integration.response == response;
+  }
+
+  void state_template() {
+    Outcome<TemplateFit> fit =
+        fit_template(stretch_, placed_, peak_.retention_minutes, window_,
+                     colour_of_noise(noise_, model_));
+    if (fit && fit->shape_passed()) {
+      peak_.template_response = fit->response;
+      peak_.shape_passed = true;
+      template_weights_ = std::move(fit.value().weights);
+      return;
+    }
+    peak_.area_instead = true;
+    add_reason(fit ? "shape-differs" : "template-not-fitted");
+  }
+
   std::optional<WidthAt> width(double fraction) const {
     const bool alone = parted_ && parted_->alone;
     return width_at(
@@ -139,14 +184,19 @@ class Measurement {
       peak_.plates = plate_number(peak_.retention_minutes, half->total());
       state_resolution();
     }
+    if (target_.integration.hold_up_minutes) {
+      peak_.capacity_factor = capacity_factor(
+          peak_.retention_minutes, *target_.integration.hold_up_minutes);
+    }
     if (const auto at_5 = width(0.05)) peak_.tailing = tailing_factor(*at_5);
     if (const auto at_10 = width(0.1)) {
       peak_.asymmetry = asymmetry_factor(*at_10);
     }
     const double half =
         peak_.width_half_minutes.value_or(window_.width_half_minutes);
-    if (is_saturated(stretch_.minutes, stretch_.signal, placed_.left.minutes,
-                     placed_.right.minutes, peak_.height, half)) {
+    if (is_saturated(stretch_.minutes, stretch_.as_detected(),
+                     placed_.left.minutes, placed_.right.minutes, peak_.height,
+                     half)) {
       add_reason("saturated");
     }
   }
@@ -193,15 +243,7 @@ class Measurement {
         add_reason("noise-zero");
       }
     }
-    const bool by_height =
-        target_.integration.response == IntegrationSettings::Response::Height;
-    const std::vector<double> weights =
-        parted_ && by_height ? parted_->height_weights
-        : parted_            ? parted_->area_weights
-        : by_height ? height_weights(stretch_, placed_, peak_.retention_minutes)
-                    : area_weights(stretch_, placed_);
-    const Outcome<double> spread =
-        predict_response_noise(weights, model_, *noise_);
+    const Outcome<double> spread = predicted_spread();
     if (spread) {
       peak_.response_noise = *spread;
     } else {
@@ -209,7 +251,43 @@ class Measurement {
     }
   }
 
+  // An estimated baseline is no weighted sum of points: it is simulated.
+  Outcome<double> predicted_spread() {
+    if (!is_estimated(target_.integration.baseline)) {
+      return predict_response_noise(response_weights(), model_, *noise_);
+    }
+    if (noise_->simulated_baseline) {
+      peak_.baseline_bias = noise_->simulated_baseline->of(
+          target_.integration.response, model_);
+    }
+    if (!noise_->whole) return NotApplicable{noise_->whole.reason()};
+    if (!peak_.baseline_bias) {
+      return NotApplicable{"noise-zero: there is no noise to simulate"};
+    }
+    return peak_.baseline_bias->blank_sd;
+  }
+
+  std::vector<double> response_weights() const {
+    if (by(IntegrationSettings::Response::Height)) {
+      if (parted_) return parted_->height_weights;
+      return height_weights(stretch_, placed_, peak_.retention_minutes);
+    }
+    if (peak_.template_response) return template_weights_;
+    if (parted_) return parted_->area_weights;
+    return area_weights(stretch_, placed_);
+  }
+
+  void name_troubles() {
+    if (has_gap(stretch_, placed_)) add_reason("gap-in-time");
+    if (is_flat(stretch_.as_detected())) add_reason("flat-signal");
+    if (has_negative_peak(stretch_, placed_, model_,
+                          target_.integration.threshold, peak_.height)) {
+      add_reason("negative-peak");
+    }
+  }
+
   void gather_reasons() {
+    name_troubles();
     for (const std::size_t i : stretch_.spikes) {
       const double t = stretch_.minutes[i];
       if (t >= peak_.start_minutes && t <= peak_.end_minutes) {
@@ -217,6 +295,7 @@ class Measurement {
       }
     }
     for (const std::string& word : placed_.reasons) add_reason(word);
+    if (!stretch_.baseline_settled) add_reason("baseline-unsettled");
     for (const std::string& word : chosen_.reasons) add_reason(word);
     if (window_.weak) add_reason("weak-template");
     if (noise_) {
@@ -241,6 +320,7 @@ class Measurement {
   ChosenApex chosen_;
   PlacedWindow placed_;
   std::optional<PartedPeak> parted_;
+  std::vector<double> template_weights_;
   Peak peak_;
 };
 
@@ -256,7 +336,8 @@ Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
   if (!available(target.integration)) {
     return NotApplicable{
         "not-available: this version integrates over the template window, "
-        "with a straight baseline"};
+        "and fits, skims and scales the template with a straight baseline "
+        "only"};
   }
   Outcome<Peak> peak =
       Measurement(trace, target, window, expected, noise).measure();

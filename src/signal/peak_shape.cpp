@@ -81,6 +81,14 @@ double plate_number(double retention_minutes, double width_half_minutes) {
   return 5.54 * ratio * ratio;
 }
 
+std::optional<double> capacity_factor(double retention_minutes,
+                                      double hold_up_minutes) {
+  if (!(hold_up_minutes > 0.0) || !(retention_minutes >= hold_up_minutes)) {
+    return {};
+  }
+  return (retention_minutes - hold_up_minutes) / hold_up_minutes;
+}
+
 double resolution(double first_minutes, double first_width_half,
                   double second_minutes, double second_width_half) {
   return 1.18 * (second_minutes - first_minutes) /
@@ -108,8 +116,8 @@ double sharpened_apex(const SmoothedStretch& stretch, double apex,
   whole.minutes = stretch.minutes;
   whole.signal = stretch.signal;
   const Trace top = cut_trace(whole, apex - reach, apex + reach);
-  const int points = smoothing_length({}, 0.5 * width_half_minutes,
-                                      typical_step(top.minutes));
+  const int points =
+      smoothing_length({}, 0.5 * width_half_minutes, typical_step(top.minutes));
   const std::vector<double> smoothed =
       savitzky_golay(top.minutes, top.signal, points, 4, 0);
   const auto i = static_cast<std::size_t>(

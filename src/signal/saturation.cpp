@@ -4,22 +4,9 @@
 #include <cmath>
 #include <numbers>
 
+#include "loqsmith/signal/trace_trouble.hpp"
+
 namespace loqsmith {
-namespace {
-
-// The smallest change between successive points: the digit of the converter,
-// or as good as nothing for a signal that is not digitised.
-double smallest_step(std::span<const double> signal) {
-  double step = 0.0;
-  for (std::size_t i = 1; i < signal.size(); ++i) {
-    const double change = std::abs(signal[i] - signal[i - 1]);
-    if (change > 0.0 && (step == 0.0 || change < step)) step = change;
-  }
-  return step;
-}
-
-}  // namespace
-
 bool is_saturated(std::span<const double> minutes,
                   std::span<const double> signal, double start_minutes,
                   double end_minutes, double height, double width_half) {

@@ -7,6 +7,7 @@
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/moving_parabola.hpp"
 #include "loqsmith/signal/savitzky_golay.hpp"
+#include "loqsmith/signal/trace_trouble.hpp"
 
 namespace loqsmith {
 namespace {
@@ -151,6 +152,7 @@ SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
   ready.points = points > order ? points : 1;
   ready.order = points > order ? order : 0;
   ready.gain = smoothing_gain(points, order, noise);
+  if (!(noise.variance() > 0.0)) ready.rounding = rounding_noise(clean);
   return ready;
 }
 

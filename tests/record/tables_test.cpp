@@ -108,12 +108,12 @@ TEST(Tables, PeaksHaveARowForEveryTargetAndInjection) {
             "injection,analyte,found,retention_time,start,end,area,height,"
             "template_response,width_half,tailing,asymmetry,plates,resolution,"
             "signal_to_noise,noise,noise_source,response_noise,baseline,"
-            "overlap,manual,note\n"
+            "overlap,manual,note,capacity_factor\n"
             "1,toluene,yes,2.5,2.25,2.75,10.25,100,,0.1,1.125,,,,40,5,blank 2,"
-            ",valley,drop,no,overlapped;noise-stretch-short\n"
-            "2,toluene,no,2.5,2.25,2.75,-0.0625,-1,,,,,,,,,,,valley,,no,\n"
-            "3,toluene,,,,,,,,,,,,,,,,,,,,too-few-points: 3 points\n"
-            "4,toluene,,,,,,,,,,,,,,,,,,,,not-measured\n");
+            ",valley,drop,no,overlapped;noise-stretch-short,\n"
+            "2,toluene,no,2.5,2.25,2.75,-0.0625,-1,,,,,,,,,,,valley,,no,,\n"
+            "3,toluene,,,,,,,,,,,,,,,,,,,,too-few-points: 3 points,\n"
+            "4,toluene,,,,,,,,,,,,,,,,,,,,not-measured,\n");
 }
 
 TEST(Tables, ChecksOfTheSequenceComeFirst) {

@@ -18,6 +18,8 @@ struct ChosenApex {
   double height_deviation = 0.0;     ///< that height's own standard deviation
   std::vector<Summit> neighbours;    ///< summits that count as peaks
   std::vector<std::string> reasons;  ///< "several-peaks"
+  /// A peak nearer than the chosen one whose feet the trace does not hold.
+  bool cut = false;
 };
 
 /// Looks for the target within its window around the expected time.

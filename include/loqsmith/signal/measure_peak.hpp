@@ -19,8 +19,14 @@ namespace loqsmith {
 /// foot, over half a width at half height and at least 5 points. A neighbour's
 /// valley inside the window bounds it (`overlap` = "drop", reason
 /// "overlapped"), unless the settings' overlap says otherwise: see skim.hpp and
-/// model_overlap.hpp. The area is trapezoids of signal minus baseline over uneven
-/// times; nothing is smoothed for it.
+/// model_overlap.hpp. The area is trapezoids of signal minus baseline over
+/// uneven times; nothing is smoothed for it.
+///
+/// With `baseline` asymmetric-least-squares or snip that baseline is estimated
+/// below the surroundings and taken off, and the area is what lies above zero
+/// in the same window (see estimated_baseline.hpp). It runs below the middle of
+/// the noise: by how much that lifts the response is `baseline_bias`, from the
+/// noise's `simulated_baseline`, and so is `response_noise`.
 ///
 /// The target is looked for within the settings' window to either side of the
 /// *expected* time (not of the method's own), and `found` when a peak above the
@@ -29,11 +35,16 @@ namespace loqsmith {
 ///
 /// Reasons, each a word: "saturated", "several-peaks" (the nearest to the
 /// expected time is taken), "overlapped", "spike" (a single point that stands
-/// out inside the window), "few-points" (under 10), "weak-template",
+/// out inside the window), "few-points" (under 10), "gap-in-time",
+/// "negative-peak", "flat-signal" (see trace_trouble.hpp), "window-cut-short"
+/// (the trace does not hold the whole window), "weak-template",
 /// "model-not-converged" (the fit of overlapped peaks failed, the drop stands),
 /// "model-misfit" (they do not look like its peaks), "model-shape-assumed",
 /// "baseline-at-valley", "baseline-one-sided", "baseline-shortened",
-/// "no-noise", "noise-zero", and those of the noise.
+/// "baseline-unsettled" (an estimated baseline still moved after the most
+/// solves allowed), "no-noise", "noise-zero", "shape-differs" (the template
+/// does not fit, the area stands in for it), "template-not-fitted" (no shape
+/// learned, or a neighbour leaves no room: likewise), and those of the noise.
 ///
 /// `response_noise` is predicted from the noise of a whole trace for the very
 /// window and baseline used (see response_noise.hpp), and absent with its
@@ -43,7 +54,8 @@ namespace loqsmith {
 /// @param noise         of the source that the settings name; may be absent
 /// @param noise_source  "blank 3" or "same trace"
 /// @return not applicable (a reason word, then words): "window-not-covered",
-///         "too-few-points" (under 5), "no-signal", "not-available" (what
+///         "peak-cut" (the trace ends before its foot), "too-few-points"
+///         (under 5), "no-signal", "not-available" (what
 ///         this version does not compute).
 Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
                            const WindowTemplate& window, double expected,
@@ -55,8 +67,13 @@ Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
 struct PeakCurve {
   std::vector<double> minutes;
   std::vector<double> signal;
+  /// Where the response is the template's: it and its straight baseline.
+  std::vector<double> fitted_minutes;
+  std::vector<double> fitted;
   double baseline_start = 0.0;  ///< signal of the baseline at the feet
   double baseline_end = 0.0;
+  /// An estimated baseline at every point; empty: straight between the feet.
+  std::vector<double> baseline;
 };
 PeakCurve peak_curve(const Trace& trace, const Peak& peak,
                      const WindowTemplate& window, double margin_widths = 4.0);

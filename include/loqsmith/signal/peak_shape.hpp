@@ -38,6 +38,13 @@ double asymmetry_factor(const WidthAt& at_10_percent);
 /// half height (the factor as the pharmacopoeias round 8 ln 2).
 double plate_number(double retention_minutes, double width_half_minutes);
 
+/// Capacity (retention) factor, (t - t0) / t0, with the hold-up time t0 > 0 of
+/// a compound that is not retained. Nothing for a peak before it.
+///
+/// Source: Ph. Eur. 2.2.46, USP <621>: mass distribution ratio; from memory.
+std::optional<double> capacity_factor(double retention_minutes,
+                                      double hold_up_minutes);
+
 /// Resolution of two peaks, 1.18 (t2 - t1) / (W1 + W2), widths at half height.
 double resolution(double first_minutes, double first_width_half,
                   double second_minutes, double second_width_half);

@@ -21,6 +21,9 @@ struct SmoothedStretch {
   int points = 1;                   ///< smoothing length used
   int order = 0;                    ///< of its polynomial, below points
   double gain = 1.0;  ///< sd of a smoothed point over that of a point
+  /// Where the signal shows no noise: what rounding alone leaves, standard
+  /// deviation of a height. Zero elsewhere.
+  double rounding = 0.0;
   /// Where an estimated baseline has been taken off the signal: the trace's
   /// own. Empty: `signal` is that.
   std::vector<double> detector;
