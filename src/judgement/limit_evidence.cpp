@@ -111,6 +111,33 @@ void add_predicted_noise(const InjectionResponse& one, BlankKind kind,
   }
 }
 
+bool is_blank(const InjectionResponse& one) {
+  return blank_kind(one) && one.peak && one.response;
+}
+
+// Mean over the blanks of what their noise predicts.
+std::optional<PredictedBias> predicted_bias(const MeasuredAnalyte& analyte) {
+  PredictedBias sum;
+  double ratios = 0.0;
+  double n = 0.0;
+  for (const InjectionResponse& one : analyte.injections) {
+    if (!is_blank(one) || !one.peak->baseline_bias) continue;
+    const BaselineBias& bias = *one.peak->baseline_bias;
+    if (!(bias.blank_sd > 0.0)) continue;
+    const double divisor = one.response->divisor;
+    sum.blank += bias.blank / divisor;
+    sum.blank_error += bias.blank_error / divisor;
+    sum.low_peak += bias.low_peak / divisor;
+    ratios += bias.low_peak_sd / bias.blank_sd;
+    n += 1.0;
+  }
+  if (!(n > 0.0)) return std::nullopt;
+  // The blanks share their random numbers, so that the errors do not average
+  // out.
+  return PredictedBias{sum.blank / n, sum.blank_error / n, sum.low_peak / n,
+                       ratios / n};
+}
+
 std::optional<double> median(std::vector<double> values) {
   if (values.empty()) return std::nullopt;
   std::sort(values.begin(), values.end());
@@ -160,6 +187,7 @@ LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
   evidence.noise_measure = analyte.settings->noise_measure;
   evidence.bounds_own = analyte.settings->bounds_own;
   evidence.baseline_biased = analyte.settings->baseline_biased;
+  evidence.predicted_bias = predicted_bias(analyte);
   return evidence;
 }
 

@@ -2,6 +2,7 @@
 #include <string>
 
 #include "loqsmith/limits/blanks.hpp"
+#include "loqsmith/limits/spread_limit.hpp"
 #include "loqsmith/limits/words.hpp"
 #include "loqsmith/numerics/distributions.hpp"
 #include "loqsmith/numerics/least_squares.hpp"
@@ -12,6 +13,8 @@ namespace {
 // One false alarm in a hundred clean nights.
 constexpr double kAlarmRate = 0.01;
 constexpr std::size_t kLeastForDrift = 5;
+// Spread of low peaks over that of blanks which a limit may leave out.
+constexpr double kSpreadRatio = 1.2;
 
 void judge_number(LimitEstimate& estimate, const BlankSample& sample,
                   const LimitSettings& settings) {
@@ -49,6 +52,36 @@ void judge_bounds(LimitEstimate& estimate, const LimitEvidence& evidence) {
 double grubbs_critical_value(double n) {
   const double t = student_t_quantile(1.0 - kAlarmRate / (2.0 * n), n - 2.0);
   return (n - 1.0) / std::sqrt(n) * std::sqrt(t * t / (n - 2.0 + t * t));
+}
+
+std::string bias_figures(const PredictedBias& bias, const BlankSample& sample) {
+  return "by " + figure(bias.blank) + " (simulated with the blanks' noise, " +
+         "standard error " + figure(bias.blank_error) + "), that is " +
+         figure(bias.blank / sample.sd) +
+         " of their standard deviations; their mean is " + figure(sample.mean);
+}
+
+// Where nothing stands, an estimated baseline follows the noise; below a peak
+// it cannot.
+void judge_estimated_baseline(LimitEstimate& estimate,
+                              const BlankSample& sample,
+                              const LimitEvidence& evidence) {
+  if (!evidence.baseline_biased || !evidence.predicted_bias) return;
+  const PredictedBias& bias = *evidence.predicted_bias;
+  const double less = bias.blank - bias.low_peak;
+  estimate.findings.push_back({Grade::Note, "baseline-shifts-blanks",
+                               "this baseline lifts the responses of blanks " +
+                                   bias_figures(bias, sample)});
+  estimate.terms.push_back({"mean response of blanks predicted of the baseline",
+                            bias.blank, kResponse});
+  estimate.findings.push_back(
+      {bias.spread_ratio > kSpreadRatio ? Grade::Caution : Grade::Note,
+       "baseline-favours-blanks",
+       "peaks 10 times as high as the noise scatter " +
+           figure(bias.spread_ratio) +
+           " times as much as blanks over this baseline, and are lifted " +
+           figure(std::abs(less)) + (less < 0.0 ? " more" : " less") +
+           ": a limit from blanks is too low by about that factor"});
 }
 
 void judge_outlier(LimitEstimate& estimate, const BlankSample& sample) {
@@ -99,6 +132,7 @@ void judge_blanks(LimitEstimate& estimate, const BlankSample& sample,
   judge_number(estimate, sample, settings);
   judge_left_out(estimate, sample, settings);
   judge_bounds(estimate, evidence);
+  judge_estimated_baseline(estimate, sample, evidence);
   judge_outlier(estimate, sample);
   judge_drift(estimate, sample);
 }

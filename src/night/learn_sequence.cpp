@@ -144,10 +144,13 @@ FileNoise noise_of_file(const SequenceFolder& folder, const FileTask& task,
         const TargetSettings& settings = learned.targets[target];
         const Outcome<WindowTemplate>& window = learned.windows[target];
         if (!window || !noise_from_blanks(settings)) return;
-        const Outcome<NoiseEstimate> noise =
-            measure_noise(trace, expected_minutes(*window, injection.number),
-                          window->width_half_minutes, settings.noise);
-        if (noise) file.seen.push_back({target, {injection.number, *noise}});
+        const double expected = expected_minutes(*window, injection.number);
+        Outcome<NoiseEstimate> noise = measure_noise(
+            trace, expected, window->width_half_minutes, settings.noise);
+        if (!noise) return;
+        add_simulated_baseline(noise.value(), trace, settings, *window,
+                               expected);
+        file.seen.push_back({target, {injection.number, *noise}});
       });
   return file;
 }

@@ -76,8 +76,21 @@ void figure_trace(std::ostream& out, const FigureCurve& figure,
   svg_left_axis(out, y, kLeft, kRight,
                 signal_unit.empty() ? "signal" : "signal, " + signal_unit);
   svg_polyline(out, "trace", thinned(curve, x, y));
-  svg_line(out, "baseline", start, y.place(curve.baseline_start), end,
-           y.place(curve.baseline_end));
+  if (curve.baseline.size() == curve.minutes.size()) {
+    PeakCurve below;
+    below.minutes = curve.minutes;
+    below.signal = curve.baseline;
+    svg_polyline(out, "baseline", thinned(below, x, y));
+  } else {
+    svg_line(out, "baseline", start, y.place(curve.baseline_start), end,
+             y.place(curve.baseline_end));
+  }
+  if (!curve.fitted.empty()) {
+    PeakCurve scaled;
+    scaled.minutes = curve.fitted_minutes;
+    scaled.signal = curve.fitted;
+    svg_polyline(out, "curve", thinned(scaled, x, y));
+  }
   if (figure.peak.found) {
     const double apex = x.place(figure.peak.retention_minutes);
     svg_line(out, "apex", apex, kTop, apex, kTop + 8);

@@ -101,6 +101,27 @@ void check_smoothing(MethodDocument& document, const MethodElement* own,
                "raise smoothing-points or lower smoothing-order");
 }
 
+// What is fitted or skimmed brings a straight baseline of its own.
+void check_baseline(MethodDocument& document, const MethodElement* own,
+                    const MethodElement* shared) {
+  const Section section(element_rule("integration"), own, shared);
+  const std::string baseline = section.value("baseline");
+  if (baseline == "valley") return;
+  const MethodElement& written = own != nullptr ? *own : *shared;
+  const auto refuse = [&](const char* attribute) {
+    const std::string both =
+        std::string(attribute) + " " + in_quotes(section.value(attribute));
+    document.add(
+        place_of(written, "baseline"),
+        "baseline " + in_quotes(baseline) + " with " + both,
+        "baseline \"valley\", since " + both +
+            " has a straight baseline of its own",
+        std::string("choose baseline \"valley\" or another ") + attribute);
+  };
+  if (section.value("response") == "template") refuse("response");
+  if (section.value("overlap") != "drop") refuse("overlap");
+}
+
 }  // namespace
 
 void check_method_rules(MethodDocument& document) {
@@ -112,7 +133,10 @@ void check_method_rules(MethodDocument& document) {
   const MethodElement* limits = method.child("limits");
   const MethodElement* integration = method.child("integration");
   if (limits != nullptr) check_limits(document, *limits);
-  if (integration != nullptr) check_smoothing(document, nullptr, integration);
+  if (integration != nullptr) {
+    check_smoothing(document, nullptr, integration);
+    check_baseline(document, nullptr, integration);
+  }
   for (const MethodElement* analyte : method.at_path("analytes/analyte")) {
     if (const MethodElement* own = analyte->child("limits")) {
       check_limits(document, *own);
@@ -123,6 +147,7 @@ void check_method_rules(MethodDocument& document) {
     }
     if (const MethodElement* own = analyte->child("integration")) {
       check_smoothing(document, own, integration);
+      check_baseline(document, own, integration);
     }
   }
 }

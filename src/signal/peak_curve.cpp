@@ -1,4 +1,8 @@
+#include <algorithm>
+
 #include "loqsmith/signal/choose_apex.hpp"
+#include "loqsmith/signal/estimated_baseline.hpp"
+#include "loqsmith/signal/fit_template.hpp"
 #include "loqsmith/signal/measure_peak.hpp"
 #include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/place_window.hpp"
@@ -15,14 +19,19 @@ IntegrationSettings::Overlap overlap_of(const Peak& peak) {
   return IntegrationSettings::Overlap::Drop;
 }
 
-// The baseline as it was laid when the peak was measured.
-Outcome<PlacedWindow> baseline_again(const Trace& trace, const Peak& peak,
+Trace around_peak(const Trace& trace, const Peak& peak,
+                  const WindowTemplate& window) {
+  const double margin = 10.0 * window.width_half_minutes;
+  return cut_trace(
+      trace, peak.retention_minutes - 2.0 * window.left_minutes - margin,
+      peak.retention_minutes + 2.0 * window.right_minutes + margin);
+}
+
+// The straight baseline as it was laid when the peak was measured.
+Outcome<PlacedWindow> baseline_again(const Trace& near, const Peak& peak,
                                      const WindowTemplate& window) {
   const double width = window.width_half_minutes;
   const double apex = peak.retention_minutes;
-  const Trace near =
-      cut_trace(trace, apex - 2.0 * window.left_minutes - 10.0 * width,
-                apex + 2.0 * window.right_minutes + 10.0 * width);
   if (near.minutes.size() < 3) {
     return NotApplicable{"window-not-covered: the trace has no points there"};
   }
@@ -47,6 +56,37 @@ Outcome<PlacedWindow> baseline_again(const Trace& trace, const Peak& peak,
   return parted ? parted->window : *placed;
 }
 
+// The estimated baseline at the points of the curve.
+void draw_estimated(const Trace& near, const EstimatedBaseline& baseline,
+                    const Peak& peak, PeakCurve& curve) {
+  const auto at = [&](double minutes) {
+    return interpolate(near.minutes, baseline.signal, minutes);
+  };
+  for (const double t : curve.minutes) curve.baseline.push_back(at(t));
+  curve.baseline_start = at(peak.start_minutes);
+  curve.baseline_end = at(peak.end_minutes);
+}
+
+// The scaled template as it was fitted when the peak was measured.
+void draw_template(const Trace& near, const PlacedWindow& placed,
+                   const Peak& peak, const WindowTemplate& window,
+                   PeakCurve& curve) {
+  if (!peak.template_response) return;
+  SmoothedStretch stretch;
+  stretch.minutes = near.minutes;
+  stretch.signal = near.signal;
+  const Outcome<TemplateFit> fit =
+      fit_template(stretch, placed, peak.retention_minutes, window,
+                   white_noise(point_to_point_noise(near.signal)));
+  if (!fit) return;
+  for (std::size_t i = placed.left.first; i < placed.right.last; ++i) {
+    const double offset = near.minutes[i] - fit->apex_minutes;
+    curve.fitted_minutes.push_back(near.minutes[i]);
+    curve.fitted.push_back(fit->level + fit->slope * offset +
+                           fit->response * shape_at(window.shape, offset));
+  }
+}
+
 }  // namespace
 
 PeakCurve peak_curve(const Trace& trace, const Peak& peak,
@@ -57,10 +97,19 @@ PeakCurve peak_curve(const Trace& trace, const Peak& peak,
   PeakCurve curve;
   curve.minutes = shown.minutes;
   curve.signal = shown.signal;
-  const Outcome<PlacedWindow> placed = baseline_again(trace, peak, window);
+  const Trace near = around_peak(trace, peak, window);
+  const auto estimated = estimate_baseline(
+      near, baseline_from_name(peak.baseline), window.width_half_minutes,
+      std::max(window.left_minutes, window.right_minutes));
+  if (estimated) {
+    draw_estimated(near, *estimated, peak, curve);
+    return curve;
+  }
+  const Outcome<PlacedWindow> placed = baseline_again(near, peak, window);
   if (placed) {
     curve.baseline_start = placed->baseline_at(peak.start_minutes);
     curve.baseline_end = placed->baseline_at(peak.end_minutes);
+    draw_template(near, *placed, peak, window, curve);
   }
   return curve;
 }

@@ -5,6 +5,7 @@
 #include <optional>
 #include <vector>
 
+#include "loqsmith/signal/estimated_baseline.hpp"
 #include "loqsmith/signal/integrate.hpp"
 #include "loqsmith/signal/model_overlap.hpp"
 #include "loqsmith/signal/noise.hpp"
@@ -31,11 +32,8 @@ class Teacher {
           double width_half)
       : noise_(point_to_point_noise(near.signal)),
         width_half_(width_half),
-        stretch_(smooth_stretch(near,
-                                smoothing_length(target.integration, width_half,
-                                                 typical_step(near.minutes)),
-                                target.integration.smoothing_order,
-                                white_noise(noise_))),
+        stretch_(smooth_stretch_above(near, target.integration, width_half, 0.0,
+                                      white_noise(noise_))),
         apex_(apex) {
     const std::vector<Summit> all = find_summits(stretch_);
     summits_ = significant_summits(stretch_, all, target.integration.threshold,
@@ -49,6 +47,8 @@ class Teacher {
   const std::vector<Summit>& summits() const { return summits_; }
 
   Outcome<PlacedWindow> place(double left, double right) const {
+    // A straight line also where a baseline has been taken off: what that left
+    // below the noise must not keep the signal above the level of a foot.
     return place_window(stretch_, summits_,
                         {apex_, left, right, width_half_, true, noise_});
   }
@@ -133,7 +133,7 @@ double noise_beside(const Trace& trace, const TargetSettings& target,
       measure_noise_beside(trace, window.left.minutes, window.right.minutes,
                            width_half, target.noise);
   return noise ? noise->standard_deviation
-               : point_to_point_noise(stretch.signal);
+               : point_to_point_noise(stretch.as_detected());
 }
 
 std::optional<double> half_width(const SmoothedStretch& stretch,
@@ -200,6 +200,8 @@ Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
   }
   feet.left = feet.apex - window->left.minutes;
   feet.right = window->right.minutes - feet.apex;
+  feet.baseline_left = window->baseline_at(window->left.minutes);
+  feet.baseline_right = window->baseline_at(window->right.minutes);
   feet.left_overlapped = teacher.overlapped(*window, true);
   feet.right_overlapped = teacher.overlapped(*window, false);
   const auto width = half_width(stretch, *window, feet.apex, feet.height);
@@ -211,7 +213,7 @@ Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
     return NotApplicable{"no-peak: it does not fall to half of its height"};
   }
   feet.saturated =
-      is_saturated(stretch.minutes, stretch.signal, window->left.minutes,
+      is_saturated(stretch.minutes, stretch.as_detected(), window->left.minutes,
                    window->right.minutes, feet.height, feet.width_half);
   return feet;
 }

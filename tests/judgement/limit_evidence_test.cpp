@@ -114,6 +114,24 @@ TEST(LimitEvidence, SpikesAreDividedBackToTheVial) {
   EXPECT_TRUE(agrees_to_digits(evidence.spikes[1].found_vial, -0.1, 14));
 }
 
+// Means over the blanks; peaks of samples say nothing of blanks.
+TEST(LimitEvidence, BiasOfAnEstimatedBaseline) {
+  NightBuilder night;
+  night.standard(1.0);
+  for (int i = 0; i < 3; ++i) night.add(Role::SolventBlank, 0.0);
+  night.settings.baseline_biased = true;
+  EXPECT_FALSE(evidence_of(night).predicted_bias);
+  night.rows[0].peak.value().baseline_bias = BaselineBias{9, 9, 9, 9, 9};
+  night.rows[1].peak.value().baseline_bias = BaselineBias{3, 1, 2, -1, 3};
+  night.rows[2].peak.value().baseline_bias = BaselineBias{5, 3, 2, -3, 5};
+  const auto bias = evidence_of(night).predicted_bias;
+  ASSERT_TRUE(bias);
+  EXPECT_TRUE(same_bits(bias->blank, 4.0));
+  EXPECT_TRUE(same_bits(bias->blank_error, 2.0));
+  EXPECT_TRUE(same_bits(bias->low_peak, -2.0));
+  EXPECT_TRUE(same_bits(bias->spread_ratio, 2.0));
+}
+
 TEST(LimitEvidence, HeightsAndNoiseOfTheLowStandards) {
   NightBuilder night;
   for (const double x : {0.0, 0.5, 1.0, 2.0, 10.0, 10.1}) night.standard(x);

@@ -193,6 +193,32 @@ TEST(BlankDeviation, BiasedBaselineNeedsTheBlanksMean) {
   EXPECT_EQ(limit(evidence, settings)->grade(), Grade::Valid);
 }
 
+TEST(BlankDeviation, SaysByHowMuchTheBaselineShiftsBlanks) {
+  LimitEvidence evidence = evidence_of(kBlanks, known_line(1.25, 0.229, 10));
+  evidence.baseline_biased = true;
+  evidence.predicted_bias = PredictedBias{0.75, 0.0625, -0.5, 1.5};
+  ProcedureSettings settings;
+  settings.offset_blank_mean = true;
+  const auto found = limit(evidence, settings);
+  ASSERT_TRUE(found);
+  const LimitFinding* shift = finding(*found, "baseline-shifts-blanks");
+  ASSERT_TRUE(shift);
+  EXPECT_TRUE(contains(shift->text, "by 0.75 "));
+  EXPECT_TRUE(contains(shift->text, "standard error 0.0625"));
+  const LimitFinding* favour = finding(*found, "baseline-favours-blanks");
+  ASSERT_TRUE(favour);
+  EXPECT_TRUE(contains(favour->text, "1.5 times"));
+  EXPECT_TRUE(contains(favour->text, "lifted 1.25 less"));
+  EXPECT_EQ(favour->grade, Grade::Caution);
+
+  evidence.predicted_bias->spread_ratio = 1.1;
+  EXPECT_EQ(limit(evidence, settings)->grade(), Grade::Note);
+  settings.offset_blank_mean = false;
+  EXPECT_EQ(limit(evidence, settings)->grade(), Grade::NotValid);
+  evidence.baseline_biased = false;
+  EXPECT_FALSE(finding(*limit(evidence), "baseline-shifts-blanks"));
+}
+
 TEST(BlankDeviation, FarBelowTheLowestStandard) {
   const auto near = limit(evidence_of(kBlanks, known_line(1.25, 0.229, 250)));
   const auto far = limit(evidence_of(kBlanks, known_line(1.25, 0.229, 300)));

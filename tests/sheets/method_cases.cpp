@@ -195,6 +195,11 @@ std::vector<MethodCase> broken_rules() {
                 "<integration smoothing-order=\"4\"/>"),
        {{"smoothing-order", "an order below the number of points"}},
        "order of the smoothing"},
+      changed("estimated baseline below a fit",
+              "baseline=\"valley\" overlap=\"drop\"",
+              "baseline=\"snip\" overlap=\"model\"",
+              {{"baseline", "\"model\" has a straight baseline of its own"}},
+              "estimated baselines"),
   };
 }
 

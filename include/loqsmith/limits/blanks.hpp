@@ -46,7 +46,7 @@ BlankKind blank_kind_of(const LimitSettings& settings,
 double false_positive_rate(const BlankSample& sample, double threshold);
 
 /// Findings about the blanks themselves: too few of them, integration over
-/// found feet, one far from the others, a drift over the run. Nothing is ever
+/// found feet, what an estimated baseline does to them, one far from the others, a drift over the run. Nothing is ever
 /// deleted.
 void judge_blanks(LimitEstimate& estimate, const BlankSample& sample,
                   const LimitEvidence& evidence, const LimitSettings& settings);

@@ -27,6 +27,15 @@ struct PredictedNoise {
   double sd = 0.0;                      ///< zero where the signal has no noise
 };
 
+/// What an estimated baseline does to the responses of blanks, simulated with
+/// their noise; in the responses' own unit.
+struct PredictedBias {
+  double blank = 0.0;        ///< mean response of a blank
+  double blank_error = 0.0;  ///< standard error of that mean
+  double low_peak = 0.0;     ///< of a low peak: mean minus true response
+  double spread_ratio = 1.0;  ///< sd of low peaks over sd of blanks
+};
+
 /// One low spike's signed, uncensored found concentration, in the vial.
 struct SpikeResult {
   int injection = 0;
@@ -62,6 +71,8 @@ struct LimitEvidence {
   NoiseMeasure noise_measure = NoiseMeasure::HalfPeakToPeak;
   bool bounds_own = false;       ///< integration bounds="own"
   bool baseline_biased = false;  ///< asymmetric least squares or snip
+  /// Mean over the blanks; only with such a baseline, and where there is noise.
+  std::optional<PredictedBias> predicted_bias;
   /// The carry-over check is present and passed.
   bool carry_over_passed = false;
 };

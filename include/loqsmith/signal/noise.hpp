@@ -1,11 +1,13 @@
 #pragma once
 
 #include <cstddef>
+#include <optional>
 #include <string>
 #include <vector>
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/trace.hpp"
+#include "loqsmith/signal/baseline_bias.hpp"
 #include "loqsmith/signal/noise_model.hpp"
 #include "loqsmith/signal/segment_noise.hpp"
 #include "loqsmith/signal/settings.hpp"
@@ -30,6 +32,8 @@ struct NoiseEstimate {
   Outcome<NoiseModel> whole = NotApplicable{"no-noise: not looked for"};
   /// The same points, minute by minute; not applicable where too few.
   Outcome<SegmentNoise> segments = NotApplicable{"no-noise: not looked for"};
+  /// Only where the target's baseline is an estimated one.
+  std::optional<SimulatedBaseline> simulated_baseline;
 };
 
 /// Noise of a blank around a retention time, over `span_widths` widths at half
