@@ -11,8 +11,8 @@ namespace loqsmith {
 namespace {
 
 constexpr double kLargeZ = 6.7e7;
-constexpr double kSmallTau = 0.01;
-constexpr int kSeriesTerms = 10;
+constexpr double kSmallTau = 0.05;
+constexpr int kSeriesTerms = 12;
 
 double gaussian(double u, double sigma) {
   return normal_density(u / sigma) / sigma;
@@ -43,6 +43,9 @@ EmgDerivatives closed_derivatives(double u, double sigma, double tau) {
   result.by_tau =
       ((f * ((u - tau) * tau - sigma * sigma) + g * sigma * sigma) / tau) /
       (tau * tau);
+  // Of the peak with the same decay once more, h: tau h' + h = f, h' = -by_tau.
+  const double second = (slope + result.by_tau) / tau;
+  result.by_tau_cubed = -(bend - second) / (3.0 * tau);
   return result;
 }
 
@@ -64,6 +67,8 @@ EmgDerivatives series_derivatives(double u, double sigma, double tau) {
     result.by_mu += power * next;
     result.by_sigma += power * after;
     result.by_tau += k * lower * hermite;
+    const double third = v * after - (k + 2) * next;  // He_(k+3)
+    result.by_tau_cubed += (k + 1) * power * third;
     lower = power;
     power *= ratio;
     hermite = next;
@@ -73,6 +78,7 @@ EmgDerivatives series_derivatives(double u, double sigma, double tau) {
   result.by_mu *= g / sigma;
   result.by_sigma *= g / sigma;
   result.by_tau *= g / sigma;
+  result.by_tau_cubed *= g / (3.0 * sigma * sigma * sigma);
   return result;
 }
 
@@ -96,6 +102,7 @@ EmgDerivatives emg_derivatives(const EmgShape& shape, double minutes) {
   EmgDerivatives result = closed_derivatives(-u, shape.sigma, -shape.tau);
   result.by_mu = -result.by_mu;
   result.by_tau = -result.by_tau;
+  result.by_tau_cubed = -result.by_tau_cubed;
   return result;
 }
 

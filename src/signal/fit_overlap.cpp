@@ -12,9 +12,13 @@ namespace {
 // Where each parameter stands. The line has the first two.
 struct Places {
   std::size_t area = 0;
-  std::size_t mu = 0;     // 0: not free
-  std::size_t shape = 0;  // ln sigma, then tau; 0: not free
+  std::size_t mean = 0;   // 0: not free
+  std::size_t shape = 0;  // ln w, then (tau / w)^3; 0: not free
 };
+
+double spread_of(const EmgShape& shape) {
+  return std::hypot(shape.sigma, shape.tau);
+}
 
 EmgShape shape_of(const EmgGuess& guess) {
   EmgShape shape{0.0, guess.sigma, guess.tau};
@@ -52,10 +56,12 @@ class Cluster {
     p[1] = linear->coefficients[1];
     for (std::size_t k = 0; k < guesses_.size(); ++k) {
       p[places_[k].area] = linear->coefficients[2 + k];
-      if (places_[k].mu) p[places_[k].mu] = starts_[k].mu;
+      const EmgShape& shape = starts_[k];
+      if (places_[k].mean) p[places_[k].mean] = shape.mu + shape.tau;
       if (!places_[k].shape) continue;
-      p[places_[k].shape] = std::log(starts_[k].sigma);
-      p[places_[k].shape + 1] = starts_[k].tau;
+      const double share = shape.tau / spread_of(shape);
+      p[places_[k].shape] = std::log(spread_of(shape));
+      p[places_[k].shape + 1] = share * share * share;
     }
     return p;
   }
@@ -104,7 +110,7 @@ class Cluster {
       starts_.push_back(start);
       Places place;
       place.area = parameters_++;
-      if (guess.free_time) place.mu = parameters_++;
+      if (guess.free_time) place.mean = parameters_++;
       if (guess.shape == EmgGuess::Shape::Own) {
         place.shape = parameters_;
         parameters_ += 2;
@@ -118,11 +124,16 @@ class Cluster {
 
   EmgShape shape_at(std::span<const double> p, std::size_t k) const {
     EmgShape shape = starts_[k];
-    if (places_[k].mu) shape.mu = p[places_[k].mu];
+    const double mean =
+        places_[k].mean ? p[places_[k].mean] : shape.mu + shape.tau;
     if (places_[k].shape) {
-      shape.sigma = std::exp(p[places_[k].shape]);
-      shape.tau = p[places_[k].shape + 1];
+      const double spread = std::exp(p[places_[k].shape]);
+      const double share = std::cbrt(p[places_[k].shape + 1]);
+      shape.tau = spread * share;
+      // Not a number beyond the pure decay: the fit steps back from there.
+      shape.sigma = spread * std::sqrt(1.0 - share * share);
     }
+    shape.mu = mean - shape.tau;
     return shape;
   }
 
@@ -148,13 +159,15 @@ class Cluster {
       const EmgShape shape = shape_at(p, k);
       const Places& place = places_[k];
       const double area = p[place.area];
+      const double cube = std::pow(spread_of(shape), 3.0);
       for (std::size_t i = 0; i < n; ++i) {
         const EmgDerivatives d = emg_derivatives(shape, x_[i]);
         j[place.area * n + i] += d.value;
-        if (place.mu) j[place.mu * n + i] += area * d.by_mu;
+        if (place.mean) j[place.mean * n + i] += area * d.by_mu;
         if (!place.shape) continue;
-        j[place.shape * n + i] += area * shape.sigma * d.by_sigma;
-        j[(place.shape + 1) * n + i] += area * d.by_tau;
+        j[place.shape * n + i] += area * (shape.sigma * d.by_sigma +
+                                          shape.tau * (d.by_tau - d.by_mu));
+        j[(place.shape + 1) * n + i] += area * cube * d.by_tau_cubed;
       }
     }
   }
@@ -238,7 +251,12 @@ Outcome<OverlapFit> fit_overlap(std::span<const double> minutes,
   if (!start) return failed(start.reason());
   const Outcome<NonlinearFit> fit = minimise_squares(cluster.problem(), *start);
   if (!fit) return failed(fit.reason());
-  return cluster.result(*fit, window);
+  OverlapFit found = cluster.result(*fit, window);
+  const bool finite =
+      std::all_of(found.area_weights.begin(), found.area_weights.end(),
+                  [](double weight) { return std::isfinite(weight); });
+  if (!finite) return failed("a peak became a pure decay");
+  return found;
 }
 
 }  // namespace loqsmith

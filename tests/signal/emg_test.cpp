@@ -98,14 +98,38 @@ TEST(Emg, DerivativesAreThoseOfTheValue) {
   }
 }
 
+// Central differences at constant mean and variance.
+TEST(Emg, DerivativeByTheCubeOfTauIsThatOfTheValue) {
+  const double spread = 0.1;
+  const auto value = [&](double cube, double t) {
+    const double tau = std::cbrt(cube);
+    const double sigma = std::sqrt(spread * spread - tau * tau);
+    return emg({5.0 - tau, sigma, tau}, t);
+  };
+  for (const double tau : {-0.06, -0.003, 0.004, 0.02, 0.08}) {
+    for (const double t : {4.8, 4.93, 5.02, 5.3}) {
+      const double sigma = std::sqrt(spread * spread - tau * tau);
+      const auto found = emg_derivatives({5.0 - tau, sigma, tau}, t);
+      const double cube = tau * tau * tau;
+      const double step = 1e-3 * cube;
+      const double slope =
+          (value(cube + step, t) - value(cube - step, t)) / (2.0 * step);
+      // Largest values are some 1e4; the step costs a millionth of that.
+      EXPECT_LT(std::abs(found.by_tau_cubed - slope), 0.05) << tau << ' ' << t;
+    }
+  }
+}
+
 TEST(Emg, BothFormsOfTheDerivativesMeet) {
   for (const double t : {4.75, 4.9, 5.0, 5.1, 5.35}) {
-    const double tau = 0.001;  // sigma / 100
+    const double tau = 0.005;  // sigma / 20
     const auto below = emg_derivatives({5.0, 0.1, tau * (1.0 - 1e-12)}, t);
     const auto above = emg_derivatives({5.0, 0.1, tau * (1.0 + 1e-12)}, t);
     EXPECT_TRUE(agrees_to_digits(below.by_mu, above.by_mu, 8)) << t;
     EXPECT_TRUE(agrees_to_digits(below.by_sigma, above.by_sigma, 8)) << t;
     EXPECT_TRUE(agrees_to_digits(below.by_tau, above.by_tau, 7)) << t;
+    EXPECT_TRUE(agrees_to_digits(below.by_tau_cubed, above.by_tau_cubed, 6))
+        << t;
   }
 }
 

@@ -217,6 +217,22 @@ TEST(OverlapSimulation, ModelAtResolutionSevenTenthsAndEqualHeights) {
   expect_predicted(found.second);
 }
 
+// Without a tail tau is hardly to be told from zero, and its sign not at all:
+// the fit must come to rest all the same.
+TEST(OverlapSimulation, ModelComesToRestForGaussians) {
+  Pair pair = one_to_five();
+  pair.tau = 0.0;
+  pair.first_height = 300.0;
+  pair.second_height = 15000.0;
+  pair.resolution = 1.2;
+  const Both found = simulate(pair, Overlap::Model, "model");
+  const SimulatedTrace wanted = trace_of(pair);
+  EXPECT_GE(found.first.parted, kTraces - kTraces / 100);
+  EXPECT_GE(found.second.parted, kTraces - kTraces / 100);
+  expect_unbiased(found.first, wanted.peaks[0].area, 0.03);
+  expect_unbiased(found.second, wanted.peaks[1].area, 0.03);
+}
+
 // Where the standards are fused like the samples, they still teach the shape.
 TEST(OverlapSimulation, ModelTaughtByFusedStandards) {
   const Pair pair = fused_equals();

@@ -22,7 +22,7 @@ struct EmgShape {
 /// Finite for every finite argument; agrees with high precision to 12 digits.
 double emg(const EmgShape& shape, double minutes);
 
-/// Value and derivatives by the parameters. For |tau| below sigma / 100 the
+/// Value and derivatives by the parameters. For |tau| below sigma / 20 the
 /// derivatives are taken from the series in tau/sigma (Hermite polynomials
 /// times the Gaussian), where the closed forms cancel.
 struct EmgDerivatives {
@@ -30,6 +30,10 @@ struct EmgDerivatives {
   double by_mu = 0.0;
   double by_sigma = 0.0;
   double by_tau = 0.0;
+  /// By the cube of tau (half the third central moment) at constant mean and
+  /// variance. At tau 0 a change of tau is one of mu, to first order, and
+  /// tells nothing of its own; a change of its cube does.
+  double by_tau_cubed = 0.0;
 };
 EmgDerivatives emg_derivatives(const EmgShape& shape, double minutes);
 

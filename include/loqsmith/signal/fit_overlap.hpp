@@ -63,9 +63,11 @@ double fitted_area(const FittedEmg& peak, const AreaWindow& window);
 /// and no shape is free the fit is linear, so that the first peak's area is
 /// unbiased and signed.
 ///
-/// Times are fitted in units of `width_half` about the middle of the stretch,
-/// sigma as its logarithm (it stays positive), tau as it is: the peak passes
-/// smoothly through the Gaussian from tailing to fronting.
+/// What is fitted of a peak is its mean, the logarithm of its standard
+/// deviation w (of sigma and tau together) and (tau / w)^3, half its skewness:
+/// three moments that points determine for every shape, from fronting through
+/// the Gaussian to tailing, where mu, sigma and tau themselves run into each
+/// other. Times are in units of `width_half` about the middle of the stretch.
 ///
 /// @param minutes  strictly increasing, as many as signal
 /// @return not applicable: "model-not-converged", with why
