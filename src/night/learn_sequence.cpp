@@ -7,6 +7,7 @@
 #include "loqsmith/base/input_error.hpp"
 #include "loqsmith/night/file_visit.hpp"
 #include "loqsmith/night/parallel.hpp"
+#include "loqsmith/signal/typical_noise.hpp"
 
 namespace loqsmith {
 namespace {
@@ -126,8 +127,15 @@ struct FileNoise {
 
 bool is_solvent_blank(Role role) { return role == Role::SolventBlank; }
 
-bool noise_from_blanks(const TargetSettings& target) {
-  return target.noise.source == NoiseSettings::Source::Blank;
+bool by_template(const TargetSettings& target) {
+  return target.integration.response == IntegrationSettings::Response::Template;
+}
+
+// The template's weights follow the blanks' noise, whatever noise stands
+// beside the results.
+bool needs_blanks(const TargetSettings& target) {
+  return target.noise.source == NoiseSettings::Source::Blank ||
+         by_template(target);
 }
 
 FileNoise noise_of_file(const SequenceFolder& folder, const FileTask& task,
@@ -143,7 +151,7 @@ FileNoise noise_of_file(const SequenceFolder& folder, const FileTask& task,
       [&](const Injection& injection, std::size_t target, const Trace& trace) {
         const TargetSettings& settings = learned.targets[target];
         const Outcome<WindowTemplate>& window = learned.windows[target];
-        if (!window || !noise_from_blanks(settings)) return;
+        if (!window || !needs_blanks(settings)) return;
         const double expected = expected_minutes(*window, injection.number);
         Outcome<NoiseEstimate> noise = measure_noise(
             trace, expected, window->width_half_minutes, settings.noise);
@@ -159,7 +167,7 @@ void learn_noise(const SequenceFolder& folder, unsigned jobs,
                  Learned& learned) {
   learned.blank_noise.resize(learned.targets.size());
   if (std::none_of(learned.targets.begin(), learned.targets.end(),
-                   noise_from_blanks)) {
+                   needs_blanks)) {
     return;
   }
   const std::vector<FileTask> tasks =
@@ -182,6 +190,21 @@ void learn_noise(const SequenceFolder& folder, unsigned jobs,
   }
 }
 
+// One noise model for the weights of the whole sequence: that of the blanks,
+// where there are any.
+void fix_template_weights(Learned& learned) {
+  for (std::size_t i = 0; i < learned.targets.size(); ++i) {
+    if (!by_template(learned.targets[i]) || !learned.windows[i]) continue;
+    std::vector<NoiseModel> models;
+    for (const BlankNoise& blank : learned.blank_noise[i]) {
+      models.push_back(blank.noise.whole ? *blank.noise.whole
+                                         : blank.noise.model);
+    }
+    if (models.empty()) continue;
+    learned.windows[i].value().weights_noise = typical_noise(models);
+  }
+}
+
 }  // namespace
 
 std::vector<TargetSettings> method_targets(const Method& method) {
@@ -200,6 +223,7 @@ Learned learn_sequence(const SequenceFolder& folder, unsigned jobs) {
   learned.targets = method_targets(folder.sheets.method);
   learn_windows(folder, jobs, learned);
   learn_noise(folder, jobs, learned);
+  fix_template_weights(learned);
   return learned;
 }
 

@@ -154,7 +154,8 @@ void traces(std::ostream& out, const PublishedRun& run,
                (curve->peak.signal_to_noise
                     ? ", S/N " + html_number(*curve->peak.signal_to_noise, 3)
                     : std::string{}) +
-               ". Shaded: the window; straight: the baseline.",
+               ". Shaded: the window; straight: the baseline" +
+               (curve->curve.fitted.empty() ? "." : "; heavy: the template."),
            [&] { figure_trace(out, *curve, "", span); });
   }
   out << "</div>\n";

@@ -10,7 +10,7 @@ ElementRule integration() {
       "How peaks are found and integrated.",
       Content::Empty,
       {defaulted("response",
-                 choice({{"area"}, {"height"}, {"template", kLater}}), "area",
+                 choice({{"area"}, {"height"}, {"template"}}), "area",
                  "What is calibrated."),
        defaulted("bounds", choice({{"template"}, {"own", kLater}}), "template",
                  "Every role over the same window, or the found feet; limits "

@@ -122,7 +122,11 @@ Outcome<TemplateFit> fit_at(const SmoothedStretch& stretch,
   if (!movable) return NotApplicable{movable.reason()};
   TemplateFit scaled;
   const Values& weights = fit->weights.front();
-  scaled.response = fit->coefficients(columns.signal).front();
+  const Values found = fit->coefficients(columns.signal);
+  scaled.response = found[0];
+  scaled.level = found[1] + stretch.signal[columns.first];
+  scaled.slope =
+      found[2] / (learned.shape.left_minutes + learned.shape.right_minutes());
   scaled.weights.assign(stretch.minutes.size(), 0.0);
   std::copy(
       weights.begin(), weights.end(),

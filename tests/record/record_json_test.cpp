@@ -46,6 +46,26 @@ TEST(RecordJson, KeepsTemplatesAndWhyThereIsNone) {
   EXPECT_EQ(templates[1]["not_applicable"], "no peak fit to teach");
 }
 
+TEST(RecordJson, KeepsTheShapeWhereOneWasLearned) {
+  PublishedRun run = test::example_run();
+  EXPECT_FALSE(record_of(run)["templates"][0].contains("shape"));
+  WindowTemplate& window = run.targets[0].window.value();
+  window.shape = {.left_minutes = 0.1,
+                  .step_minutes = 0.05,
+                  .values = {0.0, 5.0, 10.0, 5.0, 0.0},
+                  .lessons = 3,
+                  .noise = 0.01,
+                  .scatter = 0.02};
+  window.weights_noise = {0.25, 0.75, 0.8};
+  const auto shape = record_of(run)["templates"][0]["shape"];
+  EXPECT_EQ(shape["first_offset_minutes"], -0.1);
+  EXPECT_EQ(shape["step_minutes"], 0.05);
+  EXPECT_EQ(shape["values"], nlohmann::json({0.0, 5.0, 10.0, 5.0, 0.0}));
+  EXPECT_EQ(shape["lessons"], 3);
+  EXPECT_EQ(shape["scatter"], 0.02);
+  EXPECT_EQ(shape["weights_noise"]["correlation"], 0.8);
+}
+
 TEST(RecordJson, KeepsTheNoiseOfTheBlanks) {
   PublishedRun run = test::example_run();
   NoiseEstimate noise;

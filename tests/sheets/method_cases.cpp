@@ -211,10 +211,9 @@ std::vector<MethodCase> unavailable() {
                    "what is not available in this version");
   };
   return {
-      later("template response", "response=\"area\"", "response=\"template\"",
-            "response",
-            "expected \"area\" or \"height\", found response=\"template\", "
-            "not available in this version"),
+      later("own bounds", "response=\"area\"", "bounds=\"own\"", "bounds",
+            "expected \"template\", found bounds=\"own\", not available in "
+            "this version"),
       later("weight 1/s2", "weight=\"1/x\"", "weight=\"1/s2\"",
             "weight=\"1/s2\"", "not available in this version"),
       later("extracted trace", "kind=\"srm\"", "kind=\"extracted\"",

@@ -6,6 +6,7 @@
 #include <cmath>
 #include <vector>
 
+#include "loqsmith/signal/summits.hpp"
 #include "support/tolerance.hpp"
 #include "template_night.hpp"
 
@@ -216,6 +217,65 @@ TEST_F(Shapes, ATraceWithoutNoiseIsMeasured) {
   const Peak blank = night_.measure_clean(0.0);
   ASSERT_TRUE(blank.template_response);
   EXPECT_LE(std::abs(*blank.template_response), 1e-10 * area_of_height(100.0));
+}
+
+TEST_F(Shapes, TheFigureShowsTheFit) {
+  SimulatedTrace wanted = night_.wanted_for(area_of_height(100.0));
+  wanted.white_noise = 0.0;
+  const Trace trace = simulate_trace(wanted, night_.stream());
+  const Peak peak = night_.measured(trace, test::no_noise());
+  ASSERT_TRUE(peak.template_response);
+  const PeakCurve curve = peak_curve(trace, peak, night_.window());
+  ASSERT_GE(curve.fitted.size(), 30U);
+  for (std::size_t i = 0; i < curve.fitted.size(); ++i) {
+    const double t = curve.fitted_minutes[i];
+    const double truth = interpolate(trace.minutes, trace.signal, t);
+    // The shape was learned from peaks of 200 to 600 times the noise.
+    EXPECT_LE(std::abs(curve.fitted[i] - truth), 1.0) << t;
+  }
+}
+
+TEST_F(Shapes, UnevenTimesGiveTheSameResponse) {
+  SimulatedTrace wanted = night_.wanted_for(area_of_height(100.0));
+  wanted.white_noise = 0.0;
+  wanted.jitter = 0.4;
+  const double even =
+      *night_.measure_clean(area_of_height(100.0)).template_response;
+  for (int i = 0; i < 20; ++i) {
+    const Peak peak = night_.measured(simulate_trace(wanted, night_.stream()),
+                                      test::no_noise());
+    EXPECT_LE(std::abs(peak.template_response.value_or(peak.area) / even - 1.0),
+              0.01);
+  }
+}
+
+// Odd traces: whatever comes, finite numbers or a reason.
+TEST_F(Shapes, AnyTraceGivesFiniteNumbersOrAReason) {
+  RandomStream& stream = night_.stream();
+  int fitted = 0;
+  for (int i = 0; i < 500; ++i) {
+    Trace trace;
+    const int points = static_cast<int>(stream.uniform() * 150.0);
+    const bool wild = i % 2 == 0;
+    double t = 4.0 + stream.uniform();
+    for (int k = 0; k < points; ++k) {
+      t += stream.uniform() < 0.1 ? 0.3 * stream.uniform() : 0.02;
+      trace.minutes.push_back(t);
+      trace.signal.push_back(wild ? std::exp(3.0 * stream.normal())
+                                  : std::round(0.6 * stream.normal()));
+    }
+    const auto seen = observe_teacher(trace, by_template(), 1, Role::Standard);
+    if (seen) learn_template({*seen});
+    const auto peak = measure_peak(trace, night_.target(), night_.window(), 5.0,
+                                   night_.blank_noise(), "blank 1");
+    if (!peak) continue;
+    EXPECT_NE(peak->template_response.has_value(), peak->area_instead);
+    EXPECT_EQ(peak->template_response.has_value(), peak->shape_passed);
+    if (!peak->template_response) continue;
+    EXPECT_TRUE(std::isfinite(*peak->template_response));
+    ++fitted;
+  }
+  EXPECT_GE(fitted, 20);
 }
 
 TEST(TypicalNoise, MediansOfWhatTheBlanksShow) {

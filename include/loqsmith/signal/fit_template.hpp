@@ -14,6 +14,8 @@ struct TemplateFit {
   double response = 0.0;        ///< signal unit x minute, signed
   std::vector<double> weights;  ///< of all points: response = sum w y
   double apex_minutes = 0.0;    ///< where the shape was placed
+  double level = 0.0;           ///< of the straight baseline there
+  double slope = 0.0;           ///< of the same, per minute
   double later_minutes = 0.0;   ///< by how much it would fit better later
   double misfit = 0.0;          ///< r' G^-1 r
   double allowed = 0.0;         ///< the most that passes
