@@ -2,10 +2,8 @@
 
 #include <gtest/gtest.h>
 
-#include <cmath>
 #include <vector>
 
-#include "loqsmith/numerics/mean.hpp"
 #include "signal_support.hpp"
 #include "support/tolerance.hpp"
 
@@ -18,7 +16,6 @@ using test::SimulatedTrace;
 using test::target_at;
 using test::window_of;
 using test::within_condition;
-using Response = IntegrationSettings::Response;
 
 const WindowTemplate kWindow = window_of(0.18, 0.2, 0.1177);
 
@@ -30,60 +27,6 @@ SimulatedTrace white_detector() {
   detector.white_noise = 1.0;
   return detector;
 }
-
-SimulatedTrace creeping_detector() {
-  SimulatedTrace detector = white_detector();
-  detector.white_noise = 0.5;
-  detector.creeping_noise = 0.87;
-  detector.creep = 0.8;
-  return detector;
-}
-
-struct Case {
-  const char* name;
-  SimulatedTrace detector;
-  Response response;
-};
-
-class Blanks : public testing::TestWithParam<Case> {};
-
-// Each blank predicts its own spread; what 2000 of them scatter is the truth,
-// itself known to 1.6 %.
-TEST_P(Blanks, PredictTheirOwnSpread) {
-  TargetSettings target = target_at(5.2);
-  target.integration.response = GetParam().response;
-  RandomStream stream(GetParam().name);
-  std::vector<double> responses;
-  std::vector<double> predicted;
-  for (int i = 0; i < 2000; ++i) {
-    const Trace trace = simulate_trace(GetParam().detector, stream);
-    const auto noise = measure_noise(trace, 5.2, 0.1177, target.noise);
-    const auto peak = measure_peak(trace, target, kWindow, 5.2, noise, "own");
-    ASSERT_TRUE(peak && peak->response_noise);
-    responses.push_back(GetParam().response == Response::Height ? peak->height
-                                                                : peak->area);
-    predicted.push_back(*peak->response_noise);
-  }
-  const double seen = standard_deviation(responses);
-  const double ratio = mean(predicted) / seen;
-  int close = 0;
-  for (const double one : predicted) {
-    close += one >= 0.8 * seen && one <= 1.2 * seen ? 1 : 0;
-  }
-  RecordProperty("mean_over_empirical", std::to_string(ratio));
-  RecordProperty("within_20_percent", close);
-  EXPECT_GT(ratio, 0.90);
-  EXPECT_LT(ratio, 1.10);
-  EXPECT_GE(close, 1800);
-}
-
-INSTANTIATE_TEST_SUITE_P(
-    ResponseNoise, Blanks,
-    testing::Values(Case{"WhiteArea", white_detector(), Response::Area},
-                    Case{"CreepingArea", creeping_detector(), Response::Area},
-                    Case{"CreepingHeight", creeping_detector(),
-                         Response::Height}),
-    [](const auto& one) { return std::string(one.param.name); });
 
 NoiseEstimate known(const NoiseModel& whole) {
   NoiseEstimate noise;
