@@ -89,7 +89,7 @@ void figure_trace(std::ostream& out, const FigureCurve& figure,
     PeakCurve scaled;
     scaled.minutes = curve.fitted_minutes;
     scaled.signal = curve.fitted;
-    svg_polyline(out, "curve", thinned(scaled, x, y));
+    svg_polyline(out, "baseline", thinned(scaled, x, y));
   }
   if (figure.peak.found) {
     const double apex = x.place(figure.peak.retention_minutes);

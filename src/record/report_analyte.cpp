@@ -155,7 +155,7 @@ void traces(std::ostream& out, const PublishedRun& run,
                     ? ", S/N " + html_number(*curve->peak.signal_to_noise, 3)
                     : std::string{}) +
                ". Shaded: the window; straight: the baseline" +
-               (curve->curve.fitted.empty() ? "." : "; heavy: the template."),
+               (curve->curve.fitted.empty() ? "." : "; curved: the template."),
            [&] { figure_trace(out, *curve, "", span); });
   }
   out << "</div>\n";
