@@ -7,6 +7,8 @@
 #include "loqsmith/base/input_error.hpp"
 #include "loqsmith/night/file_visit.hpp"
 #include "loqsmith/night/parallel.hpp"
+#include "loqsmith/signal/baseline_bias.hpp"
+#include "loqsmith/signal/estimated_baseline.hpp"
 #include "loqsmith/signal/typical_noise.hpp"
 
 namespace loqsmith {
@@ -132,10 +134,10 @@ bool by_template(const TargetSettings& target) {
 }
 
 // The template's weights follow the blanks' noise, whatever noise stands
-// beside the results.
+// beside the results; and an estimated baseline is simulated with it.
 bool needs_blanks(const TargetSettings& target) {
   return target.noise.source == NoiseSettings::Source::Blank ||
-         by_template(target);
+         by_template(target) || is_estimated(target.integration.baseline);
 }
 
 FileNoise noise_of_file(const SequenceFolder& folder, const FileTask& task,
@@ -156,8 +158,6 @@ FileNoise noise_of_file(const SequenceFolder& folder, const FileTask& task,
         Outcome<NoiseEstimate> noise = measure_noise(
             trace, expected, window->width_half_minutes, settings.noise);
         if (!noise) return;
-        add_simulated_baseline(noise.value(), trace, settings, *window,
-                               expected);
         file.seen.push_back({target, {injection.number, *noise}});
       });
   return file;
@@ -190,19 +190,45 @@ void learn_noise(const SequenceFolder& folder, unsigned jobs,
   }
 }
 
+std::vector<NoiseModel> noise_models(const std::vector<BlankNoise>& blanks) {
+  std::vector<NoiseModel> models;
+  for (const BlankNoise& blank : blanks) {
+    models.push_back(blank.noise.whole ? *blank.noise.whole
+                                       : blank.noise.model);
+  }
+  return models;
+}
+
 // One noise model for the weights of the whole sequence: that of the blanks,
 // where there are any.
 void fix_template_weights(Learned& learned) {
   for (std::size_t i = 0; i < learned.targets.size(); ++i) {
     if (!by_template(learned.targets[i]) || !learned.windows[i]) continue;
-    std::vector<NoiseModel> models;
-    for (const BlankNoise& blank : learned.blank_noise[i]) {
-      models.push_back(blank.noise.whole ? *blank.noise.whole
-                                         : blank.noise.model);
-    }
+    const auto models = noise_models(learned.blank_noise[i]);
     if (models.empty()) continue;
     learned.windows[i].value().weights_noise = typical_noise(models);
   }
+}
+
+// Estimated baselines are simulated once with the blanks' noise, and scaled to
+// that of each.
+void simulate_baselines(unsigned jobs, Learned& learned) {
+  learned.simulated_baselines.resize(learned.targets.size());
+  for_each_index(learned.targets.size(), jobs, [&](std::size_t i) {
+    std::vector<BlankNoise>& blanks = learned.blank_noise[i];
+    if (blanks.empty() || !learned.windows[i]) return;
+    const NoiseEstimate& any = blanks.front().noise;
+    const double step = (any.end_minutes - any.start_minutes) /
+                        static_cast<double>(any.points - 1);
+    const auto simulated =
+        simulate_baseline(learned.targets[i], *learned.windows[i],
+                          typical_noise(noise_models(blanks)), step);
+    learned.simulated_baselines[i] = simulated;
+    if (!simulated) return;
+    for (BlankNoise& blank : blanks) {
+      blank.noise.simulated_baseline = simulated->scaled_to(blank.noise);
+    }
+  });
 }
 
 }  // namespace
@@ -224,6 +250,7 @@ Learned learn_sequence(const SequenceFolder& folder, unsigned jobs) {
   learn_windows(folder, jobs, learned);
   learn_noise(folder, jobs, learned);
   fix_template_weights(learned);
+  simulate_baselines(jobs, learned);
   return learned;
 }
 

@@ -38,7 +38,11 @@ NoiseFor noise_for(const Learned& learned, std::size_t target,
   add_whole_trace_noise(noise.value(), trace, expected - window.left_minutes,
                         expected + window.right_minutes,
                         window.width_half_minutes);
-  add_simulated_baseline(noise.value(), trace, settings, window, expected);
+  if (const auto& simulated = learned.simulated_baselines[target]) {
+    noise.value().simulated_baseline = simulated->scaled_to(*noise);
+  } else {
+    add_simulated_baseline(noise.value(), trace, settings, window, expected);
+  }
   if (settings.noise.source == NoiseSettings::Source::Blank) {
     noise.value().reasons.emplace_back("noise-from-same-trace");
   }

@@ -174,19 +174,32 @@ class Simulation {
   Gathered blank_area_, blank_height_, low_area_, low_height_;
 };
 
-}  // namespace
-
-BaselineBias SimulatedBaseline::of(IntegrationSettings::Response response,
-                                   const NoiseModel& here) const {
-  const double seen = here.point_to_point() / noise.point_to_point();
-  const double factor = seen > kClearlyNoisier ? seen : 1.0;
-  BaselineBias bias =
-      response == IntegrationSettings::Response::Height ? height : area;
+BaselineBias scaled(BaselineBias bias, double factor) {
   for (double* one : {&bias.blank, &bias.blank_error, &bias.blank_sd,
                       &bias.low_peak, &bias.low_peak_sd}) {
     *one *= factor;
   }
   return bias;
+}
+
+}  // namespace
+
+SimulatedBaseline SimulatedBaseline::scaled_to(
+    const NoiseEstimate& measured) const {
+  const NoiseModel& there = measured.whole ? *measured.whole : measured.model;
+  const double factor = there.point_to_point() / noise.point_to_point();
+  return {scaled(area, factor), scaled(height, factor), noise.scaled(factor)};
+}
+
+BaselineBias SimulatedBaseline::of(IntegrationSettings::Response response,
+                                   const NoiseModel& here) const {
+  const double known = noise.point_to_point();
+  const double seen = here.point_to_point();
+  const bool noisier = known > 0.0 && seen > kClearlyNoisier * known;
+  const double factor = noisier ? seen / known : 1.0;
+  return scaled(
+      response == IntegrationSettings::Response::Height ? height : area,
+      factor);
 }
 
 std::optional<SimulatedBaseline> simulate_baseline(const TargetSettings& target,

@@ -282,6 +282,12 @@ TEST_P(Estimated, LowPeaksScatterMoreThanBlanks) {
   const BaselineBias same =
       found->of(IntegrationSettings::Response::Area, white_noise(1.2));
   EXPECT_TRUE(same_bits(same.blank, found->area.blank));
+  // A blank that shows no noise lifts nothing, and nothing is divided by it.
+  NoiseEstimate quiet;
+  const BaselineBias none = found->scaled_to(quiet).of(
+      IntegrationSettings::Response::Area, white_noise(1.0));
+  EXPECT_TRUE(same_bits(none.blank, 0.0));
+  EXPECT_TRUE(same_bits(none.blank_sd, 0.0));
 }
 
 INSTANTIATE_TEST_SUITE_P(Kinds, Estimated,

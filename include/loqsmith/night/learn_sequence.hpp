@@ -2,11 +2,13 @@
 
 #include <cstddef>
 #include <map>
+#include <optional>
 #include <string>
 #include <vector>
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/night/sequence_folder.hpp"
+#include "loqsmith/signal/baseline_bias.hpp"
 #include "loqsmith/signal/learn.hpp"
 #include "loqsmith/signal/noise.hpp"
 #include "loqsmith/signal/settings.hpp"
@@ -26,6 +28,9 @@ struct Learned {
   std::vector<Outcome<WindowTemplate>> windows;  ///< one a target
   std::vector<std::vector<BlankNoise>>
       blank_noise;  ///< one a target, run order
+  /// One a target, with the blanks' noise; nothing: no estimated baseline, or
+  /// no blank to learn the noise from.
+  std::vector<std::optional<SimulatedBaseline>> simulated_baselines;
   /// SHA-256 of the files read in this pass: a file that has another one when
   /// it is measured is refused.
   std::map<std::string, std::string> hashes;

@@ -17,7 +17,12 @@ struct SimulatedBaseline {
   BaselineBias height;
   NoiseModel noise;  ///< that was simulated
 
-  /// The same for noise of another size: the baselines scale with the signal.
+  /// The same for noise of the size that was measured somewhere else: the
+  /// baselines scale with the signal.
+  SimulatedBaseline scaled_to(const NoiseEstimate& measured) const;
+
+  /// For a trace at hand: raised where that is clearly noisier (1.3 times) than
+  /// the noise that was simulated.
   BaselineBias of(IntegrationSettings::Response response,
                   const NoiseModel& here) const;
 };
