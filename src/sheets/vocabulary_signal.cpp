@@ -9,19 +9,19 @@ ElementRule integration() {
       "integration",
       "How peaks are found and integrated.",
       Content::Empty,
-      {defaulted("response",
-                 choice({{"area"}, {"height"}, {"template"}}), "area",
-                 "What is calibrated."),
+      {defaulted("response", choice({{"area"}, {"height"}, {"template"}}),
+                 "area", "What is calibrated."),
        defaulted("bounds", choice({{"template"}, {"own", kLater}}), "template",
                  "Every role over the same window, or the found feet; limits "
                  "from blanks are not valid with the latter."),
        defaulted("baseline",
-                 choice({{"valley"},
-                         {"asymmetric-least-squares"},
-                         {"snip"}}),
-                 "valley", "What is subtracted."),
-       defaulted("overlap",
-                 choice({{"drop"}, {"skim"}, {"model"}}), "drop",
+                 choice({{"valley"}, {"asymmetric-least-squares"}, {"snip"}}),
+                 "valley",
+                 "What is subtracted: a straight line from foot to foot, or a "
+                 "curve estimated below the peaks. The latter lifts the "
+                 "responses of blanks: limits from their deviation then need "
+                 "offset=\"blank-mean\"."),
+       defaulted("overlap", choice({{"drop"}, {"skim"}, {"model"}}), "drop",
                  "Perpendicular drop, tangent skim, or exponentially modified "
                  "Gaussians fitted together."),
        defaulted("smoothing-points",
