@@ -215,6 +215,7 @@ std::optional<SimulatedBaseline> simulate_baseline(const TargetSettings& target,
 void add_simulated_baseline(NoiseEstimate& noise, const Trace& trace,
                             const TargetSettings& target,
                             const WindowTemplate& window, double expected) {
+  if (!is_estimated(target.integration.baseline)) return;
   const double width = window.width_half_minutes;
   const Trace near = cut_trace(trace, expected - kMarginWidths * width,
                                expected + kMarginWidths * width);
