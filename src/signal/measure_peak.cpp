@@ -125,7 +125,8 @@ class Measurement {
     peak_.found = chosen_.minutes.has_value();
     double apex = chosen_.minutes.value_or(expected_);
     if (peak_.found && chosen_.height >= kSharpHeight * point_noise_) {
-      apex = sharpened_apex(stretch_, apex, window_.width_half_minutes);
+      apex = sharpened_apex(stretch_, apex, window_.width_half_minutes,
+                            point_noise_ / chosen_.height);
       const Outcome<PlacedWindow> again = place(apex);
       if (again) placed_ = *again;
     }

@@ -5,10 +5,13 @@
 #include <span>
 #include <vector>
 
-#include "loqsmith/signal/savitzky_golay.hpp"
+#include "loqsmith/signal/local_fit.hpp"
 
 namespace loqsmith {
 namespace {
+
+constexpr double kWidestReach = 0.75;
+constexpr double kLeastReach = 0.15;
 
 constexpr double kNoiseMultiple = 3.0;
 
@@ -109,24 +112,34 @@ std::optional<ParabolaApex> parabola_apex(const double (&minutes)[3],
   return ParabolaApex{minutes[1] + offset, signal[1] + 0.5 * slope * offset};
 }
 
+double apex_reach(double noise_share) {
+  const double reach = kWidestReach * std::pow(100.0 * noise_share, 1.0 / 5.5);
+  return std::clamp(reach, kLeastReach, kWidestReach);
+}
+
 double sharpened_apex(const SmoothedStretch& stretch, double apex,
-                      double width_half_minutes) {
-  const double reach = 0.5 * width_half_minutes;
-  Trace whole;
-  whole.minutes = stretch.minutes;
-  whole.signal = stretch.signal;
-  const Trace top = cut_trace(whole, apex - reach, apex + reach);
-  const int points =
-      smoothing_length({}, 0.5 * width_half_minutes, typical_step(top.minutes));
-  const std::vector<double> smoothed =
-      savitzky_golay(top.minutes, top.signal, points, 4, 0);
-  const auto i = static_cast<std::size_t>(
-      std::max_element(smoothed.begin(), smoothed.end()) - smoothed.begin());
-  if (i == 0 || i + 1 >= smoothed.size()) return apex;
-  const auto found =
-      parabola_apex({top.minutes[i - 1], top.minutes[i], top.minutes[i + 1]},
-                    {smoothed[i - 1], smoothed[i], smoothed[i + 1]});
-  return found ? found->minutes : apex;
+                      double width_half_minutes, double noise_share) {
+  constexpr int kOrder = 4;
+  constexpr double kLeastSteps = 3.5;
+  const double reach = std::max(apex_reach(noise_share) * width_half_minutes,
+                                kLeastSteps * typical_step(stretch.minutes));
+  const std::vector<double>& t = stretch.minutes;
+  const auto first = static_cast<std::size_t>(
+      std::lower_bound(t.begin(), t.end(), apex - reach) - t.begin());
+  const auto last = static_cast<std::size_t>(
+      std::upper_bound(t.begin(), t.end(), apex + reach) - t.begin());
+  if (last < first + kOrder + 2) return apex;
+  const std::span<const double> signal = stretch.signal;
+  const LocalFit fit(std::span<const double>(t).subspan(first, last - first),
+                     signal.subspan(first, last - first), kOrder);
+  double found = apex;
+  for (int round = 0; round < 8; ++round) {
+    const Jet there = fit.at(found);
+    if (!(there[2] < 0.0)) return apex;
+    found -= there[1] / there[2];
+    if (!(std::abs(found - apex) < 0.5 * width_half_minutes)) return apex;
+  }
+  return found;
 }
 
 }  // namespace loqsmith

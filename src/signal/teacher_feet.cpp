@@ -194,7 +194,8 @@ Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
     return NotApplicable{"no-peak: nothing above the baseline"};
   }
   if (feet.height >= kSharpHeight * feet.noise) {
-    feet.apex = sharpened_apex(stretch, feet.apex, width_half);
+    feet.apex = sharpened_apex(stretch, feet.apex, width_half,
+                               feet.noise / feet.height);
     feet.height =
         signal_near(stretch, feet.apex) - window->baseline_at(feet.apex);
   }

@@ -1,6 +1,7 @@
 #include "support/simulator.hpp"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <numbers>
 
@@ -36,6 +37,35 @@ double as_digitised(const SimulatedTrace& wanted, double signal) {
   }
   return signal;
 }
+
+// Six Markov series whose lengths grow by fours.
+class Flicker {
+ public:
+  Flicker() {
+    for (std::size_t k = 0; k < kSeries; ++k) {
+      kept_[k] = std::exp(-std::pow(4.0, -static_cast<double>(k)));
+      fresh_[k] = std::sqrt(1.0 - kept_[k] * kept_[k]);
+    }
+  }
+
+  double next(RandomStream& stream) {
+    double sum = 0.0;
+    for (std::size_t k = 0; k < kSeries; ++k) {
+      const double share = begun_ ? fresh_[k] : 1.0;
+      series_[k] = kept_[k] * series_[k] + share * stream.normal();
+      sum += series_[k];
+    }
+    begun_ = true;
+    return sum / std::sqrt(static_cast<double>(kSeries));
+  }
+
+ private:
+  static constexpr std::size_t kSeries = 6;
+  std::array<double, kSeries> kept_{};
+  std::array<double, kSeries> fresh_{};
+  std::array<double, kSeries> series_{};
+  bool begun_ = false;
+};
 
 }  // namespace
 
@@ -79,7 +109,10 @@ Trace simulate_trace(const SimulatedTrace& wanted, RandomStream& stream) {
       1;
   const double innovation = std::sqrt(1.0 - wanted.creep * wanted.creep);
   Trace trace;
+  const double phase =
+      wanted.ripple > 0.0 ? 2.0 * std::numbers::pi * stream.uniform() : 0.0;
   double creeping = 0.0;
+  Flicker flicker;
   for (std::size_t i = 0; i < points; ++i) {
     double minutes =
         wanted.start_minutes + static_cast<double>(i) * wanted.step_minutes;
@@ -100,6 +133,14 @@ Trace simulate_trace(const SimulatedTrace& wanted, RandomStream& stream) {
     }
     if (wanted.relative_noise > 0.0) {
       signal += wanted.relative_noise * peaks * stream.normal();
+    }
+    if (wanted.flicker_noise > 0.0) {
+      signal += wanted.flicker_noise * flicker.next(stream);
+    }
+    if (wanted.ripple > 0.0) {
+      signal += wanted.ripple * std::sin(2.0 * std::numbers::pi * minutes /
+                                             wanted.ripple_minutes +
+                                         phase);
     }
     trace.minutes.push_back(minutes);
     trace.signal.push_back(as_digitised(wanted, signal));

@@ -41,14 +41,20 @@ struct SimulatedTrace {
   double creeping_noise = 0.0;    ///< standard deviation of a point
   double creep = 0.9;             ///< its correlation from point to point
   double relative_noise = 0.0;    ///< of each point, times the peaks' signal
+  double flicker_noise = 0.0;     ///< 1/f-like: standard deviation of a point
+  double ripple = 0.0;            ///< amplitude of a sine, as a pump leaves it
+  double ripple_minutes = 0.5;    ///< its period
   double ceiling = 0.0;           ///< the signal is cut off there; 0: none
   double digit = 0.0;             ///< the signal is rounded to it; 0: none
   std::vector<SimulatedPeak> peaks;
 };
 
 /// The trace, drawn with the stream's numbers in fixed order: one for each
-/// point's time (where there is jitter), then its white, creeping and relative
-/// noise (where there is any). Without noise and jitter the stream is left
+/// point's time (where there is jitter), then its white, creeping, relative and
+/// flicker noise (where there is any). Flicker noise is the sum of six Markov
+/// series of equal variance whose lengths grow by fours from one point: its
+/// spectrum falls as 1/f over three decades. A ripple's phase is drawn at the
+/// beginning. Without noise and jitter the stream is left
 /// alone. Creeping noise is first-order Markov and starts in equilibrium.
 Trace simulate_trace(const SimulatedTrace& wanted, RandomStream& stream);
 
