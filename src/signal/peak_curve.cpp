@@ -19,6 +19,18 @@ IntegrationSettings::Overlap overlap_of(const Peak& peak) {
   return IntegrationSettings::Overlap::Drop;
 }
 
+// What peaks are looked for in, with the default smoothing.
+std::vector<double> smoothed_as_found(const Trace& shown, double width_half) {
+  const IntegrationSettings settings;
+  if (shown.minutes.size() < 3) return shown.signal;
+  return smooth_stretch(shown,
+                        smoothing_length(settings, width_half,
+                                         typical_step(shown.minutes)),
+                        settings.smoothing_order,
+                        white_noise(point_to_point_noise(shown.signal)))
+      .smoothed;
+}
+
 Trace around_peak(const Trace& trace, const Peak& peak,
                   const WindowTemplate& window) {
   const double margin = 10.0 * window.width_half_minutes;
@@ -97,6 +109,7 @@ PeakCurve peak_curve(const Trace& trace, const Peak& peak,
   PeakCurve curve;
   curve.minutes = shown.minutes;
   curve.signal = shown.signal;
+  curve.smoothed = smoothed_as_found(shown, window.width_half_minutes);
   const Trace near = around_peak(trace, peak, window);
   const auto estimated = estimate_baseline(
       near, baseline_from_name(peak.baseline), window.width_half_minutes,

@@ -2,6 +2,7 @@
 
 #include <gtest/gtest.h>
 
+#include <algorithm>
 #include <cmath>
 #include <vector>
 
@@ -233,6 +234,11 @@ TEST(MeasurePeak, CurveShowsTheStretchAndItsBaseline) {
   ASSERT_TRUE(peak);
   const PeakCurve curve = peak_curve(trace, *peak, wide);
   EXPECT_EQ(curve.minutes.size(), curve.signal.size());
+  ASSERT_EQ(curve.minutes.size(), curve.smoothed.size());
+  // Smoothed over its width a peak loses some of its height, never all.
+  EXPECT_GT(*std::max_element(curve.smoothed.begin(), curve.smoothed.end()),
+            0.9 * 320.0);
+  EXPECT_NE(curve.smoothed, curve.signal);
   EXPECT_LT(curve.minutes.front(), peak->start_minutes - 4.0 * 0.1177 + 0.01);
   EXPECT_GT(curve.minutes.back(), peak->end_minutes + 4.0 * 0.1177 - 0.01);
   EXPECT_TRUE(agrees_to_digits(curve.baseline_start,

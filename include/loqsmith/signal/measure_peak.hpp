@@ -67,6 +67,7 @@ Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
 struct PeakCurve {
   std::vector<double> minutes;
   std::vector<double> signal;
+  std::vector<double> smoothed;  ///< at the same times, default smoothing
   /// Where the response is the template's: it and its straight baseline.
   std::vector<double> fitted_minutes;
   std::vector<double> fitted;
