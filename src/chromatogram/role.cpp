@@ -65,4 +65,25 @@ bool contains_known_amount(Role role) {
   return false;
 }
 
+bool repeats_another(Role role) {
+  switch (role) {
+    case Role::Fortified:
+    case Role::FortifiedDuplicate:
+    case Role::Duplicate:
+    case Role::AddedStandard:
+      return true;
+    case Role::Conditioning:
+    case Role::SolventBlank:
+    case Role::MethodBlank:
+    case Role::Standard:
+    case Role::SecondSource:
+    case Role::CheckStandard:
+    case Role::LowSpike:
+    case Role::Control:
+    case Role::Sample:
+      return false;
+  }
+  return false;
+}
+
 }  // namespace loqsmith

@@ -93,17 +93,17 @@ constexpr std::array kRules{
     RuleText{"SVG", "", "#"},
 };
 
-std::unordered_map<std::string_view, ElementRule> all_rules() {
-  std::unordered_map<std::string_view, ElementRule> rules;
+std::unordered_map<std::string_view, SchemaElement> all_rules() {
+  std::unordered_map<std::string_view, SchemaElement> rules;
   for (const RuleText& text : kRules) {
-    rules.emplace(text.name, element_rule(text));
+    rules.emplace(text.name, schema_element(text));
   }
   return rules;
 }
 
 }  // namespace
 
-const ElementRule* animl_rule(std::string_view name) {
+const SchemaElement* animl_rule(std::string_view name) {
   static const auto rules = all_rules();
   const auto it = rules.find(name);
   return it == rules.end() ? nullptr : &it->second;

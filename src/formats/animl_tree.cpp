@@ -65,7 +65,7 @@ void AnimlTree::start_element(const XmlStart& start) {
     ++skipped_depth_;
     return;
   }
-  const ElementRule* rule = rule_of_child(start);
+  const SchemaElement* rule = rule_of_child(start);
   if (rule == nullptr || is_stepped_over(start.local_name)) {
     skipped_depth_ = 1;
     if (start.local_name == "SignatureSet") {
@@ -76,7 +76,7 @@ void AnimlTree::start_element(const XmlStart& start) {
   begin_frame(*rule, start);
 }
 
-void AnimlTree::begin_frame(const ElementRule& rule, const XmlStart& start) {
+void AnimlTree::begin_frame(const SchemaElement& rule, const XmlStart& start) {
   AnimlNode* node = nullptr;
   if (frames_.empty()) {
     node = &root_;
@@ -146,8 +146,8 @@ void AnimlTree::check_root(const XmlStart& start) {
          mend);
 }
 
-const ElementRule* AnimlTree::rule_of_child(const XmlStart& start) {
-  const ElementRule& parent = *frames_.back().rule;
+const SchemaElement* AnimlTree::rule_of_child(const XmlStart& start) {
+  const SchemaElement& parent = *frames_.back().rule;
   const std::size_t place = start.namespace_uri == kAnimlNamespace
                                 ? parent.place_of(start.local_name)
                                 : parent.children.size();
@@ -193,7 +193,7 @@ void AnimlTree::check_id(const XmlStart& start) {
   }
 }
 
-void AnimlTree::take_attributes(AnimlNode* node, const ElementRule& rule,
+void AnimlTree::take_attributes(AnimlNode* node, const SchemaElement& rule,
                                 const XmlStart& start) {
   for (const XmlAttribute& attribute : start.attributes) {
     // Those of other namespaces (schemaLocation, xml:lang) belong to nobody

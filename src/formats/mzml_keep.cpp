@@ -16,7 +16,7 @@ bool is_kept(std::string_view name) {
 
 }  // namespace
 
-void MzmlScan::begin_node(const ElementRule& rule, const XmlStart& start) {
+void MzmlScan::begin_node(const SchemaElement& rule, const XmlStart& start) {
   MzmlNode* node = nullptr;
   if (!open_nodes_.empty()) {
     if (++node_count_ == kMostNodes) {

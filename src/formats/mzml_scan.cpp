@@ -25,7 +25,7 @@ void MzmlScan::start_element(const XmlStart& start) {
     ++skipped_depth_;
     return;
   }
-  const ElementRule* rule = nullptr;
+  const SchemaElement* rule = nullptr;
   if (frames_.empty()) {
     check_root(start);
     rule = mzml_rule(start.local_name);
@@ -67,7 +67,7 @@ void MzmlScan::end_element(const XmlEnd&) {
 
 void MzmlScan::text(std::size_t begin, std::size_t end, bool verbatim) {
   if (skipped_depth_ > 0 || frames_.back().rule == nullptr) return;
-  const ElementRule& rule = *frames_.back().rule;
+  const SchemaElement& rule = *frames_.back().rule;
   const std::string_view piece = source_.bytes.substr(begin, end - begin);
   if (!rule.holds_text) {
     if (!std::all_of(piece.begin(), piece.end(), is_xml_blank)) {
@@ -104,8 +104,8 @@ void MzmlScan::check_root(const XmlStart& start) {
   }
 }
 
-const ElementRule* MzmlScan::rule_of_child(Frame& parent,
-                                           const XmlStart& start) {
+const SchemaElement* MzmlScan::rule_of_child(Frame& parent,
+                                             const XmlStart& start) {
   if (parent.rule == nullptr) return nullptr;
   const std::size_t place = start.namespace_uri == kMzmlNamespace
                                 ? parent.rule->place_of(start.local_name)
@@ -122,7 +122,7 @@ const ElementRule* MzmlScan::rule_of_child(Frame& parent,
 void MzmlScan::check_order(Frame& parent, std::size_t place,
                            const XmlStart& start) {
   const std::string_view name = start.local_name;
-  const ChildRule& child = parent.rule->children[place];
+  const SchemaChild& child = parent.rule->children[place];
   if (parent.has_children && place < parent.place) {
     fault(start.offset,
           tag(name) + " too late inside " + tag(parent.rule->name),
@@ -141,7 +141,7 @@ void MzmlScan::check_order(Frame& parent, std::size_t place,
   if (child.many && !parameter) ++parent.items;
 }
 
-void MzmlScan::check_attributes(const ElementRule& rule,
+void MzmlScan::check_attributes(const SchemaElement& rule,
                                 const XmlStart& start) {
   for (const XmlAttribute& attribute : start.attributes) {
     // Those of other namespaces (schemaLocation, nil, xml:lang) belong to

@@ -106,16 +106,16 @@ constexpr std::array kReferences{
     std::pair{"sampleRef", "sample"},
 };
 
-std::unordered_map<std::string_view, ElementRule> all_rules() {
-  std::unordered_map<std::string_view, ElementRule> rules;
+std::unordered_map<std::string_view, SchemaElement> all_rules() {
+  std::unordered_map<std::string_view, SchemaElement> rules;
   for (const RuleText& text : kRules)
-    rules.emplace(text.name, element_rule(text));
+    rules.emplace(text.name, schema_element(text));
   return rules;
 }
 
 }  // namespace
 
-const ElementRule* mzml_rule(std::string_view name) {
+const SchemaElement* mzml_rule(std::string_view name) {
   static const auto rules = all_rules();
   const auto it = rules.find(name);
   return it == rules.end() ? nullptr : &it->second;

@@ -5,24 +5,7 @@
 namespace loqsmith {
 
 bool is_sample_like(Role role) {
-  switch (role) {
-    case Role::Sample:
-    case Role::Duplicate:
-    case Role::Fortified:
-    case Role::FortifiedDuplicate:
-    case Role::AddedStandard:
-      return true;
-    case Role::Conditioning:
-    case Role::SolventBlank:
-    case Role::MethodBlank:
-    case Role::Standard:
-    case Role::SecondSource:
-    case Role::CheckStandard:
-    case Role::LowSpike:
-    case Role::Control:
-      return false;
-  }
-  return false;
+  return role == Role::Sample || repeats_another(role);
 }
 
 std::string status_words(Status status) {

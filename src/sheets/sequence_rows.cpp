@@ -9,27 +9,6 @@
 namespace loqsmith {
 namespace {
 
-bool has_parent(Role role) {
-  switch (role) {
-    case Role::Fortified:
-    case Role::FortifiedDuplicate:
-    case Role::Duplicate:
-    case Role::AddedStandard:
-      return true;
-    case Role::Conditioning:
-    case Role::SolventBlank:
-    case Role::MethodBlank:
-    case Role::Standard:
-    case Role::SecondSource:
-    case Role::CheckStandard:
-    case Role::LowSpike:
-    case Role::Control:
-    case Role::Sample:
-      return false;
-  }
-  return false;
-}
-
 // What a sample can be repeated or fortified from.
 bool may_be_parent(Role role) {
   return role == Role::Sample || role == Role::Control ||
@@ -103,7 +82,7 @@ void check_parents(SequenceSheet& sheet) {
   for (const SequenceRow& row : sheet.rows) {
     if (!row.role_known) continue;
     const std::string role = role_name(row.injection.role);
-    const bool wanted = has_parent(row.injection.role);
+    const bool wanted = repeats_another(row.injection.role);
     if (wanted && row.injection.parent.empty()) {
       sheet.add(row.row, "parent", "empty", "a parent for the role " + role,
                 "name the sample that was repeated or fortified");

@@ -155,6 +155,26 @@ TEST(Rooms, LinkWhatTheyMayKnow) {
   }
 }
 
+// Two types of one name in one namespace are one type to the linker, which
+// then mixes their functions without a word.
+TEST(Rooms, NameEveryTypeOnce) {
+  static const std::regex kType(R"(^(?:struct|class|enum class) (\w+)[^;]*$)");
+  std::map<std::string, fs::path> known;
+  for (const auto& entry : fs::recursive_directory_iterator(
+           fs::path(LOQSMITH_SOURCE_DIR) / "include")) {
+    if (entry.path().extension() != ".hpp") continue;
+    std::istringstream lines(text_of(entry.path()));
+    for (std::string line; std::getline(lines, line);) {
+      std::smatch match;
+      if (!std::regex_search(line, match, kType)) continue;
+      const auto [first, is_new] = known.emplace(match[1], entry.path());
+      EXPECT_TRUE(is_new) << match[1] << " stands in " << first->second
+                          << " and in " << entry.path();
+    }
+  }
+  EXPECT_GT(known.size(), 100U);
+}
+
 // Standard library names by which a computing room would reach the world.
 TEST(Rooms, ComputingRoomsDoNoInputOrOutput) {
   const Names computing{"numerics",    "chromatogram", "signal",

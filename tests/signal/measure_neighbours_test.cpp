@@ -5,43 +5,22 @@
 
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/measure_peak.hpp"
-#include "signal_support.hpp"
+#include "one_peak.hpp"
 #include "support/tolerance.hpp"
 
 namespace loqsmith {
 namespace {
 
+using test::blank_noise;
 using test::gaussian_of_height;
 using test::has_reason;
+using test::kWindow;
+using test::measured;
+using test::sample;
 using test::simulate_trace;
 using test::SimulatedTrace;
 using test::target_at;
 using test::window_of;
-
-const WindowTemplate kWindow = window_of(0.19, 0.19, 0.1177);
-
-SimulatedTrace sample(double height, double noise = 1.0) {
-  SimulatedTrace wanted;
-  wanted.white_noise = noise;
-  if (height > 0.0) wanted.peaks = {gaussian_of_height(5.0, 0.05, height)};
-  return wanted;
-}
-
-Outcome<NoiseEstimate> blank_noise() {
-  return measure_noise(simulate_trace(sample(0.0), "the blank"), 5.0, 0.1177,
-                       {});
-}
-
-Outcome<Peak> measured(const Trace& trace,
-                       const TargetSettings& target = target_at(5.0),
-                       const WindowTemplate& window = kWindow) {
-  return measure_peak(trace, target, window, target.retention_minutes,
-                      blank_noise(), "blank 2");
-}
-
-Outcome<Peak> measured(const SimulatedTrace& wanted, const std::string& name) {
-  return measured(simulate_trace(wanted, name));
-}
 
 TEST(MeasureNeighbours, PointsOfNeighboursAreKeptOutOfTheBaseline) {
   SimulatedTrace wanted = sample(100.0, 0.0);

@@ -6,7 +6,7 @@
 #include <cmath>
 #include <vector>
 
-#include "signal_support.hpp"
+#include "one_peak.hpp"
 #include "support/tolerance.hpp"
 
 namespace loqsmith {
@@ -14,39 +14,18 @@ namespace {
 
 using test::agrees_to_digits;
 using test::begins_with;
+using test::blank_noise;
 using test::gaussian_of_height;
 using test::has_reason;
+using test::kWindow;
+using test::measured;
 using test::no_noise;
+using test::sample;
 using test::simulate_trace;
 using test::SimulatedTrace;
 using test::target_at;
 using test::window_of;
 using test::within_condition;
-
-const WindowTemplate kWindow = window_of(0.19, 0.19, 0.1177);
-
-SimulatedTrace sample(double height, double noise = 1.0) {
-  SimulatedTrace wanted;
-  wanted.white_noise = noise;
-  if (height > 0.0) wanted.peaks = {gaussian_of_height(5.0, 0.05, height)};
-  return wanted;
-}
-
-Outcome<NoiseEstimate> blank_noise() {
-  return measure_noise(simulate_trace(sample(0.0), "the blank"), 5.0, 0.1177,
-                       {});
-}
-
-Outcome<Peak> measured(const Trace& trace,
-                       const TargetSettings& target = target_at(5.0),
-                       const WindowTemplate& window = kWindow) {
-  return measure_peak(trace, target, window, target.retention_minutes,
-                      blank_noise(), "blank 2");
-}
-
-Outcome<Peak> measured(const SimulatedTrace& wanted, const std::string& name) {
-  return measured(simulate_trace(wanted, name));
-}
 
 TEST(MeasurePeak, FindsAndMeasuresAPeak) {
   const auto peak = measured(sample(400.0), "peak");

@@ -31,4 +31,7 @@ std::vector<std::string> role_names();
 /// Roles whose vial or sample holds an amount that a level states.
 bool contains_known_amount(Role role);
 
+/// Roles that repeat or fortify another sample, the sheet's `parent`.
+bool repeats_another(Role role);
+
 }  // namespace loqsmith

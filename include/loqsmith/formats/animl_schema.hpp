@@ -2,7 +2,7 @@
 
 #include <string_view>
 
-#include "loqsmith/formats/element_rule.hpp"
+#include "loqsmith/formats/schema_element.hpp"
 
 namespace loqsmith {
 
@@ -11,7 +11,7 @@ inline constexpr std::string_view kAnimlNamespace =
 inline constexpr std::string_view kAnimlVersion = "0.90";
 
 /// The rule for an element's local name; nullptr for a name unknown to AnIML.
-const ElementRule* animl_rule(std::string_view name);
+const SchemaElement* animl_rule(std::string_view name);
 
 /// True for the elements whose content no reader of traces needs: templates
 /// (which are no data), audit trail, signatures.

@@ -11,8 +11,8 @@
 
 #include "loqsmith/base/xml_scan.hpp"
 #include "loqsmith/formats/document_source.hpp"
-#include "loqsmith/formats/element_rule.hpp"
 #include "loqsmith/formats/notes.hpp"
+#include "loqsmith/formats/schema_element.hpp"
 #include "loqsmith/formats/text_pieces.hpp"
 
 namespace loqsmith {
@@ -62,18 +62,18 @@ class AnimlTree : public XmlHandler {
 
  private:
   struct Frame {
-    const ElementRule* rule = nullptr;
+    const SchemaElement* rule = nullptr;
     AnimlNode* node = nullptr;  ///< none: one of the values
     std::size_t place = 0;      ///< of the last child
     bool has_children = false;
   };
 
   void check_root(const XmlStart& start);
-  const ElementRule* rule_of_child(const XmlStart& start);
+  const SchemaElement* rule_of_child(const XmlStart& start);
   void check_order(std::size_t place, const XmlStart& start);
   void check_id(const XmlStart& start);
-  void begin_frame(const ElementRule& rule, const XmlStart& start);
-  void take_attributes(AnimlNode* node, const ElementRule& rule,
+  void begin_frame(const SchemaElement& rule, const XmlStart& start);
+  void take_attributes(AnimlNode* node, const SchemaElement& rule,
                        const XmlStart& start);
   /// Kept for the Series or SeriesSet in hand, or a warning.
   void fault(std::size_t offset, const std::string& found,

@@ -48,19 +48,19 @@ class MzmlScan : public XmlHandler {
 
  private:
   struct Frame {
-    const ElementRule* rule = nullptr;  ///< none: a stranger, stepped over
-    std::size_t place = 0;              ///< of the last child
+    const SchemaElement* rule = nullptr;  ///< none: a stranger, stepped over
+    std::size_t place = 0;                ///< of the last child
     bool has_children = false;
     std::optional<std::string> count;  ///< as a list states it
     std::size_t items = 0;
   };
 
   void check_root(const XmlStart& start);
-  const ElementRule* rule_of_child(Frame& parent, const XmlStart& start);
+  const SchemaElement* rule_of_child(Frame& parent, const XmlStart& start);
   void check_order(Frame& parent, std::size_t place, const XmlStart& start);
-  void check_attributes(const ElementRule& rule, const XmlStart& start);
+  void check_attributes(const SchemaElement& rule, const XmlStart& start);
   void check_reference(const XmlAttribute& attribute);
-  void begin_node(const ElementRule& rule, const XmlStart& start);
+  void begin_node(const SchemaElement& rule, const XmlStart& start);
   void end_node();
   void keep_group(const MzmlNode& node);
   void keep_sample(const MzmlNode& node);

@@ -4,7 +4,7 @@
 #include <string_view>
 #include <vector>
 
-#include "loqsmith/formats/element_rule.hpp"
+#include "loqsmith/formats/schema_element.hpp"
 
 namespace loqsmith {
 
@@ -12,7 +12,7 @@ inline constexpr std::string_view kMzmlNamespace =
     "http://psi.hupo.org/ms/mzml";
 
 /// The rule for an element's local name; nullptr for a name unknown to mzML.
-const ElementRule* mzml_rule(std::string_view name);
+const SchemaElement* mzml_rule(std::string_view name);
 
 /// Which element's id an attribute refers to ("dataProcessingRef" means a
 /// "dataProcessing"); empty for an attribute that is no reference.

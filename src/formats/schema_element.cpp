@@ -1,4 +1,4 @@
-#include "loqsmith/formats/element_rule.hpp"
+#include "loqsmith/formats/schema_element.hpp"
 
 #include <algorithm>
 
@@ -17,8 +17,8 @@ std::vector<std::string_view> words(std::string_view text) {
 
 }  // namespace
 
-ElementRule element_rule(const RuleText& text) {
-  ElementRule rule;
+SchemaElement schema_element(const RuleText& text) {
+  SchemaElement rule;
   rule.name = text.name;
   rule.attributes = words(text.attributes);
   for (std::string_view word : words(text.children)) {
@@ -39,15 +39,15 @@ ElementRule element_rule(const RuleText& text) {
   return rule;
 }
 
-bool ElementRule::allows_attribute(std::string_view attribute) const {
+bool SchemaElement::allows_attribute(std::string_view attribute) const {
   return std::find(attributes.begin(), attributes.end(), attribute) !=
          attributes.end();
 }
 
-std::size_t ElementRule::place_of(std::string_view child) const {
-  const auto it =
-      std::find_if(children.begin(), children.end(),
-                   [&](const ChildRule& known) { return known.name == child; });
+std::size_t SchemaElement::place_of(std::string_view child) const {
+  const auto it = std::find_if(
+      children.begin(), children.end(),
+      [&](const SchemaChild& known) { return known.name == child; });
   return static_cast<std::size_t>(it - children.begin());
 }
 

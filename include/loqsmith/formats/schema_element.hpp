@@ -7,16 +7,16 @@
 namespace loqsmith {
 
 /// One place in the order of an element's children.
-struct ChildRule {
+struct SchemaChild {
   std::string_view name;
   bool many = false;
 };
 
 /// What a schema allows in one element.
-struct ElementRule {
+struct SchemaElement {
   std::string_view name;
   std::vector<std::string_view> attributes;
-  std::vector<ChildRule> children;  ///< in the order that the schema wants
+  std::vector<SchemaChild> children;  ///< in the order that the schema wants
   bool holds_text = false;
 
   bool allows_attribute(std::string_view attribute) const;
@@ -32,6 +32,6 @@ struct RuleText {
   std::string_view attributes;
   std::string_view children;
 };
-ElementRule element_rule(const RuleText& text);
+SchemaElement schema_element(const RuleText& text);
 
 }  // namespace loqsmith
