@@ -196,7 +196,6 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
                                options.wait};
   RunAtWork work =
       RunAtWork::begin(place, name, folder.path.string(), begun_detail(folder));
-  outcome.messages = work.recovered();
   const std::string begun = options.clock();
 
   const auto start = std::chrono::steady_clock::now();
@@ -217,6 +216,7 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   stage_run(work.staging(), folder, run, options.report);
   const bool person = needs_a_person(run);
   outcome.published = work.publish({{"needs_a_person", person ? "yes" : "no"}});
+  outcome.messages = work.recovered();
   outcome.status = person ? ExitStatus::NeedsPerson : ExitStatus::Done;
   count_results(run, outcome);
   describe_problems(run, outcome);
