@@ -160,19 +160,10 @@ class RowReader {
 SequenceSheet open_sheet(std::string_view csv, const std::string& file) {
   SheetProblems problems(file);
   SheetTable table(csv, columns(), problems);
-  return {std::move(problems), std::move(table), {}};
+  return {{std::move(problems), std::move(table)}, {}};
 }
 
 }  // namespace
-
-void SequenceSheet::add(std::size_t row, std::string_view column,
-                        std::string found, std::string expected,
-                        std::string mend) {
-  const SheetCell cell = table.cell(row, column);
-  problems.add(cell.line, cell.column,
-               std::string(column) + ' ' + std::move(found),
-               std::move(expected), std::move(mend));
-}
 
 SequenceSheet read_sequence_sheet(std::string_view csv,
                                   const std::string& file) {

@@ -6,8 +6,7 @@
 #include <vector>
 
 #include "loqsmith/chromatogram/sequence.hpp"
-#include "loqsmith/sheets/problems.hpp"
-#include "loqsmith/sheets/sheet_table.hpp"
+#include "loqsmith/sheets/open_sheet.hpp"
 
 namespace loqsmith {
 
@@ -20,13 +19,8 @@ struct SequenceRow {
   std::size_t row = 0;  ///< of the table
 };
 
-struct SequenceSheet {
-  SheetProblems problems;
-  SheetTable table;
+struct SequenceSheet : OpenSheet {
   std::vector<SequenceRow> rows;
-
-  void add(std::size_t row, std::string_view column, std::string found,
-           std::string expected, std::string mend);
 };
 
 SequenceSheet read_sequence_sheet(std::string_view csv,
