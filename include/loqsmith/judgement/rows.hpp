@@ -6,6 +6,7 @@
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/calibration/calibration.hpp"
+#include "loqsmith/calibration/diagnostics.hpp"
 #include "loqsmith/chromatogram/role.hpp"
 #include "loqsmith/judgement/settings.hpp"
 #include "loqsmith/limits/governing.hpp"
@@ -68,6 +69,8 @@ struct CalibrationSet {
   /// All standards; where there is no calibration, as they were offered.
   std::vector<StandardPoint> standards;
   std::vector<UnmeasuredStandard> unmeasured;
+  /// Where there is a calibration.
+  Outcome<CalibrationDiagnostics> diagnostics = NotApplicable{"no calibration"};
   LimitsOfAnalyte limits;
 };
 
