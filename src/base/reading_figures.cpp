@@ -1,4 +1,4 @@
-#include "loqsmith/limits/words.hpp"
+#include "loqsmith/base/reading_figures.hpp"
 
 #include <array>
 #include <charconv>
