@@ -87,10 +87,13 @@ std::optional<SpikeResult> spike_result(const InjectionResponse& one,
   const Outcome<InversePrediction> found =
       concentration_from_response(calibration, one.response->value);
   if (!found) return std::nullopt;
-  return SpikeResult{
-      one.injection->number,
-      *one.nominal / sample_factor(*one.injection, *analyte.units),
-      found->concentration, one.injection->prep};
+  const double factor = sample_factor(*one.injection, *analyte.units);
+  return SpikeResult{one.injection->number,
+                     *one.nominal / factor,
+                     found->concentration,
+                     one.injection->prep,
+                     one.peak && one.peak->identified(),
+                     factor};
 }
 
 bool shows_a_height(const InjectionResponse& one) {

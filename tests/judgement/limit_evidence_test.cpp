@@ -110,6 +110,9 @@ TEST(LimitEvidence, SpikesAreDividedBackToTheVial) {
   ASSERT_EQ(evidence.spikes.size(), 2U);
   EXPECT_TRUE(same_bits(evidence.spikes[0].nominal_vial, 1.0));
   EXPECT_TRUE(same_bits(evidence.spikes[0].found_vial, 1.5));
+  EXPECT_TRUE(same_bits(evidence.spikes[0].sample_factor, 40.0));
+  EXPECT_TRUE(evidence.spikes[0].identified);
+  EXPECT_FALSE(evidence.spikes[1].identified);
   // Below zero it stays what it is.
   EXPECT_TRUE(agrees_to_digits(evidence.spikes[1].found_vial, -0.1, 14));
 }

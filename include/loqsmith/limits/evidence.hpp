@@ -42,6 +42,8 @@ struct SpikeResult {
   double nominal_vial = 0.0;
   double found_vial = 0.0;
   std::string prep;
+  bool identified = true;      ///< a peak was seen in the window
+  double sample_factor = 1.0;  ///< sample over vial concentration
 };
 
 /// Peak height of one standard with a found peak.
