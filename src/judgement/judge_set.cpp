@@ -1,0 +1,96 @@
+#include "loqsmith/judgement/judge_set.hpp"
+
+#include <utility>
+
+#include "loqsmith/calibration/fit_calibration.hpp"
+#include "loqsmith/judgement/calibration_checks.hpp"
+#include "loqsmith/judgement/check_standards.hpp"
+#include "loqsmith/judgement/standards.hpp"
+
+namespace loqsmith {
+namespace {
+
+void find_about_calibration(AnalyteFindings& findings,
+                            const CalibrationSet& set,
+                            const AcceptanceSettings& acceptance, bool failed) {
+  std::vector<std::string>& withholding = findings.withholding;
+  if (!set.calibration) {
+    withholding.emplace_back("no-calibration");
+    return;
+  }
+  if (failed) {
+    const bool withholds =
+        acceptance.calibration->action == CheckAction::Withhold;
+    (withholds ? withholding : findings.careful)
+        .emplace_back("calibration-failed");
+  }
+  if (!set.calibration->accepted_highest) {
+    withholding.emplace_back("no-accepted-level");
+  }
+  if (!set.limits.governing) withholding.emplace_back("no-valid-limit");
+}
+
+CheckRow nothing_to_check_against(const std::string& analyte) {
+  CheckRow row;
+  row.check = "check-standard";
+  row.analyte = analyte;
+  row.note = "not checked: no calibration";
+  return row;
+}
+
+void check_standards(SetVerdict& verdict, const MeasuredAnalyte& members,
+                     const CalibrationSet& set) {
+  const auto& acceptance = members.settings->acceptance.check_standard;
+  if (!acceptance) return;
+  const std::string& id = members.settings->analyte;
+  if (!set.calibration) {
+    verdict.checks.push_back(nothing_to_check_against(id));
+    return;
+  }
+  verdict.findings.check_standards =
+      judge_check_standards(members, *set.calibration, acceptance->recovery);
+  for (CheckRow& row : check_standard_rows(*verdict.findings.check_standards,
+                                           *acceptance, id)) {
+    verdict.checks.push_back(std::move(row));
+  }
+}
+
+}  // namespace
+
+CalibrationSet calibrate_set(const MeasuredAnalyte& members,
+                             const std::string& name,
+                             const std::string& refused) {
+  const AnalyteRules& settings = *members.settings;
+  OfferedStandards offered = offer_standards(members);
+  CalibrationSet set;
+  set.set = name;
+  set.standards = offered.points;
+  set.unmeasured = std::move(offered.unmeasured);
+  if (!refused.empty()) {
+    set.calibration = NotApplicable{refused};
+    return set;
+  }
+  set.calibration =
+      fit_calibration(std::move(offered.points), settings.calibration);
+  if (!set.calibration) return set;
+  const auto& acceptance = settings.acceptance.calibration;
+  if (acceptance) {
+    accept_levels(set.calibration.value(), acceptance->back_calculation_percent,
+                  acceptance->back_calculation_lowest_percent);
+  }
+  set.standards = set.calibration->points;
+  return set;
+}
+
+SetVerdict check_set(const MeasuredAnalyte& members,
+                     const CalibrationSet& set) {
+  SetVerdict verdict;
+  CalibrationVerdict calibration = check_calibration(*members.settings, set);
+  verdict.checks = std::move(calibration.rows);
+  find_about_calibration(verdict.findings, set, members.settings->acceptance,
+                         calibration.failed);
+  check_standards(verdict, members, set);
+  return verdict;
+}
+
+}  // namespace loqsmith
