@@ -164,10 +164,6 @@ std::optional<NotApplicable> why_not_computed(
   if (settings.weight == CalibrationSettings::Weight::InverseVariance)
     return NotApplicable{
         "not-available: weight 1/s2 is not available in this version"};
-  if (settings.sets != CalibrationSettings::Sets::One)
-    return NotApplicable{
-        "not-available: more than one calibration set is not available in this "
-        "version"};
   return std::nullopt;
 }
 

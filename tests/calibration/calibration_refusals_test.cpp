@@ -59,10 +59,6 @@ TEST(CalibrationRefusals, WhatIsNotComputedYet) {
       contains(reason(fit_calibration(seven_levels(),
                                       {.weight = Weight::InverseVariance})),
                "not available in this version"));
-  EXPECT_TRUE(contains(
-      reason(fit_calibration(seven_levels(),
-                             {.sets = CalibrationSettings::Sets::Latest})),
-      "not available in this version"));
 }
 
 TEST(AcceptLevels, WithoutLimitsEveryUsedLevelIsAccepted) {

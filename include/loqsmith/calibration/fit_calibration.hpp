@@ -13,6 +13,9 @@ namespace loqsmith {
 /// is left out with the note "zero-level-unweighted-only") and never counts as
 /// a level. All levels count as accepted until accept_levels() says otherwise.
 ///
+/// The points are those of one set: how standards are divided into sets is not
+/// looked at here.
+///
 /// @return not applicable (a reason word, then words): fewer distinct levels
 ///         above zero than the model has coefficients plus one, all responses
 ///         equal, slope not positive, a quadratic that turns over below the
