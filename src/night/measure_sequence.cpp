@@ -11,6 +11,9 @@
 #include "loqsmith/night/figure_choice.hpp"
 #include "loqsmith/night/file_visit.hpp"
 #include "loqsmith/night/parallel.hpp"
+#include "loqsmith/signal/measure_peak.hpp"
+#include "loqsmith/signal/peak_curve.hpp"
+#include "loqsmith/signal/peak_working.hpp"
 
 namespace loqsmith {
 namespace {
@@ -47,6 +50,34 @@ NoiseFor noise_for(const Learned& learned, std::size_t target,
     noise.value().reasons.emplace_back("noise-from-same-trace");
   }
   return {std::move(noise), "same trace"};
+}
+
+// So much beside the feet that a noise stretch around the peak is seen whole.
+double shown_widths(const NoiseSettings& settings) {
+  return std::clamp(0.5 * settings.span_widths, 4.0, 10.0);
+}
+
+// The noise stretch where it lies in this trace: beside its own peak, or where
+// a blank gives the noise to others. Elsewhere only the figures.
+CurveNoise drawn_noise(const Learned& learned, std::size_t target,
+                       const Trace& trace, int injection, double expected,
+                       const NoiseFor& noise) {
+  const NoiseSettings& settings = learned.targets[target].noise;
+  const WindowTemplate& window = *learned.windows[target];
+  if (settings.source == NoiseSettings::Source::Blank) {
+    for (const BlankNoise& blank : learned.blank_noise[target]) {
+      if (blank.injection != injection) continue;
+      return curve_noise_around(trace, blank.noise, settings,
+                                "blank " + std::to_string(injection));
+    }
+  }
+  if (!noise.noise) return {};
+  if (noise.source != "same trace") {
+    return curve_noise(*noise.noise, settings, noise.source);
+  }
+  return curve_noise_beside(trace, expected - window.left_minutes,
+                            expected + window.right_minutes,
+                            window.width_half_minutes, *noise.noise, settings);
 }
 
 // All that is needed while one injection is measured.
@@ -113,7 +144,7 @@ class InjectionAtWork {
                                       noise.noise, noise.source);
     if (peak) {
       note_shift(target.id, *peak, expected);
-      draw(target.id, *trace, *window, *peak);
+      draw(index, *trace, expected, noise);
     }
     return peak;
   }
@@ -170,15 +201,25 @@ class InjectionAtWork {
     }
   }
 
-  void draw(const std::string& target, const Trace& trace,
-            const WindowTemplate& window, const Peak& peak) {
-    const std::string caption = figures_.caption(target, injection_.number);
+  // Measured once more for the few that are drawn, with the working kept.
+  void draw(std::size_t index, const Trace& trace, double expected,
+            const NoiseFor& noise) {
+    const TargetSettings& target = learned_.targets[index];
+    const std::string caption = figures_.caption(target.id, injection_.number);
     if (caption.empty()) return;
-    result_.curves.push_back({.analyte = target,
+    const WindowTemplate& window = *learned_.windows[index];
+    const WorkedPeak worked = measure_peak_with_working(
+        trace, target, window, expected, noise.noise, noise.source);
+    if (!worked.peak) return;
+    PeakCurve curve = peak_curve(*worked.peak, worked.working, window,
+                                 shown_widths(target.noise));
+    curve.noise =
+        drawn_noise(learned_, index, trace, injection_.number, expected, noise);
+    result_.curves.push_back({.analyte = target.id,
                               .injection = injection_.number,
                               .caption = caption,
-                              .peak = peak,
-                              .curve = peak_curve(trace, peak, window)});
+                              .peak = *worked.peak,
+                              .curve = std::move(curve)});
   }
 
   const SequenceFolder& folder_;

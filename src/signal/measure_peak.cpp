@@ -9,6 +9,7 @@
 #include "loqsmith/signal/integrate.hpp"
 #include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
+#include "loqsmith/signal/peak_working.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/point_noise.hpp"
 #include "loqsmith/signal/response_noise.hpp"
@@ -112,6 +113,12 @@ class Measurement {
     return peak_;
   }
 
+  // To be called last.
+  PeakWorking hand_over() {
+    return {std::move(stretch_), std::move(placed_), std::move(parted_),
+            std::move(fit_)};
+  }
+
  private:
   Outcome<PlacedWindow> place(double apex) const {
     return place_window_above(
@@ -162,10 +169,10 @@ class Measurement {
     Outcome<TemplateFit> fit =
         fit_template(stretch_, placed_, peak_.retention_minutes, window_,
                      colour_of_noise(noise_, model_));
+    if (fit) fit_ = *fit;
     if (fit && fit->shape_passed()) {
       peak_.template_response = fit->response;
       peak_.shape_passed = true;
-      template_weights_ = std::move(fit.value().weights);
       return;
     }
     peak_.area_instead = true;
@@ -273,7 +280,7 @@ class Measurement {
       if (parted_) return parted_->height_weights;
       return height_weights(stretch_, placed_, peak_.retention_minutes);
     }
-    if (peak_.template_response) return template_weights_;
+    if (peak_.template_response) return fit_->weights;
     if (parted_) return parted_->area_weights;
     return area_weights(stretch_, placed_);
   }
@@ -321,9 +328,18 @@ class Measurement {
   ChosenApex chosen_;
   PlacedWindow placed_;
   std::optional<PartedPeak> parted_;
-  std::vector<double> template_weights_;
+  std::optional<TemplateFit> fit_;
   Peak peak_;
 };
+
+// Why nothing can be measured at all; empty: it can.
+std::string refusal(const Trace& trace, const TargetSettings& target) {
+  if (trace.minutes.empty()) return "no-signal: the trace has no points";
+  if (available(target.integration)) return {};
+  return "not-available: this version integrates over the template window, "
+         "and fits, skims and scales the template with a straight baseline "
+         "only";
+}
 
 }  // namespace
 
@@ -331,19 +347,27 @@ Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
                            const WindowTemplate& window, double expected,
                            const Outcome<NoiseEstimate>& noise,
                            const std::string& noise_source) {
-  if (trace.minutes.empty()) {
-    return NotApplicable{"no-signal: the trace has no points"};
-  }
-  if (!available(target.integration)) {
-    return NotApplicable{
-        "not-available: this version integrates over the template window, "
-        "and fits, skims and scales the template with a straight baseline "
-        "only"};
-  }
+  const std::string reason = refusal(trace, target);
+  if (!reason.empty()) return NotApplicable{reason};
   Outcome<Peak> peak =
       Measurement(trace, target, window, expected, noise).measure();
   if (peak && noise) peak.value().noise_source = noise_source;
   return peak;
+}
+
+WorkedPeak measure_peak_with_working(const Trace& trace,
+                                     const TargetSettings& target,
+                                     const WindowTemplate& window,
+                                     double expected,
+                                     const Outcome<NoiseEstimate>& noise,
+                                     const std::string& noise_source) {
+  const std::string reason = refusal(trace, target);
+  if (!reason.empty()) return {NotApplicable{reason}, {}};
+  Measurement measurement(trace, target, window, expected, noise);
+  WorkedPeak worked{measurement.measure(), {}};
+  if (worked.peak && noise) worked.peak.value().noise_source = noise_source;
+  worked.working = measurement.hand_over();
+  return worked;
 }
 
 }  // namespace loqsmith

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 #include <span>
+#include <utility>
 
 #include "loqsmith/signal/point_noise.hpp"
 
@@ -209,9 +210,9 @@ Outcome<PartedPeak> model_overlap(const SmoothedStretch& stretch,
   const std::vector<EmgGuess> guesses =
       overlap.guesses(chosen.neighbours, known, false);
   const AreaWindow area{window.left_minutes, window.right_minutes};
-  const Outcome<OverlapFit> fit =
-      fit_overlap(overlap.minutes(), overlap.signal(), guesses, area,
-                  window.width_half_minutes);
+  Outcome<OverlapFit> fit = fit_overlap(overlap.minutes(), overlap.signal(),
+                                        guesses, area,
+                                        window.width_half_minutes);
   if (!fit) return NotApplicable{fit.reason()};
   if (!overlap.sound(*fit, guesses, known)) {
     return NotApplicable{"model-not-converged: the fit ran away"};
@@ -224,6 +225,8 @@ Outcome<PartedPeak> model_overlap(const SmoothedStretch& stretch,
   if (fit->residual_deviation > kMisfit * overlap.noise()) {
     peak.reasons.emplace_back("model-misfit");
   }
+  peak.model = {std::move(fit.value()), overlap.points().first,
+                overlap.points().last};
   return peak;
 }
 

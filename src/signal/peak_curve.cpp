@@ -1,128 +1,119 @@
-#include <algorithm>
+#include "loqsmith/signal/peak_curve.hpp"
 
-#include "loqsmith/signal/choose_apex.hpp"
-#include "loqsmith/signal/estimated_baseline.hpp"
-#include "loqsmith/signal/fit_template.hpp"
-#include "loqsmith/signal/measure_peak.hpp"
-#include "loqsmith/signal/parted_peak.hpp"
-#include "loqsmith/signal/place_window.hpp"
-#include "loqsmith/signal/point_noise.hpp"
-#include "loqsmith/signal/summits.hpp"
+#include <algorithm>
+#include <cstddef>
 
 namespace loqsmith {
 namespace {
 
-// How the peak was parted from its neighbours.
-IntegrationSettings::Overlap overlap_of(const Peak& peak) {
-  if (peak.overlap == "skim") return IntegrationSettings::Overlap::Skim;
-  if (peak.overlap == "model") return IntegrationSettings::Overlap::Model;
-  return IntegrationSettings::Overlap::Drop;
+// Points [first, last) of the working's stretch that are shown.
+struct Shown {
+  std::size_t first = 0;
+  std::size_t last = 0;
+};
+
+Shown shown_points(const std::vector<double>& minutes, double from, double to) {
+  const auto first = std::lower_bound(minutes.begin(), minutes.end(), from);
+  const auto last = std::upper_bound(first, minutes.end(), to);
+  return {static_cast<std::size_t>(first - minutes.begin()),
+          static_cast<std::size_t>(last - minutes.begin())};
 }
 
-// What peaks are looked for in, with the default smoothing.
-std::vector<double> smoothed_as_found(const Trace& shown, double width_half) {
-  const IntegrationSettings settings;
-  if (shown.minutes.size() < 3) return shown.signal;
-  return smooth_stretch(shown,
-                        smoothing_length(settings, width_half,
-                                         typical_step(shown.minutes)),
-                        settings.smoothing_order,
-                        white_noise(point_to_point_noise(shown.signal)))
-      .smoothed;
-}
-
-Trace around_peak(const Trace& trace, const Peak& peak,
-                  const WindowTemplate& window) {
-  const double margin = 10.0 * window.width_half_minutes;
-  return cut_trace(
-      trace, peak.retention_minutes - 2.0 * window.left_minutes - margin,
-      peak.retention_minutes + 2.0 * window.right_minutes + margin);
-}
-
-// The straight baseline as it was laid when the peak was measured.
-Outcome<PlacedWindow> baseline_again(const Trace& near, const Peak& peak,
-                                     const WindowTemplate& window) {
-  const double width = window.width_half_minutes;
-  const double apex = peak.retention_minutes;
-  if (near.minutes.size() < 3) {
-    return NotApplicable{"window-not-covered: the trace has no points there"};
+// The trace, what was looked at in it, and the baseline that was taken off.
+void lay_trace(const SmoothedStretch& stretch, const Shown& shown,
+               PeakCurve& curve) {
+  const std::vector<double>& detected = stretch.as_detected();
+  const bool estimated = !stretch.detector.empty();
+  for (std::size_t i = shown.first; i < shown.last; ++i) {
+    const double below = detected[i] - stretch.signal[i];
+    curve.minutes.push_back(stretch.minutes[i]);
+    curve.signal.push_back(detected[i]);
+    if (stretch.points > 1) {
+      curve.smoothed.push_back(stretch.smoothed[i] + below);
+    }
+    if (estimated) curve.baseline.push_back(below);
   }
-  const IntegrationSettings settings;
-  const double noise = point_to_point_noise(near.signal);
-  const SmoothedStretch stretch = smooth_stretch(
-      near, smoothing_length(settings, width, typical_step(near.minutes)),
-      settings.smoothing_order, white_noise(noise));
-  const std::vector<Summit> neighbours = significant_summits(
-      stretch, find_summits(stretch), settings.threshold, noise, width);
-  const Outcome<PlacedWindow> placed =
-      place_window(stretch, neighbours,
-                   {apex, window.left_minutes, window.right_minutes, width,
-                    peak.found, noise});
-  if (!placed) return placed;
-  ChosenApex chosen;
-  if (peak.found) chosen.minutes = apex;
-  chosen.neighbours = neighbours;
-  std::vector<std::string> reasons;
-  const auto parted = part_overlap(stretch, chosen, *placed, window,
-                                   overlap_of(peak), apex, noise, reasons);
-  return parted ? parted->window : *placed;
 }
 
-// The estimated baseline at the points of the curve.
-void draw_estimated(const Trace& near, const EstimatedBaseline& baseline,
-                    const Peak& peak, PeakCurve& curve) {
-  const auto at = [&](double minutes) {
-    return interpolate(near.minutes, baseline.signal, minutes);
-  };
-  for (const double t : curve.minutes) curve.baseline.push_back(at(t));
-  curve.baseline_start = at(peak.start_minutes);
-  curve.baseline_end = at(peak.end_minutes);
+void lay_foot(const SmoothedStretch& stretch, const Foot& foot,
+              PeakCurve& curve) {
+  if (foot.points() == 0) return;
+  curve.feet.push_back({stretch.minutes[foot.first],
+                        stretch.minutes[foot.last - 1], foot.anchor_signal});
 }
 
-// The scaled template as it was fitted when the peak was measured.
-void draw_template(const Trace& near, const PlacedWindow& placed,
-                   const Peak& peak, const WindowTemplate& window,
-                   PeakCurve& curve) {
-  if (!peak.template_response) return;
-  SmoothedStretch stretch;
-  stretch.minutes = near.minutes;
-  stretch.signal = near.signal;
-  const Outcome<TemplateFit> fit =
-      fit_template(stretch, placed, peak.retention_minutes, window,
-                   white_noise(point_to_point_noise(near.signal)));
-  if (!fit) return;
-  for (std::size_t i = placed.left.first; i < placed.right.last; ++i) {
-    const double offset = near.minutes[i] - fit->apex_minutes;
-    curve.fitted_minutes.push_back(near.minutes[i]);
-    curve.fitted.push_back(fit->level + fit->slope * offset +
-                           fit->response * shape_at(window.shape, offset));
+void lay_straight(const PeakWorking& working, const Peak& peak,
+                  PeakCurve& curve) {
+  const PlacedWindow& window =
+      working.parted ? working.parted->window : working.placed;
+  curve.baseline_start = window.baseline_at(peak.start_minutes);
+  curve.baseline_end = window.baseline_at(peak.end_minutes);
+  lay_foot(working.stretch, window.left, curve);
+  lay_foot(working.stretch, window.right, curve);
+}
+
+void lay_point(const SmoothedStretch& stretch, std::size_t i, double fitted,
+               PeakCurve& curve) {
+  curve.fitted_minutes.push_back(stretch.minutes[i]);
+  curve.fitted.push_back(fitted);
+  curve.residual.push_back(stretch.signal[i] - fitted);
+}
+
+void lay_template(const PeakWorking& working, const WindowTemplate& window,
+                  PeakCurve& curve) {
+  const TemplateFit& fit = *working.fit;
+  curve.fit = PeakCurve::Fit::Template;
+  curve.fit_stands = fit.shape_passed();
+  for (std::size_t i = working.placed.left.first; i < working.placed.right.last;
+       ++i) {
+    const double offset = working.stretch.minutes[i] - fit.apex_minutes;
+    lay_point(working.stretch, i,
+              fit.level + fit.slope * offset +
+                  fit.response * shape_at(window.shape, offset),
+              curve);
+  }
+}
+
+void lay_model(const SmoothedStretch& stretch, const FittedStretch& model,
+               PeakCurve& curve) {
+  curve.fit = PeakCurve::Fit::Model;
+  curve.fit_stands = true;
+  const std::vector<FittedEmg>& peaks = model.fit.peaks;
+  if (peaks.size() > 1) curve.parts.resize(peaks.size());
+  for (std::size_t i = model.first; i < model.last; ++i) {
+    const double line = model.fit.baseline_at(stretch.minutes[i]);
+    double all = line;
+    for (std::size_t k = 0; k < peaks.size(); ++k) {
+      const double alone = peaks[k].signal_at(stretch.minutes[i]);
+      all += alone;
+      if (peaks.size() > 1) curve.parts[k].push_back(line + alone);
+    }
+    lay_point(stretch, i, all, curve);
   }
 }
 
 }  // namespace
 
-PeakCurve peak_curve(const Trace& trace, const Peak& peak,
+PeakCurve peak_curve(const Peak& peak, const PeakWorking& working,
                      const WindowTemplate& window, double margin_widths) {
   const double margin = margin_widths * window.width_half_minutes;
-  const Trace shown =
-      cut_trace(trace, peak.start_minutes - margin, peak.end_minutes + margin);
+  const SmoothedStretch& stretch = working.stretch;
+  const Shown shown = shown_points(stretch.minutes, peak.start_minutes - margin,
+                                   peak.end_minutes + margin);
   PeakCurve curve;
-  curve.minutes = shown.minutes;
-  curve.signal = shown.signal;
-  curve.smoothed = smoothed_as_found(shown, window.width_half_minutes);
-  const Trace near = around_peak(trace, peak, window);
-  const auto estimated = estimate_baseline(
-      near, baseline_from_name(peak.baseline), window.width_half_minutes,
-      std::max(window.left_minutes, window.right_minutes));
-  if (estimated) {
-    draw_estimated(near, *estimated, peak, curve);
-    return curve;
+  lay_trace(stretch, shown, curve);
+  if (stretch.detector.empty()) {
+    lay_straight(working, peak, curve);
+  } else if (!curve.minutes.empty()) {
+    curve.baseline_start =
+        interpolate(curve.minutes, curve.baseline, peak.start_minutes);
+    curve.baseline_end =
+        interpolate(curve.minutes, curve.baseline, peak.end_minutes);
   }
-  const Outcome<PlacedWindow> placed = baseline_again(near, peak, window);
-  if (placed) {
-    curve.baseline_start = placed->baseline_at(peak.start_minutes);
-    curve.baseline_end = placed->baseline_at(peak.end_minutes);
-    draw_template(near, *placed, peak, window, curve);
+  if (working.fit) {
+    lay_template(working, window, curve);
+  } else if (working.parted && working.parted->model) {
+    lay_model(stretch, *working.parted->model, curve);
   }
   return curve;
 }

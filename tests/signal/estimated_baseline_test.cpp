@@ -9,6 +9,7 @@
 
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/baseline_bias.hpp"
+#include "curve_support.hpp"
 #include "signal_support.hpp"
 #include "support/tolerance.hpp"
 
@@ -185,7 +186,8 @@ TEST_P(Estimated, TheCurveDrawsTheBaseline) {
   const auto peak = measure_peak(trace, target_with(GetParam()), kWindow, 5.0,
                                  test::no_noise(), "");
   ASSERT_TRUE(peak);
-  const PeakCurve curve = peak_curve(trace, *peak, kWindow);
+  const PeakCurve curve = test::curve_of(trace, target_with(GetParam()),
+                                         kWindow, 5.0, test::no_noise());
   ASSERT_EQ(curve.baseline.size(), curve.minutes.size());
   double area = 0.0;
   for (std::size_t i = 0; i + 1 < curve.minutes.size(); ++i) {

@@ -5,6 +5,7 @@
 
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/measure_peak.hpp"
+#include "curve_support.hpp"
 #include "one_peak.hpp"
 #include "support/tolerance.hpp"
 
@@ -74,7 +75,8 @@ TEST(MeasureNeighbours, BetweenTwoNeighboursTheBaselineRunsBelowThemAll) {
   ASSERT_TRUE(peak);
   EXPECT_LT(std::abs(peak->area - 37.599), 0.01 * 37.599);
   const PeakCurve curve =
-      peak_curve(simulate_trace(wanted, "three"), *peak, kWindow);
+      test::curve_of(simulate_trace(wanted, "three"), target_at(5.0), kWindow,
+                     5.0, test::blank_noise());
   EXPECT_LT(std::abs(curve.baseline_start - 50.0), 1.0);
   EXPECT_LT(std::abs(curve.baseline_end - 50.0), 1.0);
 }

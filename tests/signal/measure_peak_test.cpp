@@ -6,6 +6,7 @@
 #include <cmath>
 #include <vector>
 
+#include "curve_support.hpp"
 #include "one_peak.hpp"
 #include "support/tolerance.hpp"
 
@@ -211,7 +212,8 @@ TEST(MeasurePeak, CurveShowsTheStretchAndItsBaseline) {
   const WindowTemplate wide = window_of(0.3, 0.3, 0.1177);
   const auto peak = measured(trace, target_at(5.0), wide);
   ASSERT_TRUE(peak);
-  const PeakCurve curve = peak_curve(trace, *peak, wide);
+  const PeakCurve curve =
+      test::curve_of(trace, target_at(5.0), wide, 5.0, test::blank_noise());
   EXPECT_EQ(curve.minutes.size(), curve.signal.size());
   ASSERT_EQ(curve.minutes.size(), curve.smoothed.size());
   // Smoothed over its width a peak loses some of its height, never all.

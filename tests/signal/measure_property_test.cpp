@@ -4,6 +4,7 @@
 #include <vector>
 
 #include "loqsmith/numerics/mean.hpp"
+#include "curve_support.hpp"
 #include "signal_support.hpp"
 #include "support/tolerance.hpp"
 
@@ -214,7 +215,7 @@ TEST(MeasureProperty, AnyTraceGivesFiniteNumbersOrAReason) {
       EXPECT_TRUE(std::isfinite(peak->area) && std::isfinite(peak->height));
       EXPECT_TRUE(std::isfinite(peak->retention_minutes));
       EXPECT_LT(peak->start_minutes, peak->end_minutes);
-      peak_curve(trace, *peak, kWindow);
+      test::curve_of(trace, target_at(5.0), kWindow, 5.0, test::no_noise());
     } else {
       EXPECT_FALSE(peak.reason().empty());
     }

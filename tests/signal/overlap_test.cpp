@@ -5,6 +5,7 @@
 
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/model_overlap.hpp"
+#include "curve_support.hpp"
 #include "overlap_support.hpp"
 #include "support/tolerance.hpp"
 
@@ -224,7 +225,9 @@ TEST(Overlap, CurveShowsTheSkimmingLine) {
   const WindowTemplate window = taught_alone(pair, Overlap::Skim);
   const auto rider = measured(trace, pair, Overlap::Skim, window, at);
   ASSERT_TRUE(rider);
-  const PeakCurve curve = peak_curve(trace, *rider, window);
+  const PeakCurve curve =
+      test::curve_of(trace, target_with(Overlap::Skim, at), window, at,
+                     noise_of_blank(pair, window.width_half_minutes));
   // The line leaves the trace where the window begins, to within the mean of
   // the points about it.
   const double there =

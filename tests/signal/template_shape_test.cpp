@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "loqsmith/signal/summits.hpp"
+#include "curve_support.hpp"
 #include "support/tolerance.hpp"
 #include "template_night.hpp"
 
@@ -225,7 +226,10 @@ TEST_F(Shapes, TheFigureShowsTheFit) {
   const Trace trace = simulate_trace(wanted, night_.stream());
   const Peak peak = night_.measured(trace, test::no_noise());
   ASSERT_TRUE(peak.template_response);
-  const PeakCurve curve = peak_curve(trace, peak, night_.window());
+  const PeakCurve curve =
+      test::curve_of(trace, night_.target(), night_.window(), 5.0,
+                     test::no_noise());
+  EXPECT_TRUE(curve.fit_stands);
   ASSERT_GE(curve.fitted.size(), 30U);
   for (std::size_t i = 0; i < curve.fitted.size(); ++i) {
     const double t = curve.fitted_minutes[i];

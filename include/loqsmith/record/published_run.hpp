@@ -13,7 +13,7 @@
 #include "loqsmith/judgement/rows.hpp"
 #include "loqsmith/sheets/method.hpp"
 #include "loqsmith/signal/learn.hpp"
-#include "loqsmith/signal/measure_peak.hpp"
+#include "loqsmith/signal/peak_curve.hpp"
 
 namespace loqsmith {
 

@@ -1,7 +1,6 @@
 #pragma once
 
 #include <string>
-#include <vector>
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/peak.hpp"
@@ -61,22 +60,5 @@ Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
                            const WindowTemplate& window, double expected,
                            const Outcome<NoiseEstimate>& noise,
                            const std::string& noise_source);
-
-/// What a figure draws of one measured peak: a stretch of the trace around it
-/// and its baseline.
-struct PeakCurve {
-  std::vector<double> minutes;
-  std::vector<double> signal;
-  std::vector<double> smoothed;  ///< at the same times, default smoothing
-  /// Where the response is the template's: it and its straight baseline.
-  std::vector<double> fitted_minutes;
-  std::vector<double> fitted;
-  double baseline_start = 0.0;  ///< signal of the baseline at the feet
-  double baseline_end = 0.0;
-  /// An estimated baseline at every point; empty: straight between the feet.
-  std::vector<double> baseline;
-};
-PeakCurve peak_curve(const Trace& trace, const Peak& peak,
-                     const WindowTemplate& window, double margin_widths = 4.0);
 
 }  // namespace loqsmith

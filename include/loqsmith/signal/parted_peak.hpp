@@ -1,16 +1,25 @@
 #pragma once
 
+#include <cstddef>
 #include <optional>
 #include <string>
 #include <vector>
 
 #include "loqsmith/signal/choose_apex.hpp"
+#include "loqsmith/signal/fit_overlap.hpp"
 #include "loqsmith/signal/learn.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/settings.hpp"
 #include "loqsmith/signal/summits.hpp"
 
 namespace loqsmith {
+
+/// Peaks and a line fitted together to the points [first, last) of a stretch.
+struct FittedStretch {
+  OverlapFit fit;
+  std::size_t first = 0;
+  std::size_t last = 0;
+};
 
 /// A target taken out of its overlap otherwise than by a perpendicular drop.
 struct PartedPeak {
@@ -23,6 +32,7 @@ struct PartedPeak {
   std::vector<double> height_weights;
   /// The stretch less the fitted neighbours, where there are any.
   std::optional<SmoothedStretch> alone;
+  std::optional<FittedStretch> model;  ///< the target first
   std::vector<std::string> reasons;
 };
 
