@@ -3,8 +3,10 @@
 #include "loqsmith/limits/blank_deviation.hpp"
 #include "loqsmith/limits/calibration_residual.hpp"
 #include "loqsmith/limits/established.hpp"
+#include "loqsmith/limits/low_level_precision.hpp"
 #include "loqsmith/limits/noise_model_limit.hpp"
 #include "loqsmith/limits/signal_to_noise_limit.hpp"
+#include "loqsmith/limits/spike_replicates.hpp"
 
 namespace loqsmith {
 
@@ -19,13 +21,13 @@ const std::vector<LimitProcedure>& limit_procedures() {
        signal_to_noise_limit},
       {"noise-model", "ISO 11843-7 (2018)", true, noise_model_limit},
       {"spike-replicates", "US EPA 40 CFR 136 Appendix B, Revision 2 (2016)",
-       false, nullptr},
+       false, spike_replicates},
       {"critical-and-detectable", "Currie 1995 (IUPAC); ISO 11843-2 (2000)",
        false, nullptr},
       {"din-32645", "DIN 32645 (2008)", false, nullptr},
       {"prediction-band", "Hubaux and Vos 1970", false, nullptr},
       {"low-level-precision", "Eurachem, Fitness for Purpose (2014) 6.2", false,
-       nullptr},
+       low_level_precision},
       {"blank-and-low-level", "CLSI EP17-A2 (2012)", false, nullptr},
       {"error-propagation", "Long and Winefordner 1983", false, nullptr},
       {"two-component", "Rocke and Lorenzato 1995", true, nullptr},

@@ -83,8 +83,9 @@ std::vector<ElementRule> basic_procedures() {
                  quantitation_factor(),
                  defaulted("spike-ratio", pair(above(0.0)), "2 10",
                            "Spike level over the limit."),
-                 blanks()},
-                kLater),
+                 optional("blanks", choice(blank_choices()),
+                          "Which blanks; method where left out.")},
+                kNow),
   };
 }
 
@@ -121,7 +122,7 @@ std::vector<ElementRule> further_procedures() {
                  defaulted("blank-replicates", whole(0, 1000), "0",
                            "Blanks averaged into one correction."),
                  quantitation_factor(), blanks()},
-                kLater),
+                kNow),
       procedure("blank-and-low-level",
                 "Limit of blank and limit of detection from blanks and spikes.",
                 {defaulted("ranks", choice({{"no"}, {"yes"}}), "no",

@@ -47,6 +47,18 @@ inline LimitEvidence evidence_of(const std::vector<double>& blanks,
   return evidence;
 }
 
+/// Low spikes of one amount, each in a preparation of its own, undiluted.
+inline std::vector<SpikeResult> spikes_of(double nominal,
+                                          const std::vector<double>& found) {
+  std::vector<SpikeResult> spikes;
+  for (double one : found) {
+    const int number = static_cast<int>(spikes.size()) + 1;
+    spikes.push_back(
+        {100 + number, nominal, one, "P" + std::to_string(number)});
+  }
+  return spikes;
+}
+
 inline ProcedureSettings procedure(const std::string& name) {
   ProcedureSettings settings;
   settings.name = name;
