@@ -5,32 +5,12 @@
 #include <string>
 
 #include "loqsmith/calibration/inverse.hpp"
+#include "loqsmith/calibration/model_powers.hpp"
 #include "loqsmith/calibration/weight.hpp"
 #include "loqsmith/numerics/least_squares.hpp"
 
 namespace loqsmith {
 namespace {
-
-using Model = CalibrationSettings::Model;
-
-struct Powers {
-  int lowest;
-  int highest;
-  int count() const { return highest - lowest + 1; }
-};
-
-Powers powers_of(const CalibrationSettings& settings) {
-  const bool zero = settings.intercept == CalibrationSettings::Intercept::Zero;
-  switch (settings.model) {
-    case Model::Linear:
-      return {zero ? 1 : 0, 1};
-    case Model::Quadratic:
-      return {zero ? 1 : 0, 2};
-    case Model::ResponseFactor:
-      return {1, 1};
-  }
-  return {0, 1};
-}
 
 std::string number_of_levels(std::size_t count) {
   return std::to_string(count) + (count == 1 ? " level" : " levels");
@@ -88,7 +68,7 @@ bool all_responses_equal(const std::vector<StandardPoint>& points) {
 }
 
 Outcome<LeastSquaresFit> fit_used(const std::vector<StandardPoint>& points,
-                                  Powers powers) {
+                                  ModelPowers powers) {
   std::vector<double> x, y, weights;
   for (const StandardPoint& point : points) {
     if (!point.used) continue;
@@ -100,7 +80,7 @@ Outcome<LeastSquaresFit> fit_used(const std::vector<StandardPoint>& points,
 }
 
 void take_coefficients(Calibration& calibration, const LeastSquaresFit& fit,
-                       Powers powers) {
+                       ModelPowers powers) {
   std::array<double, 3> coefficients{};
   const auto lowest = static_cast<std::size_t>(powers.lowest);
   for (std::size_t i = 0; i < fit.coefficients.size(); ++i) {
@@ -212,7 +192,7 @@ void set_range(Calibration& calibration) {
 Outcome<Calibration> fit_calibration(std::vector<StandardPoint> points,
                                      const CalibrationSettings& settings) {
   if (auto refused = why_not_computed(settings)) return *refused;
-  const Powers powers = powers_of(settings);
+  const ModelPowers powers = model_powers(settings);
 
   Calibration calibration;
   calibration.settings = settings;

@@ -54,6 +54,10 @@ double f_quantile(double p, double numerator_df, double denominator_df) {
   return bm::quantile(FisherF(numerator_df, denominator_df), p);
 }
 
+double f_upper_tail(double x, double numerator_df, double denominator_df) {
+  return bm::cdf(bm::complement(FisherF(numerator_df, denominator_df), x));
+}
+
 SpreadBounds standard_deviation_bounds(double degrees_of_freedom,
                                        double confidence) {
   const double nu = degrees_of_freedom;

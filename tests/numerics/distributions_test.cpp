@@ -120,6 +120,10 @@ TEST(FisherF, PercentagePoints) {
   EXPECT_TRUE(to_six_decimals(f_quantile(0.99, 10, 10), 4.849147));
   // F(2, nu): 1 - (1 + 2x/nu)^(-nu/2).
   EXPECT_TRUE(within_condition(f_cdf(2.0, 2, 4), 1.0 - 0.25, 20));
+  // With two and two degrees of freedom the tail is 1 / (1 + x).
+  EXPECT_TRUE(within_condition(f_upper_tail(2.0, 2, 4), 0.25, 20));
+  EXPECT_TRUE(
+      within_condition(f_upper_tail(1e12, 2, 2), 1.0 / (1.0 + 1e12), 40));
 }
 
 // 95 % interval of a standard deviation for n - 1 = 6, 7, 9, 19, 59 and for

@@ -23,6 +23,9 @@ double chi_square_quantile(double p, double degrees_of_freedom);
 double f_cdf(double x, double numerator_df, double denominator_df);
 double f_quantile(double p, double numerator_df, double denominator_df);
 
+/// P(F > x), without the loss of digits of 1 - cdf in the far tail.
+double f_upper_tail(double x, double numerator_df, double denominator_df);
+
 /// Multipliers that turn an estimated standard deviation into the bounds of
 /// its two-sided confidence interval:
 ///
