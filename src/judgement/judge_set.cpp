@@ -2,6 +2,7 @@
 
 #include <utility>
 
+#include "loqsmith/calibration/diagnostics.hpp"
 #include "loqsmith/calibration/fit_calibration.hpp"
 #include "loqsmith/judgement/calibration_checks.hpp"
 #include "loqsmith/judgement/check_standards.hpp"
@@ -79,6 +80,7 @@ CalibrationSet calibrate_set(const MeasuredAnalyte& members,
                   acceptance->back_calculation_lowest_percent);
   }
   set.standards = set.calibration->points;
+  set.diagnostics = diagnose_calibration(*set.calibration);
   return set;
 }
 
