@@ -97,9 +97,9 @@ class Measurement {
                            " in the window, at least 5 are needed"};
     }
     if (points < kFewPoints) add_reason("few-points");
-    const bool whole = covers(stretch_.minutes,
-                              expected_ - target_.window_minutes,
-                              expected_ + target_.window_minutes);
+    const bool whole =
+        covers(stretch_.minutes, expected_ - target_.window_minutes,
+               expected_ + target_.window_minutes);
     if (!whole && !chosen_.minutes) {
       return NotApplicable{
           "window-not-covered: no peak in what the trace holds of the window"};
@@ -131,7 +131,7 @@ class Measurement {
   void state_response() {
     peak_.found = chosen_.minutes.has_value();
     double apex = chosen_.minutes.value_or(expected_);
-    if (peak_.found && chosen_.height >= kSharpHeight * point_noise_) {
+    if (peak_.found && is_sharp()) {
       apex = sharpened_apex(stretch_, apex, window_.width_half_minutes,
                             point_noise_ / chosen_.height);
       const Outcome<PlacedWindow> again = place(apex);
@@ -145,6 +145,10 @@ class Measurement {
     peak_.height = signal_near(stretch_, apex) - placed_.baseline_at(apex);
     if (placed_.left.dropped || placed_.right.dropped) peak_.overlap = "drop";
     part_from_neighbours();
+  }
+
+  bool is_sharp() const {
+    return chosen_.height >= kSharpHeight * point_noise_;
   }
 
   void part_from_neighbours() {
@@ -173,6 +177,11 @@ class Measurement {
     if (fit && fit->shape_passed()) {
       peak_.template_response = fit->response;
       peak_.shape_passed = true;
+      // Where the shape fits best scatters as little as any estimate can; the
+      // apex alone knows less of a high peak, whose reach is short.
+      if (peak_.found && is_sharp()) {
+        peak_.retention_minutes = fit->apex_minutes;
+      }
       return;
     }
     peak_.area_instead = true;
@@ -265,8 +274,8 @@ class Measurement {
       return predict_response_noise(response_weights(), model_, *noise_);
     }
     if (noise_->simulated_baseline) {
-      peak_.baseline_bias = noise_->simulated_baseline->of(
-          target_.integration.response, model_);
+      peak_.baseline_bias =
+          noise_->simulated_baseline->of(target_.integration.response, model_);
     }
     if (!noise_->whole) return NotApplicable{noise_->whole.reason()};
     if (!peak_.baseline_bias) {

@@ -7,6 +7,7 @@
 
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/point_noise.hpp"
+#include "loqsmith/signal/ringing.hpp"
 
 namespace loqsmith {
 namespace {
@@ -258,9 +259,10 @@ std::vector<Summit> significant_summits(const SmoothedStretch& stretch,
   const double unit = multiple * std::sqrt(2.0) * stretch.gain;
   for (const Summit& summit : summits) {
     if (!(summit.prominence > std::max(unit * noise, rounding))) continue;
-    if (summit.prominence > unit * noise_around(stretch, summit, width_half)) {
-      significant.push_back(summit);
-    }
+    const double here = noise_around(stretch, summit, width_half);
+    if (!(summit.prominence > unit * here)) continue;
+    if (is_ringing(stretch, summits, summit, multiple, noise)) continue;
+    significant.push_back(summit);
   }
   return significant;
 }

@@ -70,7 +70,8 @@ Outcome<PlacedWindow> place_window(const SmoothedStretch& stretch,
 
 /// Summits that stand out by `multiple` standard deviations of the difference
 /// of two smoothed points; the noise is the given one or, where larger, the
-/// point-to-point noise within a width at half height around the summit.
+/// point-to-point noise within a width at half height around the summit. What
+/// smoothing makes of a tall peak's foot is left out (ringing.hpp).
 std::vector<Summit> significant_summits(const SmoothedStretch& stretch,
                                         const std::vector<Summit>& summits,
                                         double multiple, double noise,
