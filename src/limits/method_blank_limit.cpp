@@ -18,7 +18,8 @@ Outcome<MethodBlankLimit> from_moments(const std::vector<double>& numbers,
     return NotApplicable{"few-blanks: 1 blank has no spread"};
   MethodBlankLimit limit;
   limit.n = numbers.size();
-  limit.mean = std::max(mean(numbers), 0.0);
+  limit.mean_found = mean(numbers);
+  limit.mean = std::max(limit.mean_found, 0.0);
   limit.sd = standard_deviation(numbers);
   const double df = static_cast<double>(limit.n) - 1.0;
   limit.value = limit.mean + student_t_quantile(confidence, df) * limit.sd;

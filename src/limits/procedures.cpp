@@ -1,5 +1,6 @@
 #include "loqsmith/limits/procedures.hpp"
 
+#include "loqsmith/limits/blank_and_low_level.hpp"
 #include "loqsmith/limits/blank_deviation.hpp"
 #include "loqsmith/limits/calibration_residual.hpp"
 #include "loqsmith/limits/established.hpp"
@@ -7,6 +8,7 @@
 #include "loqsmith/limits/noise_model_limit.hpp"
 #include "loqsmith/limits/signal_to_noise_limit.hpp"
 #include "loqsmith/limits/spike_replicates.hpp"
+#include "loqsmith/limits/two_component_limit.hpp"
 
 namespace loqsmith {
 
@@ -28,9 +30,10 @@ const std::vector<LimitProcedure>& limit_procedures() {
       {"prediction-band", "Hubaux and Vos 1970", false, nullptr},
       {"low-level-precision", "Eurachem, Fitness for Purpose (2014) 6.2", false,
        low_level_precision},
-      {"blank-and-low-level", "CLSI EP17-A2 (2012)", false, nullptr},
+      {"blank-and-low-level", "CLSI EP17-A2 (2012)", false,
+       blank_and_low_level},
       {"error-propagation", "Long and Winefordner 1983", false, nullptr},
-      {"two-component", "Rocke and Lorenzato 1995", true, nullptr},
+      {"two-component", "Rocke and Lorenzato 1995", true, two_component_limit},
       {"accuracy-profile", "Hubert et al. 2004", false, nullptr},
       {"established", "the method", false, established}};
   return kProcedures;

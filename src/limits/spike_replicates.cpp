@@ -1,10 +1,13 @@
 #include "loqsmith/limits/spike_replicates.hpp"
 
+#include <algorithm>
+#include <optional>
 #include <set>
 #include <string>
 #include <vector>
 
 #include "loqsmith/limits/blanks.hpp"
+#include "loqsmith/limits/drawn_truth.hpp"
 #include "loqsmith/limits/low_spikes.hpp"
 #include "loqsmith/limits/method_blank_limit.hpp"
 #include "loqsmith/limits/spread_limit.hpp"
@@ -52,11 +55,18 @@ void judge_batches(LimitEstimate& estimate, const SpikeLevel& level) {
 
 // The limit is that of the blanks, whose spread and mean both moved it.
 void let_blanks_decide(LimitEstimate& estimate, const MethodBlankLimit& blanks,
-                       double of_spikes) {
+                       double of_spikes, double confidence) {
+  const double df = static_cast<double>(blanks.n) - 1.0;
+  const double t = student_t_quantile(confidence, df);
   estimate.detection = blanks.value;
   estimate.detection_lower.reset();
   estimate.detection_upper.reset();
-  estimate.degrees_of_freedom = static_cast<double>(blanks.n) - 1.0;
+  estimate.degrees_of_freedom = df;
+  set_detection_bounds(estimate, "spike-replicates", [&](RandomStream& random) {
+    const NormalPopulation truth =
+        drawn_population(random, blanks.mean_found, blanks.sd, blanks.n);
+    return std::optional<double>(std::max(truth.mean, 0.0) + t * truth.sd);
+  });
   estimate.findings.push_back(
       {Grade::Note, "blanks-decide",
        "the blanks' limit is larger than that of the spikes (" +
@@ -92,7 +102,7 @@ Outcome<LimitEstimate> spike_replicates(const LimitEvidence& evidence,
   set_spread_limits(estimate, {spikes->sd, spikes->degrees_of_freedom()}, 1.0,
                     factors);
   if (blanks->value > of_spikes)
-    let_blanks_decide(estimate, *blanks, of_spikes);
+    let_blanks_decide(estimate, *blanks, of_spikes, procedure.confidence);
 
   judge_batches(estimate, spikes->level);
   judge_spike_number(estimate, *spikes, kWantedSpikes);

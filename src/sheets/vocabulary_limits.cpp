@@ -128,7 +128,7 @@ std::vector<ElementRule> further_procedures() {
                 {defaulted("ranks", choice({{"no"}, {"yes"}}), "no",
                            "Whether ranks are used instead of moments."),
                  alpha("0.05"), beta("0.05"), blanks()},
-                kLater),
+                kNow),
       procedure("error-propagation",
                 "With the errors of blank, slope and intercept propagated.",
                 {detection_factor("3"), quantitation_factor(), blanks()},

@@ -18,6 +18,7 @@ struct MethodBlankLimit {
   Rule rule = Rule::MeanAndSpread;
   double value = 0.0;
   double mean = 0.0;  ///< as it was used: never below zero; MeanAndSpread only
+  double mean_found = 0.0;  ///< signed; MeanAndSpread only
   double sd = 0.0;    ///< MeanAndSpread only
   std::size_t n = 0;
 };

@@ -18,9 +18,8 @@ namespace loqsmith {
 /// (response - a) / b, signed. Every blank has a number here, because responses
 /// are measured over the template window whether a peak is seen or not.
 ///
-/// The bounds are those of t s_spikes; where the blanks decide there are none
-/// for the detection limit, because it is not proportional to one standard
-/// deviation.
+/// The bounds are those of t s_spikes; where the blanks decide, those of a
+/// bootstrap over mean and standard deviation that the blanks may truly have.
 ///
 /// @return not applicable: no calibration, slope not positive, fewer than 3
 ///         spikes or blanks, spikes or blanks all equal.
