@@ -2,6 +2,7 @@
 
 #include <Eigen/Cholesky>
 #include <Eigen/Core>
+#include <algorithm>
 #include <cmath>
 #include <cstddef>
 #include <string>
@@ -49,6 +50,15 @@ std::vector<double> moved(const std::vector<double>& from,
   return to;
 }
 
+void shorten(VectorXd& step, const std::vector<double>& longest) {
+  double factor = 1.0;
+  for (std::size_t i = 0; i < longest.size(); ++i) {
+    const double length = std::abs(step(static_cast<Index>(i)));
+    if (length > longest[i]) factor = std::min(factor, longest[i] / length);
+  }
+  step *= factor;
+}
+
 double promised_gain(const LikelihoodAt& here, const VectorXd& step) {
   double gain = 0.0;
   for (std::size_t i = 0; i < here.gradient.size(); ++i)
@@ -77,10 +87,10 @@ Outcome<MaximumLikelihood> at_the_top(const LikelihoodAt& here,
 
 }  // namespace
 
-Outcome<MaximumLikelihood> maximise_likelihood(const Likelihood& likelihood,
-                                               const std::vector<double>& start,
-                                               int most_evaluations,
-                                               double tolerance) {
+Outcome<MaximumLikelihood> maximise_likelihood(
+    const Likelihood& likelihood, const std::vector<double>& start,
+    const std::vector<double>& longest, int most_evaluations,
+    double tolerance) {
   std::vector<double> parameters = start;
   std::optional<LikelihoodAt> here = likelihood(parameters);
   if (!here) return NotApplicable{"bad-start: parameters out of range"};
@@ -90,13 +100,14 @@ Outcome<MaximumLikelihood> maximise_likelihood(const Likelihood& likelihood,
     damping = damping > 0.0 ? 8.0 * damping : kSmallestDamping;
   };
   while (evaluations < most_evaluations && damping < kLargestDamping) {
-    const std::optional<VectorXd> step = step_from(*here, damping);
+    std::optional<VectorXd> step = step_from(*here, damping);
     if (!step) {
       damp_more();
       continue;
     }
     if (promised_gain(*here, *step) < tolerance)
       return at_the_top(*here, parameters, evaluations);
+    shorten(*step, longest);
     const std::vector<double> there = moved(parameters, *step);
     const std::optional<LikelihoodAt> next = likelihood(there);
     ++evaluations;

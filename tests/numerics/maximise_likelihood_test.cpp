@@ -48,7 +48,7 @@ TEST(MaximiseLikelihood, SaysWhyThereIsNoMaximum) {
   const auto slope = [](std::span<const double> at) {
     return std::optional(LikelihoodAt{at[0], {1.0}, {0.0}, {1.0}});
   };
-  const auto rising = maximise_likelihood(slope, {0.0}, 50);
+  const auto rising = maximise_likelihood(slope, {0.0}, {2.0}, 50);
   ASSERT_FALSE(rising);
   EXPECT_EQ(rising.reason().rfind("not-converged", 0), 0U);
   // Out of range from the start.

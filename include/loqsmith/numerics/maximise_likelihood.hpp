@@ -39,14 +39,16 @@ struct MaximumLikelihood {
 /// Converged means: the next step promises less than `tolerance` of
 /// log-likelihood, and the information is positive definite.
 ///
+/// @param longest  greatest change of each parameter in one step, so that the
+///                 climb stays on the hill it began on; empty: any
 /// @return not applicable: start out of range, evaluations used up, no
 ///         maximum (information not positive definite where nothing climbs).
 ///
 /// Source: D. W. Marquardt, J. SIAM 11 (1963) 431, for the way between
 /// gradient and Newton; from memory.
-Outcome<MaximumLikelihood> maximise_likelihood(const Likelihood& likelihood,
-                                               const std::vector<double>& start,
-                                               int most_evaluations = 200,
-                                               double tolerance = 1e-13);
+Outcome<MaximumLikelihood> maximise_likelihood(
+    const Likelihood& likelihood, const std::vector<double>& start,
+    const std::vector<double>& longest = {}, int most_evaluations = 200,
+    double tolerance = 1e-13);
 
 }  // namespace loqsmith
