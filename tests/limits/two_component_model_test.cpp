@@ -147,7 +147,7 @@ TEST(TwoComponentModel, FindsWhatWasPutIn) {
   // Relative standard deviation of a variance with 6 degrees of freedom.
   const double spread = std::sqrt(2.0 / 6.0);
   const std::size_t n = static_cast<std::size_t>(fitted);
-  EXPECT_FALSE(within_sampling_error(additive / fitted, spread, n, 1.0));
+  EXPECT_LT(additive / fitted, 1.0);
   EXPECT_TRUE(within_sampling_error(mended / fitted, spread, n, 1.0));
   EXPECT_LT(std::abs(proportional / fitted), 0.1);
   EXPECT_LT(std::abs(slope / fitted), 0.01);
