@@ -63,7 +63,7 @@ Outcome<Evidence> gather(const LimitEvidence& evidence,
     gathered.blank_results.push_back((blank.response - line.intercept) /
                                      line.slope);
   gathered.blank_samples = count_samples(*blanks);
-  for (SpikeLevel& level : spike_levels(evidence))
+  for (SpikeLevel& level : spike_levels(evidence.spikes))
     if (level.n() >= kLeastOfOneLevel)
       gathered.levels.push_back(std::move(level));
   if (gathered.levels.empty())

@@ -55,9 +55,9 @@ const SpikeLevel* choose_level(const std::vector<SpikeLevel>& levels,
 
 }  // namespace
 
-std::vector<SpikeLevel> spike_levels(const LimitEvidence& evidence) {
+std::vector<SpikeLevel> spike_levels(const std::vector<SpikeResult>& spikes) {
   std::vector<std::vector<SpikeResult>> groups;
-  for (const SpikeResult& spike : evidence.spikes) {
+  for (const SpikeResult& spike : spikes) {
     if (!(spike.nominal_vial > 0.0) || !(spike.sample_factor > 0.0)) continue;
     const auto group = std::find_if(
         groups.begin(), groups.end(),
@@ -79,7 +79,7 @@ std::vector<SpikeLevel> spike_levels(const LimitEvidence& evidence) {
 
 Outcome<SpikeSample> usable_spikes(const LimitEvidence& evidence,
                                    std::size_t wanted) {
-  const std::vector<SpikeLevel> levels = spike_levels(evidence);
+  const std::vector<SpikeLevel> levels = spike_levels(evidence.spikes);
   const SpikeLevel* level = choose_level(levels, wanted);
   const std::size_t n = level == nullptr ? 0 : level->n();
   if (n < kLeastSpikes)

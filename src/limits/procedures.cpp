@@ -1,5 +1,6 @@
 #include "loqsmith/limits/procedures.hpp"
 
+#include "loqsmith/limits/accuracy_profile.hpp"
 #include "loqsmith/limits/blank_and_low_level.hpp"
 #include "loqsmith/limits/blank_deviation.hpp"
 #include "loqsmith/limits/calibration_residual.hpp"
@@ -34,7 +35,7 @@ const std::vector<LimitProcedure>& limit_procedures() {
        blank_and_low_level},
       {"error-propagation", "Long and Winefordner 1983", false, nullptr},
       {"two-component", "Rocke and Lorenzato 1995", true, two_component_limit},
-      {"accuracy-profile", "Hubert et al. 2004", false, nullptr},
+      {"accuracy-profile", "Hubert et al. 2004", false, accuracy_profile},
       {"established", "the method", false, established}};
   return kProcedures;
 }

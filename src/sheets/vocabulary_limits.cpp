@@ -144,7 +144,7 @@ std::vector<ElementRule> further_procedures() {
                            "Part of future results in the interval."),
                  defaulted("acceptance", pair(at_least(0.0)), "80 120",
                            "Acceptable recovery, percent.")},
-                kLater),
+                kNow),
       procedure("established", "Limits that a validation has established.",
                 {required("detection", number(above(0.0)),
                           "Detection limit, vial concentration."),

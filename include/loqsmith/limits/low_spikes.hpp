@@ -25,7 +25,7 @@ struct SpikeLevel {
 
 /// The low spikes by their amount in the sample, ascending. Spikes without any
 /// of the analyte are none of its spikes.
-std::vector<SpikeLevel> spike_levels(const LimitEvidence& evidence);
+std::vector<SpikeLevel> spike_levels(const std::vector<SpikeResult>& spikes);
 
 /// A level with its moments.
 struct SpikeSample {
