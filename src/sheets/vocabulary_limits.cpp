@@ -137,7 +137,7 @@ std::vector<ElementRule> further_procedures() {
           "two-component", "From an error model of two components.",
           {defaulted("relative-deviation", number(between(0.0, 1.0)), "0.10",
                      "Relative standard deviation at quantitation.")},
-          kLater),
+          kNow),
       procedure("accuracy-profile",
                 "Quantitation where the tolerance interval stays acceptable.",
                 {defaulted("beta", number(between(0.0, 1.0)), "0.80",
