@@ -129,6 +129,7 @@ StandardAddition amount_by_addition(const Calibration& line) {
   found.amount = line.intercept / b;
   found.standard_error = s / b * std::sqrt(1.0 / centre.n + spread);
   const double t = student_t_quantile(0.975, line.degrees_of_freedom);
+  found.propagated_half_width = t * found.standard_error;
   const double g = t * t * s * s / (b * b * centre.square_sum);
   if (!(g < 1.0)) {
     found.interval = NotApplicable{
@@ -138,8 +139,10 @@ StandardAddition amount_by_addition(const Calibration& line) {
   const double half =
       t * s * std::sqrt((1.0 - g) / centre.n + spread) / (b * (1.0 - g));
   const double middle = centre.y / (b * (1.0 - g)) - centre.x;
-  found.expanded_uncertainty = t * found.standard_error;
-  found.interval = ConcentrationInterval{middle - half, middle + half};
+  const ConcentrationInterval interval{middle - half, middle + half};
+  found.expanded_uncertainty =
+      std::max(interval.upper - found.amount, found.amount - interval.lower);
+  found.interval = interval;
   return found;
 }
 

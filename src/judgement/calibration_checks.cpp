@@ -36,7 +36,8 @@ class Criteria {
     row.check = "calibration";
     row.analyte = analyte_;
     row.action = check_action_name(accept_.action);
-    row.affects = "all results of the analyte";
+    row.affects = set_.alone ? std::string("all results of the analyte")
+                             : "all results of the set " + set_.set;
     row.note = std::move(note);
     return row;
   }

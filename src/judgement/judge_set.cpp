@@ -6,6 +6,7 @@
 #include "loqsmith/calibration/fit_calibration.hpp"
 #include "loqsmith/judgement/calibration_checks.hpp"
 #include "loqsmith/judgement/check_standards.hpp"
+#include "loqsmith/judgement/limit_evidence.hpp"
 #include "loqsmith/judgement/standards.hpp"
 
 namespace loqsmith {
@@ -82,6 +83,20 @@ CalibrationSet calibrate_set(const MeasuredAnalyte& members,
   set.standards = set.calibration->points;
   set.diagnostics = diagnose_calibration(*set.calibration);
   return set;
+}
+
+void limit_set(CalibrationSet& set, const LimitEvidence& evidence,
+               const MeasuredAnalyte& members) {
+  set.limits = compute_limits(evidence, members.settings->limits);
+  note_mean_internal_standard(members, set.limits);
+}
+
+void name_set(std::vector<CheckRow>& rows, const CalibrationSet& set) {
+  if (set.alone) return;
+  for (CheckRow& row : rows) {
+    row.set = set.set;
+    row.note = "set " + set.set + (row.note.empty() ? "" : ": " + row.note);
+  }
 }
 
 SetVerdict check_set(const MeasuredAnalyte& members,

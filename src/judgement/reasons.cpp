@@ -9,7 +9,7 @@ namespace {
 
 // Most serious first. First why there is no number, then why the number may
 // not be used, then why to be careful with it.
-constexpr std::array<std::string_view, 47> kDoubtful{
+constexpr std::array<std::string_view, 56> kDoubtful{
     "peak-not-found",
     "file-refused",
     "trace-missing",
@@ -22,6 +22,10 @@ constexpr std::array<std::string_view, 47> kDoubtful{
     "not-measured",
     "internal-standard-missing",
     "no-calibration",
+    "no-sample-response",
+    "few-additions",
+    "slope-not-positive",
+    "no-fit",
     "no-concentration",
     "no-accepted-level",
     "no-valid-limit",
@@ -32,7 +36,12 @@ constexpr std::array<std::string_view, 47> kDoubtful{
     "internal-standard-saturated",
     "above-range",
     "beyond-curve",
+    "beyond-additions",
+    "slope-uncertain",
     "no-closing-check",
+    "brackets-differ",
+    "no-opening-standards",
+    "no-closing-standards",
     "window-cut-short",
     "several-peaks",
     "overlapped",

@@ -1,6 +1,9 @@
 #include "loqsmith/judgement/result_row.hpp"
 
+#include <algorithm>
+
 #include "loqsmith/calibration/inverse.hpp"
+#include "loqsmith/judgement/calibration_sets.hpp"
 #include "loqsmith/judgement/reasons.hpp"
 #include "loqsmith/judgement/reported_text.hpp"
 #include "loqsmith/judgement/sample_units.hpp"
@@ -38,11 +41,21 @@ void set_limits(ResultRow& row, const Outcome<GoverningLimits>& governing,
   row.quantitation_procedure = governing->quantitation_procedure;
 }
 
+Outcome<InversePrediction> in_the_vial(double response,
+                                       const CalibrationSet& set) {
+  if (set.addition) {
+    InversePrediction found;
+    found.concentration = set.addition->amount;
+    found.expanded_uncertainty = set.addition->expanded_uncertainty;
+    return found;
+  }
+  return concentration_from_response(*set.calibration, response);
+}
+
 /// Fills in the concentrations; true where the response has one.
-bool set_concentration(ResultRow& row, const Calibration& calibration,
+bool set_concentration(ResultRow& row, const CalibrationSet& set,
                        double factor) {
-  const Outcome<InversePrediction> found =
-      concentration_from_response(calibration, *row.response);
+  const Outcome<InversePrediction> found = in_the_vial(*row.response, set);
   if (!found) return false;
   row.vial_concentration = found->concentration;
   row.result = in_sample(found->concentration, factor);
@@ -78,14 +91,21 @@ std::optional<Placing> place_by_response(double response,
   return placing;
 }
 
+// Where the responses of a curve end, as a concentration in the vial.
+double end_of_range(const CalibrationSet& set) {
+  const double highest = *set.calibration->accepted_highest;
+  if (!set.addition) return highest;
+  return highest + std::max(0.0, set.addition->amount);
+}
+
 void place(VerdictFacts& facts, ResultRow& row, const CalibrationSet& set,
            double factor) {
   if (!row.response || !set.calibration) return;
   const Calibration& calibration = *set.calibration;
-  const bool has_number = set_concentration(row, calibration, factor);
+  const bool has_number = set_concentration(row, set, factor);
   if (!set.limits.governing || !calibration.accepted_highest) return;
   const double threshold = set.limits.governing->decision_threshold;
-  const double highest = *calibration.accepted_highest;
+  const double highest = end_of_range(set);
   if (has_number) {
     facts.placing =
         place_by_concentration(row, in_sample(threshold, factor), highest);
@@ -110,6 +130,17 @@ void govern(VerdictFacts& facts, const InjectionResponse& one,
       .emplace_back("check-standard-failed");
 }
 
+void bracket(VerdictFacts& facts, const Injection& injection,
+             const AnalyteFindings& findings) {
+  if (!findings.bracket || !ends_a_block(injection.role)) return;
+  if (injection.number < findings.bracket->opens) {
+    facts.careful.emplace_back("no-opening-standards");
+  }
+  if (injection.number > findings.bracket->closes) {
+    facts.careful.emplace_back("no-closing-standards");
+  }
+}
+
 VerdictFacts facts_before_placing(const InjectionResponse& one,
                                   const MeasuredAnalyte& analyte,
                                   const CalibrationSet& set,
@@ -128,13 +159,15 @@ VerdictFacts facts_before_placing(const InjectionResponse& one,
   facts.decides_at_critical_value =
       governing && governing->decision_threshold != governing->detection;
   govern(facts, one, analyte, findings);
+  bracket(facts, *one.injection, findings);
   return facts;
 }
 
 }  // namespace
 
 bool is_quantified(Role role) {
-  return role != Role::Conditioning && role != Role::Standard;
+  return role != Role::Conditioning && role != Role::Standard &&
+         role != Role::AddedStandard;
 }
 
 ResultRow judge_result(const InjectionResponse& one,
@@ -154,7 +187,7 @@ ResultRow judge_result(const InjectionResponse& one,
   ReportedNumbers numbers{row.result, row.detection_limit,
                           row.quantitation_limit, std::nullopt};
   if (set.calibration && set.calibration->accepted_highest) {
-    numbers.highest = in_sample(*set.calibration->accepted_highest, factor);
+    numbers.highest = in_sample(end_of_range(set), factor);
   }
   row.reported =
       reported_text(row.status, numbers, analyte.settings->reporting);

@@ -40,17 +40,21 @@ StandardPoint standard_point(const InjectionResponse& standard) {
 
 }  // namespace
 
+void offer_standard(OfferedStandards& offered, const InjectionResponse& one) {
+  if (one.response) {
+    offered.points.push_back(standard_point(one));
+  } else {
+    offered.unmeasured.push_back({one.injection->number, one.injection->level,
+                                  *one.nominal,
+                                  reason_word(one.response.reason())});
+  }
+}
+
 OfferedStandards offer_standards(const MeasuredAnalyte& analyte) {
   OfferedStandards offered;
   for (const InjectionResponse& one : analyte.injections) {
     if (one.injection->role != Role::Standard || !one.nominal) continue;
-    if (one.response) {
-      offered.points.push_back(standard_point(one));
-    } else {
-      offered.unmeasured.push_back({one.injection->number, one.injection->level,
-                                    *one.nominal,
-                                    reason_word(one.response.reason())});
-    }
+    offer_standard(offered, one);
   }
   return offered;
 }

@@ -33,11 +33,13 @@ void add_problems(Items& items, const PublishedRun& run) {
 void add_bases(Items& items, const AnalyteJudgement& analyte) {
   const std::string target = analyte_id(analyte.analyte);
   for (const CalibrationSet& set : analyte.sets) {
+    const std::string which =
+        set.alone ? std::string{} : ", set " + html_text(set.set);
     if (!set.calibration) {
-      items.add(target, html_name(analyte.analyte),
+      items.add(target, html_name(analyte.analyte) + which,
                 "no calibration: " + html_text(set.calibration.reason()));
     } else if (!set.limits.governing) {
-      items.add(target, html_name(analyte.analyte),
+      items.add(target, html_name(analyte.analyte) + which,
                 "no limits: " + html_text(set.limits.governing.reason()));
     }
   }

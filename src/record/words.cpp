@@ -94,6 +94,7 @@ CalibrationSettings calibration_settings(const Method& method,
                                          const std::string& analyte,
                                          const CalibrationSet& set) {
   if (set.calibration) return set.calibration->settings;
+  if (set.over_additions) return {};
   for (const AnalyteSettings& settings : method.analytes) {
     if (settings.target.id == analyte) return settings.calibration;
   }
@@ -104,8 +105,9 @@ bool calibration_accepted(const AnalyteJudgement& judgement,
                           const CalibrationSet& set) {
   if (!set.calibration || !set.calibration->accepted_lowest) return false;
   return std::none_of(judgement.checks.begin(), judgement.checks.end(),
-                      [](const CheckRow& check) {
+                      [&](const CheckRow& check) {
                         return check.check == "calibration" &&
+                               (check.set.empty() || check.set == set.set) &&
                                !check.action.empty() && check.passed == false;
                       });
 }

@@ -39,7 +39,7 @@ TEST(StandardAddition, TextbookLineToTheDigitsPrinted) {
   EXPECT_TRUE(agrees_to_digits(line->residual_sd, 0.01092, 4));
   const StandardAddition found = amount_by_addition(*line);
   EXPECT_TRUE(agrees_to_digits(found.amount, 17.3, 3));
-  EXPECT_TRUE(agrees_to_digits(*found.expanded_uncertainty, 1.9, 2));
+  EXPECT_TRUE(agrees_to_digits(found.propagated_half_width, 1.9, 2));
 }
 
 // The same line by an independent library, to all digits that it printed.
@@ -53,10 +53,12 @@ TEST(StandardAddition, AmountUncertaintyAndExactInterval) {
   const StandardAddition found = amount_by_addition(*line);
   EXPECT_TRUE(agrees_to_digits(found.amount, 17.26053640, 10));
   EXPECT_TRUE(agrees_to_digits(found.standard_error, 0.74787064, 8));
-  EXPECT_TRUE(agrees_to_digits(*found.expanded_uncertainty, 1.92246267, 9));
+  EXPECT_TRUE(agrees_to_digits(found.propagated_half_width, 1.92246267, 9));
   ASSERT_TRUE(found.interval);
   EXPECT_TRUE(agrees_to_digits(found.interval->lower, 15.43695871, 10));
   EXPECT_TRUE(agrees_to_digits(found.interval->upper, 19.29383380, 10));
+  // The larger side, 19.29383380 - 17.26053640.
+  EXPECT_TRUE(agrees_to_digits(*found.expanded_uncertainty, 2.0332974, 8));
 }
 
 // Without noise nothing is left but the amount: y = 4 (x + 2.5).

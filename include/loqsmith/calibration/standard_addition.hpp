@@ -14,12 +14,14 @@ struct StandardAddition {
   /// a / b, in the unit of the added amounts; may come out below zero.
   double amount = 0.0;
   double standard_error = 0.0;
-  /// 95 %, t with n - 2 degrees of freedom times the standard error; nothing
-  /// where the exact interval below does not exist.
-  std::optional<double> expanded_uncertainty;
+  /// t_{0.975, n - 2} times the standard error: the textbook's interval.
+  double propagated_half_width = 0.0;
   /// The exact 95 % interval; not applicable where the slope does not differ
   /// from zero ("no-finite-interval").
   Outcome<ConcentrationInterval> interval = NotApplicable{"not computed"};
+  /// Its larger side, so that amount +- this contains it; nothing where it
+  /// does not exist.
+  std::optional<double> expanded_uncertainty;
 };
 
 /// The unweighted straight line through the responses of a sample (added

@@ -10,17 +10,27 @@
 
 namespace loqsmith {
 
+/// First and last injection of the standards on both sides of samples.
+struct Bracket {
+  int opens = 0;
+  int closes = 0;
+};
+
 /// What holds for all results of one analyte in one calibration set.
 struct AnalyteFindings {
   std::vector<std::string> withholding;  ///< reason words
   std::vector<std::string> careful;
   /// Nothing: no check standard could be judged (no calibration).
   std::optional<std::vector<CheckStandardOutcome>> check_standards;
+  /// Where standards are to stand on both sides: results before the first get
+  /// "no-opening-standards", after the last "no-closing-standards".
+  std::optional<Bracket> bracket;
 };
 
 /// Whether injections of a role get a row of results: every role but
-/// conditioning (ignored everywhere) and standard (its back-calculation stands
-/// among the standards). Blanks, spikes and check standards are quantified like
+/// conditioning (ignored everywhere), standard and added-standard (a standard
+/// in a sample's own matrix): their back-calculation stands among the
+/// standards. Blanks, spikes and check standards are quantified like
 /// samples, so that one table shows the whole night.
 bool is_quantified(Role role);
 
@@ -32,6 +42,10 @@ bool is_quantified(Role role);
 /// still follows from the response: above the curve at the highest accepted
 /// standard it is above range ("beyond-curve"), below the curve at the decision
 /// threshold it is not detected.
+///
+/// In a set of standard addition the concentration is the amount that its line
+/// gives, whichever of the sample's injections the row is for, and the range
+/// ends at this amount plus the highest one added: no sample is above it.
 ResultRow judge_result(const InjectionResponse& one,
                        const MeasuredAnalyte& analyte,
                        const CalibrationSet& set,

@@ -7,6 +7,7 @@
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/calibration/calibration.hpp"
 #include "loqsmith/calibration/diagnostics.hpp"
+#include "loqsmith/calibration/standard_addition.hpp"
 #include "loqsmith/chromatogram/role.hpp"
 #include "loqsmith/judgement/settings.hpp"
 #include "loqsmith/limits/governing.hpp"
@@ -52,6 +53,7 @@ struct CheckRow {
   std::string action;          ///< "withhold", "flag"; empty: none
   std::string affects;
   std::string note;
+  std::string set;  ///< calibration set; empty: all, or there is only one
 };
 
 /// A standard that gave no response; it stands in standards.csv with its note.
@@ -65,6 +67,8 @@ struct UnmeasuredStandard {
 /// One calibration set of one analyte with its limits.
 struct CalibrationSet {
   std::string set;
+  bool alone = true;            ///< the analyte has no other set
+  bool over_additions = false;  ///< a line of standard addition
   Outcome<Calibration> calibration = NotApplicable{"no standards"};
   /// All standards; where there is no calibration, as they were offered.
   std::vector<StandardPoint> standards;
@@ -72,6 +76,9 @@ struct CalibrationSet {
   /// Where there is a calibration.
   Outcome<CalibrationDiagnostics> diagnostics = NotApplicable{"no calibration"};
   LimitsOfAnalyte limits;
+  /// With a line of standard addition: all results of the set are this amount;
+  /// the concentrations of `calibration` are those added.
+  std::optional<StandardAddition> addition;
 };
 
 /// All that is said of one analyte.

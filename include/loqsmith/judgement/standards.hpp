@@ -24,4 +24,8 @@ struct OfferedStandards {
 ///   signed response counts.
 OfferedStandards offer_standards(const MeasuredAnalyte& analyte);
 
+/// One injection of known amount (its `nominal` is there), by the same rules:
+/// as a point, or among the unmeasured ones.
+void offer_standard(OfferedStandards& offered, const InjectionResponse& one);
+
 }  // namespace loqsmith
