@@ -45,6 +45,14 @@ bool is_rounding(double residual_sd, const std::vector<double>& responses) {
 
 }  // namespace
 
+double LowRangeLine::intercept_sd() const {
+  return residual_sd * std::sqrt(leverage.at(0.0));
+}
+
+double LowRangeLine::blank_reading_sd(double replicates) const {
+  return residual_sd * std::sqrt(1.0 / replicates + leverage.at(0.0));
+}
+
 Outcome<LowRangeLine> fit_low_range(const Calibration& calibration,
                                     std::optional<double> up_to) {
   const double highest =
@@ -66,7 +74,10 @@ Outcome<LowRangeLine> fit_low_range(const Calibration& calibration,
   const Outcome<LeastSquaresFit> fit =
       fit_polynomial(line.concentrations, line.responses, zero ? 1 : 0, 1);
   if (!fit) return NotApplicable{"no-line: " + fit.reason()};
+  line.through_zero = zero;
+  line.intercept = zero ? 0.0 : fit->coefficients.front();
   line.slope = fit->coefficients.back();
+  line.leverage = leverage_of(line.concentrations, {}, zero);
   line.residual_sd = fit->residual_sd;
   line.degrees_of_freedom = fit->degrees_of_freedom;
   if (!(line.slope > 0.0))

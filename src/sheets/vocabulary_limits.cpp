@@ -65,7 +65,7 @@ std::vector<ElementRule> basic_procedures() {
                 "Multiples of the intercept's standard deviation over the "
                 "slope.",
                 {detection_factor("3.3"), quantitation_factor(), up_to()},
-                kLater),
+                kNow),
       procedure("signal-to-noise",
                 "Concentrations at which the peak height has the ratios.",
                 {defaulted("detection-ratio", number(above(0.0)), "3",
@@ -97,7 +97,7 @@ std::vector<ElementRule> calibration_procedures() {
                  defaulted("variance", choice({{"constant"}, {"linear"}}),
                            "constant", "How the variance depends on x."),
                  up_to()},
-                kLater),
+                kNow),
       procedure(
           "din-32645", "Decision, detection and quantitation by DIN 32645.",
           {defaulted("way", choice({{"calibration"}, {"blank"}}), "calibration",
@@ -106,10 +106,10 @@ std::vector<ElementRule> calibration_procedures() {
            defaulted("k", number(above(0.0)), "3",
                      "Result over half its confidence interval."),
            replicates(), up_to(), blanks()},
-          kLater),
+          kNow),
       procedure("prediction-band",
                 "From the prediction band of the calibration line.",
-                {alpha("0.05"), beta("0.05"), replicates(), up_to()}, kLater),
+                {alpha("0.05"), beta("0.05"), replicates(), up_to()}, kNow),
   };
 }
 
@@ -131,8 +131,7 @@ std::vector<ElementRule> further_procedures() {
                 kNow),
       procedure("error-propagation",
                 "With the errors of blank, slope and intercept propagated.",
-                {detection_factor("3"), quantitation_factor(), blanks()},
-                kLater),
+                {detection_factor("3"), quantitation_factor(), blanks()}, kNow),
       procedure(
           "two-component", "From an error model of two components.",
           {defaulted("relative-deviation", number(between(0.0, 1.0)), "0.10",

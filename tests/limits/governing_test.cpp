@@ -225,12 +225,12 @@ TEST(Procedures, TheWholeVocabularyStandsInTheTable) {
   EXPECT_FALSE(find_limit_procedure("nonsense"));
 }
 
-TEST(Procedures, WhatIsNotComputedYetSaysSo) {
+TEST(Procedures, WhatIsNotKnownSaysSo) {
   const auto found =
-      compute_limits(evidence(), settings_of({procedure("din-32645")}));
+      compute_limits(evidence(), settings_of({procedure("rule-of-thumb")}));
   EXPECT_EQ(found.rows[0].grade(), Grade::NotApplicable);
   EXPECT_EQ(found.rows[0].estimate.reason(),
-            "not-available: din-32645 is not available in this version");
+            "not-available: rule-of-thumb is not available in this version");
   EXPECT_FALSE(found.governing);
 }
 

@@ -94,6 +94,44 @@ TEST(ReadMethod, AnalyteReplacesAttributeByAttribute) {
   EXPECT_TRUE(simazine.reporting.letters.empty());
 }
 
+TEST(ReadMethod, ChecksOfTheLimits) {
+  const Method method = read_method(
+      replaced(replaced(kExampleMethod, "<calibration-residual ",
+                        "<established detection=\"1\" quantitation=\"3\"/>"
+                        "<spike-replicates confidence=\"0.95\" "
+                        "spike-ratio=\"1 5\" blanks=\"solvent\"/>"
+                        "<accuracy-profile acceptance=\"70 130\"/>"
+                        "<calibration-residual "),
+               "<check-standard ",
+               "<established-limit procedure=\"spike-replicates\" "
+               "ratio=\"0.4 1.5\" action=\"withhold\"/>"
+               "<confirmation maximum-rsd=\"15\" prediction=\"60 140\"/>"
+               "<check-standard "),
+      "method.xml");
+  const AnalyteRules& rules = method.analytes[0].rules;
+  ASSERT_TRUE(rules.acceptance.established_limit.has_value());
+  const auto& established = *rules.acceptance.established_limit;
+  EXPECT_EQ(established.procedure, "spike-replicates");
+  EXPECT_EQ(established.action, CheckAction::Withhold);
+  EXPECT_TRUE(same_bits(established.ratio_low, 0.4));
+  EXPECT_TRUE(same_bits(established.ratio_high, 1.5));
+  ASSERT_TRUE(rules.acceptance.confirmation.has_value());
+  const auto& confirmation = *rules.acceptance.confirmation;
+  EXPECT_EQ(confirmation.action, CheckAction::Flag);
+  EXPECT_TRUE(same_bits(confirmation.maximum_rsd, 15.0));
+  EXPECT_TRUE(same_bits(confirmation.recovery.low, 80.0));
+  EXPECT_TRUE(same_bits(confirmation.prediction.high, 140.0));
+
+  const auto& procedures = rules.limits.procedures;
+  ASSERT_EQ(procedures.size(), 6U);
+  EXPECT_TRUE(same_bits(procedures[2].confidence, 0.95));
+  EXPECT_TRUE(same_bits(procedures[2].spike_ratio_low, 1.0));
+  EXPECT_TRUE(same_bits(procedures[2].spike_ratio_high, 5.0));
+  EXPECT_EQ(procedures[2].blanks, BlankKind::Solvent);
+  EXPECT_TRUE(same_bits(procedures[3].beta, 0.80));
+  EXPECT_TRUE(same_bits(procedures[3].acceptance_low, 70.0));
+}
+
 TEST(ReadMethod, SignificantDigitsOfAnAnalyteDisplaceDecimals) {
   const Method method = read_method(
       replaced(replaced(kExampleMethod, R"(significant-digits="3" )",
@@ -138,6 +176,32 @@ TEST(ReadMethod, LimitsOfAnAnalyteReplaceAsAWhole) {
   EXPECT_EQ(default_of(method, "analyte[atrazine]/limits/blank-deviation",
                        "quantitation-factor"),
             "10");
+}
+
+// Each procedure has the defaults of its own document.
+TEST(ReadMethod, ProceduresOnALineHaveTheirOwnDefaults) {
+  const Method method = read_method(
+      replaced(kExampleMethod, R"(<calibration model="linear" weight="1/x"/>)",
+               R"(<limits><intercept-deviation/>
+        <critical-and-detectable variance="linear" up-to="all"/>
+        <din-32645 way="blank" replicates="2"/><prediction-band beta="0.1"/>
+        <error-propagation blanks="method"/></limits>)"),
+      "method.xml");
+  const auto& own = method.analytes[1].limits.procedures;
+  ASSERT_EQ(own.size(), 5U);
+  EXPECT_TRUE(same_bits(own[0].detection_factor, 3.3));
+  EXPECT_TRUE(same_bits(own[1].alpha, 0.05));
+  EXPECT_TRUE(own[1].variance_linear);
+  EXPECT_FALSE(own[1].up_to.has_value());
+  EXPECT_TRUE(same_bits(own[2].alpha, 0.01));
+  EXPECT_TRUE(same_bits(own[2].beta, 0.01));
+  EXPECT_TRUE(same_bits(own[2].k, 3.0));
+  EXPECT_TRUE(own[2].way_blank);
+  EXPECT_EQ(own[2].replicates, 2);
+  EXPECT_TRUE(same_bits(own[3].beta, 0.1));
+  EXPECT_FALSE(own[3].variance_linear);
+  EXPECT_TRUE(same_bits(own[4].detection_factor, 3.0));
+  EXPECT_EQ(own[4].blanks, BlankKind::Method);
 }
 
 TEST(ReadMethod, DefaultsUsedAreNoted) {

@@ -5,6 +5,7 @@
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/calibration/calibration.hpp"
+#include "loqsmith/limits/leverage.hpp"
 
 namespace loqsmith {
 
@@ -12,11 +13,20 @@ namespace loqsmith {
 struct LowRangeLine {
   std::vector<double> concentrations;  ///< of the points, ascending
   std::vector<double> responses;       ///< of the points, same order
+  double intercept = 0.0;              ///< zero through zero
   double slope = 0.0;                  ///< above zero
   double residual_sd = 0.0;            ///< s_y/x, above zero
   int degrees_of_freedom = 0;
   std::size_t levels = 0;  ///< above zero, at least 4
   double highest = 0.0;    ///< highest level taken
+  bool through_zero = false;
+  Leverage leverage;
+
+  /// s_a = s_y/x sqrt(h(0)); zero through zero.
+  double intercept_sd() const;
+  /// Standard deviation of the mean of m responses to no analyte less the
+  /// intercept, s_y/x sqrt(1/m + h(0)).
+  double blank_reading_sd(double replicates) const;
 };
 
 /// Refits the used standards with concentration up to `up_to` times the lowest
