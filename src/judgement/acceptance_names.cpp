@@ -28,8 +28,10 @@ const std::vector<AcceptanceCheck>& acceptance_checks() {
       {"suitability", never},
       {"carry-over", never},
       {"second-trace", never},
-      {"established-limit", never},
-      {"confirmation", never},
+      {"established-limit",
+       [](const Settings& s) { return s.established_limit.has_value(); }},
+      {"confirmation",
+       [](const Settings& s) { return s.confirmation.has_value(); }},
       {"closeness", never},
   };
   return checks;

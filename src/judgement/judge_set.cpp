@@ -6,6 +6,8 @@
 #include "loqsmith/calibration/fit_calibration.hpp"
 #include "loqsmith/judgement/calibration_checks.hpp"
 #include "loqsmith/judgement/check_standards.hpp"
+#include "loqsmith/judgement/confirmation_check.hpp"
+#include "loqsmith/judgement/established_limit_check.hpp"
 #include "loqsmith/judgement/limit_evidence.hpp"
 #include "loqsmith/judgement/standards.hpp"
 
@@ -57,6 +59,29 @@ void check_standards(SetVerdict& verdict, const MeasuredAnalyte& members,
   }
 }
 
+void add_limit_check(SetVerdict& verdict, LimitCheck check, CheckAction action,
+                     const char* word) {
+  for (CheckRow& row : check.rows) verdict.checks.push_back(std::move(row));
+  if (!check.failed) return;
+  AnalyteFindings& findings = verdict.findings;
+  (action == CheckAction::Withhold ? findings.withholding : findings.careful)
+      .emplace_back(word);
+}
+
+void check_limits(SetVerdict& verdict, const AnalyteRules& settings,
+                  const CalibrationSet& set) {
+  const AcceptanceSettings& acceptance = settings.acceptance;
+  if (acceptance.established_limit) {
+    add_limit_check(verdict, check_established_limit(settings, set),
+                    acceptance.established_limit->action,
+                    "established-limit-failed");
+  }
+  if (acceptance.confirmation) {
+    add_limit_check(verdict, check_confirmation(settings, set),
+                    acceptance.confirmation->action, "confirmation-failed");
+  }
+}
+
 }  // namespace
 
 CalibrationSet calibrate_set(const MeasuredAnalyte& members,
@@ -88,6 +113,8 @@ CalibrationSet calibrate_set(const MeasuredAnalyte& members,
 void limit_set(CalibrationSet& set, const LimitEvidence& evidence,
                const MeasuredAnalyte& members) {
   set.limits = compute_limits(evidence, members.settings->limits);
+  set.blanks = evidence.blanks;
+  set.low_spikes = evidence.spikes;
   note_mean_internal_standard(members, set.limits);
 }
 
@@ -107,6 +134,7 @@ SetVerdict check_set(const MeasuredAnalyte& members,
   find_about_calibration(verdict.findings, set, members.settings->acceptance,
                          calibration.failed);
   check_standards(verdict, members, set);
+  check_limits(verdict, *members.settings, set);
   return verdict;
 }
 

@@ -9,7 +9,7 @@ namespace {
 
 // Most serious first. First why there is no number, then why the number may
 // not be used, then why to be careful with it.
-constexpr std::array<std::string_view, 56> kDoubtful{
+constexpr std::array<std::string_view, 58> kDoubtful{
     "peak-not-found",
     "file-refused",
     "trace-missing",
@@ -31,6 +31,8 @@ constexpr std::array<std::string_view, 56> kDoubtful{
     "no-valid-limit",
     "calibration-failed",
     "check-standard-failed",
+    "established-limit-failed",
+    "confirmation-failed",
     "response-without-peak",
     "saturated",
     "internal-standard-saturated",

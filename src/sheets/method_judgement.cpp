@@ -1,3 +1,5 @@
+#include <tuple>
+
 #include "loqsmith/sheets/method_section.hpp"
 #include "loqsmith/sheets/method_settings.hpp"
 
@@ -39,6 +41,23 @@ CheckStandardAcceptance check_standard_check(const Section& section) {
   return check;
 }
 
+EstablishedLimitAcceptance established_limit_check(const Section& section) {
+  EstablishedLimitAcceptance check;
+  check.action = check_action(section);
+  check.procedure = section.value("procedure");
+  std::tie(check.ratio_low, check.ratio_high) = pair_of(section.value("ratio"));
+  return check;
+}
+
+ConfirmationAcceptance confirmation_check(const Section& section) {
+  ConfirmationAcceptance check;
+  check.action = check_action(section);
+  check.maximum_rsd = section.number("maximum-rsd");
+  check.recovery = percent_range(section, "recovery");
+  check.prediction = percent_range(section, "prediction");
+  return check;
+}
+
 const MethodElement* child_of(const MethodElement* element,
                               std::string_view name) {
   return element == nullptr ? nullptr : element->child(name);
@@ -72,6 +91,12 @@ AcceptanceSettings acceptance_settings(const MethodElement* own,
   }
   if (const auto found = section("check-standard")) {
     settings.check_standard = check_standard_check(*found);
+  }
+  if (const auto found = section("established-limit")) {
+    settings.established_limit = established_limit_check(*found);
+  }
+  if (const auto found = section("confirmation")) {
+    settings.confirmation = confirmation_check(*found);
   }
   return settings;
 }

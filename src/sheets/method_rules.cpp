@@ -129,6 +129,7 @@ void check_method_rules(MethodDocument& document) {
   check_identities(document);
   check_groups(document);
   check_units(document);
+  check_established_limit_rule(document);
   const MethodElement& method = document.root;
   const MethodElement* limits = method.child("limits");
   const MethodElement* integration = method.child("integration");

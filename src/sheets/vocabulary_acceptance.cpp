@@ -120,15 +120,23 @@ std::vector<ElementRule> injection_checks() {
   };
 }
 
+// What was established cannot be held against itself.
+std::vector<Choice> estimating_procedures() {
+  std::vector<Choice> choices = procedure_choices();
+  std::erase_if(choices,
+                [](const Choice& one) { return one.word == "established"; });
+  return choices;
+}
+
 std::vector<ElementRule> limit_checks() {
   return {
       check("acceptance/established-limit",
             "Tonight's limit against the established one.",
-            {required("procedure", choice(procedure_choices()),
+            {required("procedure", choice(estimating_procedures()),
                       "Procedure of tonight's limit."),
              defaulted("ratio", pair(above(0.0)), "0.5 2.0",
                        "Tonight's over established.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/confirmation", "Spikes at the quantitation limit.",
             {defaulted("maximum-rsd", number(above(0.0)), "20",
                        "Relative standard deviation, percent."),
@@ -136,7 +144,7 @@ std::vector<ElementRule> limit_checks() {
                        "Percent, low and high."),
              defaulted("prediction", pair(at_least(0.0)), "50 150",
                        "Prediction interval, percent.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/closeness", "Repeats and dilutions of one sample.",
             {defaulted("replicates", number(above(0.0)), "20",
                        "Percent difference.")},

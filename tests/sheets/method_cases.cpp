@@ -177,6 +177,20 @@ std::vector<MethodCase> broken_rules() {
               {{"governing", "add <established> to the limits"}}, limits),
       changed("no procedure", procedures, "",
               {{"<limits", "at least one limit procedure"}}, limits),
+      changed("established limit without established", "<check-standard ",
+              "<established-limit procedure=\"blank-deviation\"/>"
+              "<check-standard ",
+              {{"<established-limit", "add <established> to the limits"}},
+              limits),
+      {"established limit against a procedure that is not computed",
+       replaced(replaced(kExampleMethod, "<calibration-residual ",
+                         "<established detection=\"1\" quantitation=\"3\"/>"
+                         "<calibration-residual "),
+                "<check-standard ",
+                "<established-limit procedure=\"spike-replicates\"/>"
+                "<check-standard "),
+       {{"<established-limit", "add <spike-replicates> to the limits"}},
+       limits},
       changed("critical value", "<limits ",
               "<limits decision=\"critical-value\" ",
               {{"decision", "has no critical value"}}, limits),

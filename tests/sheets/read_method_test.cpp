@@ -108,7 +108,7 @@ TEST(ReadMethod, ChecksOfTheLimits) {
                "<confirmation maximum-rsd=\"15\" prediction=\"60 140\"/>"
                "<check-standard "),
       "method.xml");
-  const AnalyteRules& rules = method.analytes[0].rules;
+  const AnalyteSettings& rules = method.analytes[0];
   ASSERT_TRUE(rules.acceptance.established_limit.has_value());
   const auto& established = *rules.acceptance.established_limit;
   EXPECT_EQ(established.procedure, "spike-replicates");

@@ -76,6 +76,9 @@ struct CalibrationSet {
   /// Where there is a calibration.
   Outcome<CalibrationDiagnostics> diagnostics = NotApplicable{"no calibration"};
   LimitsOfAnalyte limits;
+  /// What the limits rest on, for the checks of them.
+  std::vector<BlankResponse> blanks;
+  std::vector<SpikeResult> low_spikes;
   /// With a line of standard addition: all results of the set are this amount;
   /// the concentrations of `calibration` are those added.
   std::optional<StandardAddition> addition;

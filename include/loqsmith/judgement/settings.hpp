@@ -40,10 +40,28 @@ struct CheckStandardAcceptance {
   Governs governs = Governs::Both;
 };
 
+/// Tonight's limits by one procedure against the established ones.
+struct EstablishedLimitAcceptance {
+  CheckAction action = CheckAction::Flag;
+  std::string procedure;   ///< one of `<limits>`, not "established"
+  double ratio_low = 0.5;  ///< tonight's over established
+  double ratio_high = 2.0;
+};
+
+/// Low spikes at the quantitation limit. All in percent.
+struct ConfirmationAcceptance {
+  CheckAction action = CheckAction::Flag;
+  double maximum_rsd = 20.0;
+  PercentRange recovery{80.0, 120.0};    ///< of their mean
+  PercentRange prediction{50.0, 150.0};  ///< of one future result
+};
+
 /// `<acceptance>`: an absent child is not checked, and checks.csv says so.
 struct AcceptanceSettings {
   std::optional<CalibrationAcceptance> calibration;
   std::optional<CheckStandardAcceptance> check_standard;
+  std::optional<EstablishedLimitAcceptance> established_limit;
+  std::optional<ConfirmationAcceptance> confirmation;
 };
 
 /// What may be said of a result.

@@ -14,4 +14,8 @@ void check_method_rules(MethodDocument& document);
 void check_identities(MethodDocument& document);
 void check_groups(MethodDocument& document);
 
+/// The check of established limits: `<established>` and the procedure that it
+/// names stand in the limits of every analyte that it concerns.
+void check_established_limit_rule(MethodDocument& document);
+
 }  // namespace loqsmith
