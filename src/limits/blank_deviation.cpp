@@ -1,5 +1,6 @@
 #include "loqsmith/limits/blank_deviation.hpp"
 
+#include "loqsmith/limits/blank_mean_bounds.hpp"
 #include "loqsmith/limits/blank_offset.hpp"
 #include "loqsmith/limits/blanks.hpp"
 #include "loqsmith/limits/spread_limit.hpp"
@@ -30,6 +31,7 @@ void set_offset_limits(LimitEstimate& estimate, const BlankSample& sample,
   estimate.quantitation =
       (above + procedure.quantitation_factor * sample.sd) / calibration.slope;
   estimate.degrees_of_freedom = sample.degrees_of_freedom();
+  set_blank_mean_bounds(estimate, sample, calibration, procedure);
 }
 
 bool is_positive(const std::optional<double>& limit) {

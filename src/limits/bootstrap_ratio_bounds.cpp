@@ -18,11 +18,12 @@ double ranked(const std::vector<double>& sorted, double p) {
   const double whole = std::floor(rank);
   const std::size_t below = static_cast<std::size_t>(whole);
   const std::size_t above = std::min(below + 1, sorted.size() - 1);
+  if (std::isinf(sorted[above])) return sorted[above];
   return sorted[below] + (rank - whole) * (sorted[above] - sorted[below]);
 }
 
 bool is_usable(const std::optional<double>& ratio) {
-  return ratio && std::isfinite(*ratio) && *ratio > 0.0;
+  return ratio && *ratio > 0.0;
 }
 
 // Bounds of one limit; none, and a note, where too many worlds lack it.
@@ -41,9 +42,15 @@ void set_bounds(LimitEstimate& estimate, const std::string& which,
   }
   const auto bounds = bootstrap_ratio_bounds(*limit, std::move(ratios));
   if (!bounds) return;
-  if (!std::isfinite(bounds->upper) || !(bounds->lower > 0.0)) return;
-  lower = bounds->lower;
-  upper = bounds->upper;
+  if (std::isfinite(bounds->upper)) upper = bounds->upper;
+  if (bounds->lower > 0.0) {
+    lower = bounds->lower;
+    return;
+  }
+  estimate.findings.push_back(
+      {Grade::Note, "bounds-absent",
+       "the true " + which +
+           " limit may lie at or below zero: it has no lower bound"});
 }
 
 }  // namespace

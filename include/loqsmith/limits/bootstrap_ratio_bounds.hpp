@@ -12,8 +12,9 @@
 
 namespace loqsmith {
 
-/// In one drawn world, estimated limit over true limit; nothing where one of
-/// the two does not exist in it.
+/// In one drawn world, estimated limit over true limit, above zero: infinite
+/// where the true one lies at or below zero, nothing where one of the two does
+/// not exist.
 struct DrawnRatios {
   std::optional<double> detection;
   std::optional<double> quantitation;
@@ -52,7 +53,7 @@ struct RatioBounds {
 /// again it covers 0.86, and percentiles of these 0.70.
 ///
 /// @param limit   estimate at hand, above zero
-/// @param ratios  above zero
+/// @param ratios  above zero, infinite ones among them
 /// @return not applicable: fewer than 199 ratios.
 ///
 /// Source: B. Efron and R. J. Tibshirani, An Introduction to the Bootstrap
@@ -67,7 +68,8 @@ Outcome<RatioBounds> bootstrap_ratio_bounds(double limit,
 /// give the same bounds on every machine.
 ///
 /// A limit that does not exist in more than one of a hundred draws gets no
-/// bounds, and a note bounds-absent says so.
+/// bounds, and one that may lie at or below zero no lower one; a note
+/// bounds-absent says so.
 ///
 /// @param stream    name of procedure and random stream: "blank-deviation"
 /// @param coverage  empty where a simulation shows that the bounds cover 93 to
