@@ -5,6 +5,7 @@
 #include <span>
 #include <string>
 
+#include "loqsmith/limits/leverage.hpp"
 #include "loqsmith/limits/words.hpp"
 #include "loqsmith/numerics/least_squares.hpp"
 #include "loqsmith/numerics/mean.hpp"
@@ -49,6 +50,13 @@ NotApplicable no_growth(const LinearDeviation& line) {
       figure(line.constant)};
 }
 
+std::size_t fewest_replicates(const Levels& levels) {
+  return static_cast<std::size_t>(
+             *std::min_element(levels.degrees_of_freedom.begin(),
+                               levels.degrees_of_freedom.end())) +
+         1;
+}
+
 Outcome<LinearDeviation> fit_once(const Levels& levels,
                                   const std::vector<double>& deviations) {
   std::vector<double> weights;
@@ -58,7 +66,11 @@ Outcome<LinearDeviation> fit_once(const Levels& levels,
   const auto fit =
       fit_polynomial(levels.concentrations, levels.deviations, 0, 1, weights);
   if (!fit) return NotApplicable{"no-deviation-line: " + fit.reason()};
-  return LinearDeviation{fit->coefficients[0], fit->coefficients[1]};
+  const double constant = fit->coefficients[0];
+  const Leverage leverage = leverage_of(levels.concentrations, weights, false);
+  return LinearDeviation{constant, fit->coefficients[1],
+                         constant * constant / leverage.at(0.0),
+                         fewest_replicates(levels)};
 }
 
 bool all_above_zero(const std::vector<double>& values) {

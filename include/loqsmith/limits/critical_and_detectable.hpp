@@ -28,9 +28,11 @@ namespace loqsmith {
 ///     x_D = delta sqrt((c + d x_D)^2 / K + v h(0)) / b
 ///     x_Q = 10 sqrt((c + d x_Q)^2 / K + v h(x_Q)) / b
 ///
-/// x_D and x_Q in closed form, the limits of the source's iteration. alpha and
-/// beta are then approximate, since c is an estimate of few degrees of freedom
-/// that t does not know of.
+/// x_D and x_Q in closed form, the limits of the source's iteration. t does not
+/// know that c is an estimate of few degrees of freedom. Simulated for six
+/// levels with alpha and beta 0.05, false positives are 0.16, 0.10, 0.08, 0.065
+/// and 0.06 with 2, 3, 4, 6 and 10 replicates a level; false negatives at the
+/// truly detectable value stay below beta (0.015 to 0.04).
 ///
 /// Through zero as the calibration: h(x) = x^2 / S, nu = N - 1.
 ///
@@ -42,7 +44,10 @@ namespace loqsmith {
 ///
 /// Findings: those of judge_low_range with constant variance, of judge_place
 /// with linear; no-quantitation-limit, no-upper-bound; with linear variance
-/// scatter-exceeds-model (chi-square, 1 %) and the note no-confidence-bounds.
+/// few-replicates-at-zero (caution: fewer than 4 replicates of a level, or a
+/// rate of blanks at or above the critical value that exceeds 1.2 alpha, by
+/// Welch and Satterthwaite for the variance behind x_C), scatter-exceeds-model
+/// (chi-square, 1 %) and the note no-confidence-bounds.
 ///
 /// Bounds (constant variance): chi-square bounds of s put in the place of s,
 /// without the slope's uncertainty.

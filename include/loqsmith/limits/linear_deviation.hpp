@@ -1,5 +1,6 @@
 #pragma once
 
+#include <cstddef>
 #include <vector>
 
 #include "loqsmith/base/outcome.hpp"
@@ -12,6 +13,12 @@ namespace loqsmith {
 struct LinearDeviation {
   double constant = 0.0;  ///< response, above zero
   double growth = 0.0;    ///< response over concentration, at least 0
+  /// What the constant is worth as an estimated standard deviation: with the
+  /// variance of a standard deviation, sigma^2 / (2 (J - 1)), its own variance
+  /// is constant^2 / (2 df).
+  double degrees_of_freedom = 0.0;
+  /// Responses of the level that has the fewest, at least 2.
+  std::size_t fewest_replicates = 0;
 
   double at(double concentration) const {
     return constant + growth * concentration;
