@@ -56,8 +56,8 @@ Outcome<Profile> profile_of(const LimitEvidence& evidence, double beta) {
     }
     const auto interval = beta_expectation_interval(runs, beta);
     if (!interval)
-      return NotApplicable{"no-interval at level " + figure(level.nominal) +
-                           ": " + interval.reason()};
+      return NotApplicable{interval.reason() + ", at level " +
+                           figure(level.nominal)};
     const double percent = 100.0 / level.nominal;
     profile.levels.push_back(
         {{level.nominal, percent * interval->lower, percent * interval->upper},

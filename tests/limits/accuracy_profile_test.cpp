@@ -219,7 +219,7 @@ TEST(AccuracyProfile, NotApplicable) {
   EXPECT_TRUE(contains(limit(night(levels)).reason(), "few-spikes"));
   levels = {{1.0, {{1, 1}, {1, 1}, {1, 1}}}};
   EXPECT_EQ(limit(night(levels)).reason(),
-            "no-interval at level 1: all-equal: the results have no spread");
+            "all-equal: the results have no spread, at level 1");
   EXPECT_TRUE(contains(
       limit(night({{1.0, {{0.5, 2.0}, {0.7, 1.0}, {1.5, 0.1}}}})).reason(),
       "highest-level-fails"));
