@@ -1,6 +1,7 @@
 #include "loqsmith/limits/spike_replicates.hpp"
 
 #include <algorithm>
+#include <cmath>
 #include <optional>
 #include <set>
 #include <string>
@@ -18,6 +19,7 @@ namespace loqsmith {
 namespace {
 
 constexpr std::size_t kWantedSpikes = 7;
+constexpr double kNearZero = 3.0;  // standard errors of the blanks' mean
 
 Outcome<MethodBlankLimit> limit_of_blanks(const BlankSample& sample,
                                           const Calibration& calibration,
@@ -62,11 +64,16 @@ void let_blanks_decide(LimitEstimate& estimate, const MethodBlankLimit& blanks,
   estimate.detection_lower.reset();
   estimate.detection_upper.reset();
   estimate.degrees_of_freedom = df;
-  set_detection_bounds(estimate, "spike-replicates", [&](RandomStream& random) {
-    const NormalPopulation truth =
-        drawn_population(random, blanks.mean_found, blanks.sd, blanks.n);
-    return std::optional<double>(std::max(truth.mean, 0.0) + t * truth.sd);
-  });
+  const double chance = blanks.sd / std::sqrt(static_cast<double>(blanks.n));
+  const bool near_zero = blanks.mean_found < kNearZero * chance;
+  set_detection_bounds(
+      estimate, "spike-replicates",
+      [&](RandomStream& random) {
+        const NormalPopulation truth =
+            drawn_population(random, blanks.mean_found, blanks.sd, blanks.n);
+        return std::optional<double>(std::max(truth.mean, 0.0) + t * truth.sd);
+      },
+      near_zero ? "0.93 where the true mean of 7 blanks is zero" : "");
   estimate.findings.push_back(
       {Grade::Note, "blanks-decide",
        "the blanks' limit is larger than that of the spikes (" +

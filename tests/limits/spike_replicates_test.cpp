@@ -73,6 +73,12 @@ TEST(SpikeReplicates, TheBlanksDecide) {
       *found->quantitation_upper / *found->quantitation, 2.202066, 7));
   EXPECT_EQ(found->degrees_of_freedom, 7.0);
   EXPECT_TRUE(finding(*found, "blanks-decide"));
+  EXPECT_FALSE(finding(*found, "bounds-approximate"));
+  // About a mean that may be zero the bounds are not quite 95 %.
+  const auto near_zero =
+      limit(night({1.99, 2.01, 2.0, 2.02, 1.98, 2.0, 2.01},
+                  {0.12, -0.15, 0.01, -0.09, 0.15, 0.02, -0.11, 0.08}));
+  EXPECT_TRUE(finding(*near_zero, "bounds-approximate"));
 }
 
 TEST(SpikeReplicates, OneNightIsAlwaysACaution) {
