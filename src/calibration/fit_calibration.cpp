@@ -100,14 +100,12 @@ void take_coefficients(Calibration& calibration, const LeastSquaresFit& fit,
 // them out wants to see by how much they miss.
 void back_calculate(Calibration& calibration) {
   for (StandardPoint& point : calibration.points) {
-    const Outcome<InversePrediction> found =
-        concentration_from_response(calibration, point.response);
+    const Outcome<double> found = point_on_curve(calibration, point.response);
     if (!found) continue;
-    point.back_calculated = found->concentration;
+    point.back_calculated = *found;
     if (point.concentration > 0.0)
-      point.deviation_percent = 100.0 *
-                                (found->concentration - point.concentration) /
-                                point.concentration;
+      point.deviation_percent =
+          100.0 * (*found - point.concentration) / point.concentration;
   }
 }
 

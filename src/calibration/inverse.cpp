@@ -1,20 +1,14 @@
 #include "loqsmith/calibration/inverse.hpp"
 
+#include <algorithm>
+#include <array>
 #include <cmath>
 
-#include "loqsmith/calibration/weight.hpp"
+#include "loqsmith/calibration/prediction_spread.hpp"
 #include "loqsmith/numerics/distributions.hpp"
 
 namespace loqsmith {
 namespace {
-
-double two_sided_t(const Calibration& calibration) {
-  return student_t_quantile(0.975, calibration.degrees_of_freedom);
-}
-
-double derivative_at(const Calibration& calibration, double x) {
-  return calibration.slope + 2.0 * calibration.curvature * x;
-}
 
 // v^T Cov v of the row v.
 double variance_along(const Calibration& calibration,
@@ -28,35 +22,41 @@ double variance_along(const Calibration& calibration,
 
 // Whether t times the slope's own standard error leaves it above zero.
 bool slope_is_significant(const Calibration& calibration, double x, double t) {
-  const double derivative = derivative_at(calibration, x);
+  const double derivative = calibration.slope + 2.0 * calibration.curvature * x;
   const double variance = variance_along(calibration, {0.0, 1.0, 2.0 * x});
-  return t * t * variance < derivative * derivative;
+  return derivative > 0.0 && t * t * variance < derivative * derivative;
 }
 
-bool stays_below_vertex(const Calibration& calibration, double response) {
-  if (!(calibration.curvature < 0.0)) return true;
-  const double vertex =
-      calibration.intercept -
-      calibration.slope * calibration.slope / (4.0 * calibration.curvature);
-  return response < vertex;
-}
-
-std::optional<double> half_width(const Calibration& calibration,
-                                 double response, double x, int replicates) {
-  if (calibration.degrees_of_freedom < 1 || replicates < 1) return std::nullopt;
-  const double t = two_sided_t(calibration);
-  const double derivative = derivative_at(calibration, x);
-  if (!(derivative > 0.0) || !slope_is_significant(calibration, x, t))
-    return std::nullopt;
-  const double sd = response_sd_at(calibration, x);
-  const double response_half =
-      t * std::sqrt(sd * sd / replicates +
-                    variance_along(calibration, {1.0, x, x * x}));
-  if (!stays_below_vertex(calibration, response + response_half))
-    return std::nullopt;
-  const double half = response_half / derivative;
+std::optional<double> propagated_half_width(const Calibration& calibration,
+                                            double x, int replicates) {
+  const PredictionSpread spread(calibration, replicates);
+  const double t = student_t_quantile(0.975, spread.degrees_at(x));
+  if (!slope_is_significant(calibration, x, t)) return std::nullopt;
+  const double half = t * std::sqrt(spread.variance_at(x)) /
+                      (calibration.slope + 2.0 * calibration.curvature * x);
   if (!std::isfinite(half)) return std::nullopt;
   return half;
+}
+
+bool is_unweighted_line(const CalibrationSettings& settings) {
+  return settings.model == CalibrationSettings::Model::Linear &&
+         settings.weight == CalibrationSettings::Weight::None;
+}
+
+void set_interval(InversePrediction& found, const Calibration& calibration,
+                  double response, int replicates) {
+  if (calibration.degrees_of_freedom < 1 || replicates < 1) return;
+  found.propagated_half_width =
+      propagated_half_width(calibration, found.concentration, replicates);
+  if (!found.propagated_half_width) return;
+  const auto interval =
+      is_unweighted_line(calibration.settings)
+          ? fieller_interval(calibration, response, replicates)
+          : profile_interval(calibration, response, replicates);
+  if (!interval) return;
+  found.interval = *interval;
+  found.expanded_uncertainty = std::max(interval->upper - found.concentration,
+                                        found.concentration - interval->lower);
 }
 
 }  // namespace
@@ -68,10 +68,15 @@ double response_from_concentration(const Calibration& calibration,
              (calibration.slope + concentration * calibration.curvature);
 }
 
+double curve_variance(const Calibration& calibration, double concentration) {
+  return variance_along(calibration,
+                        {1.0, concentration, concentration * concentration});
+}
+
 // The root is written so that nothing cancels and that it becomes the straight
 // line's as the curvature vanishes: 2 d / (b + sqrt(b^2 + 4 c d)), d = y - a.
-Outcome<InversePrediction> concentration_from_response(
-    const Calibration& calibration, double response, int replicates) {
+Outcome<double> point_on_curve(const Calibration& calibration,
+                               double response) {
   const double above = response - calibration.intercept;
   const double discriminant = calibration.slope * calibration.slope +
                               4.0 * calibration.curvature * above;
@@ -79,50 +84,20 @@ Outcome<InversePrediction> concentration_from_response(
     return NotApplicable{
         "beyond-curve: the response lies beyond the turning point of the "
         "quadratic curve"};
-  InversePrediction found;
-  found.concentration =
-      2.0 * above / (calibration.slope + std::sqrt(discriminant));
-  if (!std::isfinite(found.concentration))
+  const double x = 2.0 * above / (calibration.slope + std::sqrt(discriminant));
+  if (!std::isfinite(x))
     return NotApplicable{"beyond-curve: the concentration has no finite value"};
-  found.expanded_uncertainty =
-      half_width(calibration, response, found.concentration, replicates);
-  return found;
+  return x;
 }
 
-// About the centre of the line, mean_x = -Cov(a,b)/Var(b):
-//   mean_x + (d +- t s sqrt((1 - g)(1/m + 1/n) + d^2/S)) / (1 - g),
-// d the distance of x0 from mean_x, s and S^-1/2 in units of the slope.
-Outcome<ConcentrationInterval> fieller_interval(const Calibration& calibration,
-                                                double response,
-                                                int replicates) {
-  const CalibrationSettings& settings = calibration.settings;
-  if (settings.model != CalibrationSettings::Model::Linear ||
-      settings.weight != CalibrationSettings::Weight::None ||
-      settings.intercept != CalibrationSettings::Intercept::Fitted)
-    return NotApplicable{
-        "not-available: the exact interval is that of an unweighted straight "
-        "line"};
-  const double b = calibration.slope;
-  const double slope_variance = calibration.covariance[1][1];
-  const double t = two_sided_t(calibration);
-  const double g = t * t * slope_variance / (b * b);
-  if (!(g < 1.0))
-    return NotApplicable{
-        "no-finite-interval: the slope does not differ from zero"};
-
-  const double mean_x = slope_variance > 0.0
-                            ? -calibration.covariance[0][1] / slope_variance
-                            : 0.0;
-  const double distance = (response - calibration.intercept) / b - mean_x;
-  const double s = calibration.residual_sd;
-  const double variance_of_mean =
-      s * s / replicates + variance_along(calibration, {1.0, mean_x, 0.0});
-  const double half = t / b *
-                      std::sqrt((1.0 - g) * variance_of_mean +
-                                distance * distance * slope_variance) /
-                      (1.0 - g);
-  const double centre = mean_x + distance / (1.0 - g);
-  return ConcentrationInterval{centre - half, centre + half};
+Outcome<InversePrediction> concentration_from_response(
+    const Calibration& calibration, double response, int replicates) {
+  const Outcome<double> point = point_on_curve(calibration, response);
+  if (!point) return NotApplicable{point.reason()};
+  InversePrediction found;
+  found.concentration = *point;
+  set_interval(found, calibration, response, replicates);
+  return found;
 }
 
 }  // namespace loqsmith

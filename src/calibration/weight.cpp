@@ -13,6 +13,11 @@ std::optional<double> inverse_power(double concentration, bool squared) {
 
 }  // namespace
 
+bool is_weighted(const CalibrationSettings& settings) {
+  return settings.model == CalibrationSettings::Model::ResponseFactor ||
+         settings.weight != CalibrationSettings::Weight::None;
+}
+
 std::optional<double> calibration_weight(const CalibrationSettings& settings,
                                          double concentration) {
   if (settings.model == CalibrationSettings::Model::ResponseFactor)
@@ -33,7 +38,9 @@ std::optional<double> calibration_weight(const CalibrationSettings& settings,
 double response_sd_at(const Calibration& calibration, double concentration) {
   const double at = std::max(concentration, calibration.lowest);
   const double weight = calibration_weight(calibration.settings, at).value();
-  return calibration.residual_sd / std::sqrt(weight);
+  const double fitted = calibration.residual_sd / std::sqrt(weight);
+  if (!calibration.blanks || !is_weighted(calibration.settings)) return fitted;
+  return std::max(fitted, calibration.blanks->sd);
 }
 
 }  // namespace loqsmith

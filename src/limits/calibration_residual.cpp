@@ -11,11 +11,6 @@ namespace {
 
 using Model = CalibrationSettings::Model;
 
-bool is_weighted(const CalibrationSettings& settings) {
-  return settings.model == Model::ResponseFactor ||
-         settings.weight != CalibrationSettings::Weight::None;
-}
-
 void add_factors(LimitEstimate& estimate, const ProcedureSettings& procedure) {
   estimate.terms.push_back(
       {"detection factor", procedure.detection_factor, ""});

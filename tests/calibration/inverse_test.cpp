@@ -1,5 +1,6 @@
 #include "loqsmith/calibration/inverse.hpp"
 
+#include <algorithm>
 #include <cmath>
 
 #include "calibration/examples.hpp"
@@ -37,13 +38,19 @@ TEST(Inverse, FluorescenceLine) {
                                  : row.published > 1 ? 3
                                                      : 2));
     EXPECT_TRUE(
-        agrees_to_digits(*found->expanded_uncertainty, row.published_half, 2));
+        agrees_to_digits(*found->propagated_half_width, row.published_half, 2));
     EXPECT_TRUE(agrees_to_digits(found->concentration, row.concentration, 8));
-    EXPECT_TRUE(agrees_to_digits(*found->expanded_uncertainty, row.half, 8));
+    EXPECT_TRUE(agrees_to_digits(*found->propagated_half_width, row.half, 8));
     const auto exact = fieller_interval(*line, row.response, row.replicates);
     ASSERT_TRUE(exact);
     EXPECT_TRUE(agrees_to_digits(exact->lower, row.lower, 7));
     EXPECT_TRUE(agrees_to_digits(exact->upper, row.upper, 9));
+    ASSERT_TRUE(found->interval);
+    EXPECT_TRUE(same_bits(found->interval->lower, exact->lower));
+    EXPECT_TRUE(same_bits(found->interval->upper, exact->upper));
+    EXPECT_TRUE(same_bits(*found->expanded_uncertainty,
+                          std::max(exact->upper - found->concentration,
+                                   found->concentration - exact->lower)));
   }
 }
 
@@ -62,8 +69,8 @@ TEST(Inverse, AbsorbanceLine) {
   EXPECT_TRUE(agrees_to_digits(low->concentration, 1.195352501, 10));
   EXPECT_TRUE(agrees_to_digits(high->concentration, 8.09, 3));
   EXPECT_TRUE(agrees_to_digits(high->concentration, 8.087829854, 10));
-  EXPECT_TRUE(agrees_to_digits(*low->expanded_uncertainty, 0.6543823, 7));
-  EXPECT_TRUE(agrees_to_digits(*high->expanded_uncertainty, 0.6373465, 7));
+  EXPECT_TRUE(agrees_to_digits(*low->propagated_half_width, 0.6543823, 7));
+  EXPECT_TRUE(agrees_to_digits(*high->propagated_half_width, 0.6373465, 7));
 }
 
 TEST(Inverse, WeightedLine) {
@@ -74,9 +81,9 @@ TEST(Inverse, WeightedLine) {
   const auto high = concentration_from_response(*line, 300.0);
   ASSERT_TRUE(low && high);
   EXPECT_TRUE(agrees_to_digits(low->concentration, 1.4297603189, 11));
-  EXPECT_TRUE(agrees_to_digits(*low->expanded_uncertainty, 0.11995052, 8));
+  EXPECT_TRUE(agrees_to_digits(*low->propagated_half_width, 0.11995052, 8));
   EXPECT_TRUE(agrees_to_digits(high->concentration, 29.9168818106, 12));
-  EXPECT_TRUE(agrees_to_digits(*high->expanded_uncertainty, 2.35618398, 9));
+  EXPECT_TRUE(agrees_to_digits(*high->propagated_half_width, 2.35618398, 9));
 }
 
 TEST(Inverse, BelowTheLowestLevelTheWeightStaysThatOfTheLowestLevel) {
@@ -100,7 +107,7 @@ TEST(Inverse, Quadratic) {
   const auto found = concentration_from_response(*curve, 300.0);
   ASSERT_TRUE(found);
   EXPECT_TRUE(agrees_to_digits(found->concentration, 30.3680333947, 11));
-  EXPECT_TRUE(agrees_to_digits(*found->expanded_uncertainty, 1.53799862, 9));
+  EXPECT_TRUE(agrees_to_digits(*found->propagated_half_width, 1.53799862, 9));
 }
 
 // A curve that turns at x = 16.6, y = 40.67: there is no concentration above.
@@ -141,7 +148,7 @@ TEST(Inverse, MeanResponseFactor) {
   EXPECT_TRUE(within_condition(found->concentration, x, 4));
   // x sd/mean sqrt(1 + 1/n), two-sided t of 6 degrees of freedom 2.446912.
   EXPECT_TRUE(agrees_to_digits(
-      *found->expanded_uncertainty,
+      *found->propagated_half_width,
       2.446912 * x * factor->residual_sd / factor->slope * std::sqrt(8.0 / 7.0),
       6));
 }
@@ -157,10 +164,10 @@ TEST(Inverse, NoFiniteIntervalWithoutASignificantSlope) {
   EXPECT_FALSE(fieller_interval(*line, 9.0));
 }
 
-TEST(Inverse, FiellerIsForTheUnweightedFittedLine) {
+TEST(Inverse, TheClosedFormIsForTheUnweightedLine) {
   for (const CalibrationSettings& settings :
        {CalibrationSettings{.weight = Weight::InverseX},
-        CalibrationSettings{.intercept = Intercept::Zero},
+        CalibrationSettings{.model = Model::ResponseFactor},
         CalibrationSettings{.model = Model::Quadratic}}) {
     const auto fitted = fit_calibration(seven_levels(), settings);
     ASSERT_TRUE(fitted);

@@ -33,6 +33,12 @@ struct CalibrationLevel {
   bool accepted = false;  ///< used, and its mean back-calculation passes
 };
 
+/// How blank responses scatter.
+struct BlankSpread {
+  double sd = 0.0;                  ///< response units
+  double degrees_of_freedom = 0.0;  ///< at least 1
+};
+
 /// y = intercept + slope x + curvature x^2; y in response units, x in the
 /// method's concentration unit.
 struct Calibration {
@@ -55,6 +61,9 @@ struct Calibration {
   std::optional<double> accepted_lowest;  ///< range by accepted levels
   std::optional<double> accepted_highest;
   std::vector<std::string> notes;  ///< reason words
+  /// Blank responses where there are any: of weighted fits they give the least
+  /// that a response scatters by.
+  std::optional<BlankSpread> blanks;
 
   std::size_t used_points() const;
   std::size_t used_levels() const;

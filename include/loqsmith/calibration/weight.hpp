@@ -6,6 +6,9 @@
 
 namespace loqsmith {
 
+/// A mean response factor counts as weighted: it is so by definition.
+bool is_weighted(const CalibrationSettings& settings);
+
 /// The weight function at a concentration: 1, 1/x or 1/x^2. A mean response
 /// factor is the line through zero with weight 1/x^2, whatever weight the
 /// settings name.
@@ -16,7 +19,8 @@ std::optional<double> calibration_weight(const CalibrationSettings& settings,
 
 /// Standard deviation of single responses at a concentration, as the fit sees
 /// it: residual_sd / sqrt(w), the weight taken at the lowest level of the fit
-/// for everything below it, where it would otherwise have no value at zero.
+/// for everything below it, where it would otherwise have no value at zero; of
+/// a weighted fit never below that of the blanks, where it knows any.
 double response_sd_at(const Calibration& calibration, double concentration);
 
 }  // namespace loqsmith
