@@ -90,6 +90,13 @@ void keep_digits(Decimal& decimal, int count, RoundingRule rule) {
   if (away_from_zero(decimal.digits, dropped, rule)) add_one(decimal);
 }
 
+// The carry of 99.95 makes the number one digit longer: its place moves.
+int keep_significant(Decimal& decimal, int digits, RoundingRule rule) {
+  const int count = std::max(digits, 1);
+  keep_digits(decimal, count, rule);
+  return decimal.point - count;
+}
+
 std::string plain_text(const Decimal& decimal, int decimals) {
   std::string whole;
   std::string fraction;
@@ -101,6 +108,8 @@ std::string plain_text(const Decimal& decimal, int decimals) {
   };
   for (int i = 0; i < decimal.point; ++i) whole += digit(i);
   for (int i = 0; i < decimals; ++i) fraction += digit(decimal.point + i);
+  // "00" where a place before the point swallowed all digits.
+  whole.erase(0, std::min(whole.find_first_not_of('0'), whole.size()));
   if (whole.empty()) whole = "0";
 
   const bool zero = whole.find_first_not_of('0') == std::string::npos &&
@@ -113,20 +122,26 @@ std::string plain_text(const Decimal& decimal, int decimals) {
 
 }  // namespace
 
-std::string round_to_decimals(double value, int decimals, RoundingRule rule) {
+std::string round_to_place(double value, int place, RoundingRule rule) {
   Decimal decimal = shortest_decimal(value);
-  const int places = std::max(decimals, 0);
-  keep_digits(decimal, decimal.point + places, rule);
-  return plain_text(decimal, places);
+  keep_digits(decimal, decimal.point - place, rule);
+  return plain_text(decimal, std::max(-place, 0));
+}
+
+std::string round_to_decimals(double value, int decimals, RoundingRule rule) {
+  return round_to_place(value, -std::max(decimals, 0), rule);
+}
+
+int place_of_last_digit(double value, int digits, RoundingRule rule) {
+  Decimal decimal = shortest_decimal(value);
+  return keep_significant(decimal, digits, rule);
 }
 
 std::string round_to_significant(double value, int digits, RoundingRule rule) {
   if (value == 0.0) return "0";
   Decimal decimal = shortest_decimal(value);
-  const int count = std::max(digits, 1);
-  keep_digits(decimal, count, rule);
-  // The carry of 99.95 made the number one digit longer: its place moved.
-  return plain_text(decimal, std::max(count - decimal.point, 0));
+  const int place = keep_significant(decimal, digits, rule);
+  return plain_text(decimal, std::max(-place, 0));
 }
 
 }  // namespace loqsmith

@@ -190,7 +190,9 @@ ResultRow judge_result(const InjectionResponse& one,
     numbers.highest = in_sample(end_of_range(set), factor);
   }
   row.reported =
-      reported_text(row.status, numbers, analyte.settings->reporting);
+      reported_text(row.status, numbers,
+                    reporting_of(*one.injection, *analyte.units,
+                                 analyte.settings->reporting));
   return row;
 }
 

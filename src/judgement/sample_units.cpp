@@ -35,6 +35,14 @@ std::string result_unit(const Injection& injection, const UnitSettings& units) {
              : units.result;
 }
 
+ReportingSettings reporting_of(const Injection& injection,
+                               const UnitSettings& units,
+                               const ReportingSettings& settings) {
+  ReportingSettings own = settings;
+  if (stays_in_the_vial(injection, units)) own.reporting_limit.reset();
+  return own;
+}
+
 double in_sample(double vial, double factor) {
   const double product = vial * factor;
   if (factor == 1.0 || !std::isfinite(product)) return product;

@@ -121,6 +121,9 @@ ReportingSettings reporting_settings(const MethodElement* own,
   settings.below_quantitation = section.pick<S::BelowQuantitation>(
       "below-quantitation", {{"estimate", S::BelowQuantitation::Estimate},
                              {"limit", S::BelowQuantitation::Limit}});
+  settings.reporting_limit = section.optional_number("reporting-limit");
+  settings.relative_uncertainty =
+      section.optional_number("relative-uncertainty");
   set_letters(shared, settings);
   set_letters(own, settings);
   return settings;

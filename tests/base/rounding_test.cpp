@@ -77,6 +77,21 @@ TEST(Rounding, UpAndDownGoByMagnitude) {
   EXPECT_EQ(round_to_decimals(999.999, 0, down), "999");
 }
 
+TEST(Rounding, APlaceMayLieBeforeThePoint) {
+  EXPECT_EQ(round_to_place(1234.5, 1, kEven), "1230");
+  EXPECT_EQ(round_to_place(1234.5, -2, kEven), "1234.50");
+  EXPECT_EQ(round_to_place(1250, 2, kEven), "1200");
+  EXPECT_EQ(round_to_place(1250, 2, kUp), "1300");
+  EXPECT_EQ(round_to_place(6, 1, kEven), "10");
+  EXPECT_EQ(round_to_place(4, 1, kEven), "0");
+  EXPECT_EQ(round_to_place(-4, 3, kEven), "0");
+  EXPECT_EQ(round_to_place(4, 3, RoundingRule::Up), "1000");
+  EXPECT_EQ(place_of_last_digit(0.239754, 2, kEven), -2);
+  EXPECT_EQ(place_of_last_digit(0.0996, 2, kEven), -2);
+  EXPECT_EQ(place_of_last_digit(0.2, 2, kEven), -2);
+  EXPECT_EQ(place_of_last_digit(1540, 2, kEven), 2);
+}
+
 TEST(Rounding, ZeroNeverHasASign) {
   for (const double zero : {0.0, -0.0}) {
     EXPECT_EQ(round_to_decimals(zero, 2, kEven), "0.00");

@@ -59,6 +59,93 @@ TEST(ReportedText, WithheldNeverShowsANumber) {
   }
 }
 
+TEST(ReportedText, NoExponentHoweverLargeOrSmall) {
+  ReportingSettings settings;
+  ReportedNumbers numbers;
+  numbers.result = 12450.0;
+  EXPECT_EQ(reported_text(Status::Reportable, numbers, settings), "12400");
+  numbers.result = 6.0221e23;
+  EXPECT_EQ(reported_text(Status::Reportable, numbers, settings),
+            "602000000000000000000000");
+  numbers.result = 1.5e-9;
+  EXPECT_EQ(reported_text(Status::Reportable, numbers, settings),
+            "0.00000000150");
+  numbers.result = -0.0;
+  settings.decimals = 2;
+  EXPECT_EQ(reported_text(Status::Reportable, numbers, settings), "0.00");
+  numbers.result = -0.0049;
+  EXPECT_EQ(reported_text(Status::Estimated, numbers, settings), "0.00");
+}
+
+// JCGM 100:2008, 7.2.6 (from memory). 6.207216 with an expanded uncertainty of
+// 0.62 is 6.21 +/- 0.62.
+TEST(ReportedText, UncertaintyIsRoundedFirstAndGivesThePlace) {
+  ReportingSettings settings;
+  settings.relative_uncertainty = 10.0;
+  const auto text = [&](double result) {
+    ReportedNumbers numbers;
+    numbers.result = result;
+    return reported_text(Status::Reportable, numbers, settings);
+  };
+  EXPECT_EQ(text(6.207216), "6.21 +/- 0.62");
+  // The method's digits give way: not finer than the uncertainty, not coarser.
+  EXPECT_EQ(text(1234.5), "1230 +/- 120");
+  EXPECT_EQ(text(123456.0), "123000 +/- 12000");
+  settings.significant_digits = 1;
+  EXPECT_EQ(text(0.0123456), "0.0123 +/- 0.0012");
+  // 9.95 rounds to 10 (half-even and half-up differ at 0.985).
+  EXPECT_EQ(text(99.5), "100 +/- 10");
+  EXPECT_EQ(text(9.85), "9.85 +/- 0.98");
+  settings.rounding = ReportingSettings::Rounding::HalfUp;
+  EXPECT_EQ(text(9.85), "9.85 +/- 0.99");
+  settings.relative_uncertainty = 300.0;
+  EXPECT_EQ(text(4.04), "4 +/- 12");
+  EXPECT_EQ(text(0.0), "0");
+}
+
+TEST(ReportedText, UncertaintyStandsBesideReportableResultsOnly) {
+  ReportingSettings settings;
+  settings.relative_uncertainty = 24.0;
+  EXPECT_EQ(reported_text(Status::Reportable, kNumbers, settings),
+            "0.235 +/- 0.056");
+  EXPECT_EQ(reported_text(Status::Estimated, kNumbers, settings), "0.235");
+  EXPECT_EQ(reported_text(Status::NotDetected, kNumbers, settings), "< 0.121");
+  EXPECT_EQ(reported_text(Status::AboveRange, kNumbers, settings), "> 499");
+}
+
+TEST(ReportedText, NothingBelowTheReportingLimitIsPrinted) {
+  ReportingSettings settings;
+  settings.reporting_limit = 0.3;
+  EXPECT_EQ(reported_text(Status::NotDetected, kNumbers, settings), "< 0.300");
+  EXPECT_EQ(reported_text(Status::Estimated, kNumbers, settings), "< 0.300");
+  EXPECT_EQ(reported_text(Status::Reportable, kNumbers, settings), "< 0.300");
+  EXPECT_EQ(reported_text(Status::AboveRange, kNumbers, settings), "> 499");
+  // At the limit counts as at or above; compared unrounded.
+  settings.reporting_limit = 0.23451;
+  EXPECT_EQ(reported_text(Status::Reportable, kNumbers, settings), "0.235");
+  settings.reporting_limit = 0.234511;
+  EXPECT_EQ(reported_text(Status::Reportable, kNumbers, settings), "< 0.235");
+  // The sample's own limit counts where it is the larger one.
+  settings.reporting_limit = 0.05;
+  EXPECT_EQ(reported_text(Status::NotDetected, kNumbers, settings), "< 0.121");
+  settings.below_quantitation = ReportingSettings::BelowQuantitation::Limit;
+  EXPECT_EQ(reported_text(Status::Estimated, kNumbers, settings), "< 0.401");
+}
+
+TEST(SampleUnits, AReportingLimitHoldsInTheSampleOnly) {
+  UnitSettings units;
+  units.sample_amount = "mg";
+  units.final_volume = "mL";
+  ReportingSettings settings;
+  settings.reporting_limit = 2.0;
+  Injection weighed;
+  weighed.sample_amount = 500.0;
+  weighed.final_volume = 5.0;
+  EXPECT_EQ(reporting_of(weighed, units, settings).reporting_limit, 2.0);
+  EXPECT_FALSE(reporting_of({}, units, settings).reporting_limit);
+  EXPECT_EQ(reporting_of({}, {}, settings).reporting_limit, 2.0);
+}
+
 TEST(SampleUnits, FactorFollowsDilutionAndPreparation) {
   Injection injection;
   injection.dilution = 10.0;

@@ -54,10 +54,13 @@ TEST(ReadMethod, AnalyteReplacesAttributeByAttribute) {
       replaced(kExampleMethod, R"(<calibration model="linear" weight="1/x"/>)",
                R"(<calibration weight="1/x"/>
       <integration threshold="6"/>
-      <reporting decimals="2"><letter status="estimated" code="j"/></reporting>
+      <reporting decimals="2" reporting-limit="0.5"><letter status="estimated" code="j"/></reporting>
       <acceptance><calibration minimum-levels="4"/></acceptance>)");
   const Method method =
-      read_method(replaced(replaced(text, R"(model="linear" weight="none")",
+      read_method(replaced(replaced(replaced(text, "<reporting significant-",
+                                             "<reporting relative-uncertainty="
+                                             "\"24\" significant-"),
+                                    R"(model="linear" weight="none")",
                                     R"(model="quadratic")"),
                            R"(<integration response="area")",
                            R"(<integration response="height")"),
@@ -90,6 +93,10 @@ TEST(ReadMethod, AnalyteReplacesAttributeByAttribute) {
   // Decimals of the analyte displace the method's significant digits.
   EXPECT_EQ(atrazine.reporting.decimals, 2);
   EXPECT_FALSE(simazine.reporting.decimals.has_value());
+  EXPECT_EQ(atrazine.reporting.reporting_limit, 0.5);
+  EXPECT_FALSE(simazine.reporting.reporting_limit.has_value());
+  EXPECT_EQ(atrazine.reporting.relative_uncertainty, 24.0);
+  EXPECT_EQ(simazine.reporting.relative_uncertainty, 24.0);
   EXPECT_EQ(atrazine.reporting.letters.at("estimated"), "j");
   EXPECT_TRUE(simazine.reporting.letters.empty());
 }

@@ -160,6 +160,9 @@ TEST(Vocabulary, DefaultsOfCalibrationAndReportingAreThoseOfTheirSettings) {
   EXPECT_EQ(reporting.rounding, wanted_reporting.rounding);
   EXPECT_EQ(reporting.below_detection, wanted_reporting.below_detection);
   EXPECT_EQ(reporting.below_quantitation, wanted_reporting.below_quantitation);
+  EXPECT_EQ(reporting.reporting_limit, wanted_reporting.reporting_limit);
+  EXPECT_EQ(reporting.relative_uncertainty,
+            wanted_reporting.relative_uncertainty);
   EXPECT_EQ(reporting.letters, wanted_reporting.letters);
 }
 

@@ -30,4 +30,16 @@ std::string round_to_decimals(double value, int decimals, RoundingRule rule);
 /// digit and prints as "0".
 std::string round_to_significant(double value, int digits, RoundingRule rule);
 
+/// Weight of the last digit that round_to_significant() keeps, as a power of
+/// ten, a carry included: 0.239754 with two digits gives -2 (0.24), 0.0996 also
+/// -2 (0.10), 1540 gives 2 (1500). Only for values other than zero.
+int place_of_last_digit(double value, int digits, RoundingRule rule);
+
+/// The value rounded to a multiple of 10^place, which may lie before the point:
+/// 1234.5 at place 1 gives "1230", at -2 "1234.50".
+///
+/// Use: a result beside its uncertainty, which is rounded first and gives the
+/// place (JCGM 100:2008, 7.2.6; from memory).
+std::string round_to_place(double value, int place, RoundingRule rule);
+
 }  // namespace loqsmith

@@ -21,6 +21,12 @@ double sample_factor(const Injection& injection, const UnitSettings& units);
 /// concentration unit where the injection stays in the vial.
 std::string result_unit(const Injection& injection, const UnitSettings& units);
 
+/// The reporting settings that hold for the injection: a reporting limit is
+/// stated in the sample and says nothing of what stays in the vial.
+ReportingSettings reporting_of(const Injection& injection,
+                               const UnitSettings& units,
+                               const ReportingSettings& settings);
+
 /// A vial concentration, limit or uncertainty in the sample's unit.
 ///
 /// Results, limits and the end of the range all go through this one function,

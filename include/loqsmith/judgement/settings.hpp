@@ -79,6 +79,12 @@ struct ReportingSettings {
   Rounding rounding = Rounding::HalfEven;
   BelowDetection below_detection = BelowDetection::Limit;
   BelowQuantitation below_quantitation = BelowQuantitation::Estimate;
+  /// Nothing below it is printed, in the sample's unit. Set where an agreement
+  /// or a regulation names one; a sample's own limit counts where it is larger.
+  std::optional<double> reporting_limit;
+  /// The method's expanded uncertainty (95 %) from its validation, percent of
+  /// the result; printed beside results from the quantitation limit up.
+  std::optional<double> relative_uncertainty;
   /// Qualifier letters that replace the trade's: status name to code.
   std::map<std::string, std::string> letters;
 };
