@@ -57,6 +57,20 @@ void record_calibration(JsonWriter& json, const Outcome<Calibration>& fitted) {
   json.end_object();
 }
 
+void record_addition(JsonWriter& json, const StandardAddition& found) {
+  json.begin_object("standard_addition");
+  json.member("amount", found.amount);
+  json.member("standard_error", found.standard_error);
+  json.member("propagated_half_width", found.propagated_half_width);
+  if (found.interval) {
+    json.member("lower", found.interval->lower);
+    json.member("upper", found.interval->upper);
+  } else {
+    json.member("no_interval", found.interval.reason());
+  }
+  json.end_object();
+}
+
 void record_estimate(JsonWriter& json, const LimitEstimate& estimate) {
   json.member("critical_value", estimate.critical_value);
   json.member("detection_limit", estimate.detection);
@@ -152,6 +166,7 @@ void record_analyte(JsonWriter& json, const AnalyteJudgement& analyte) {
     json.member("set", set.set);
     json.member("accepted", calibration_accepted(analyte, set));
     record_calibration(json, set.calibration);
+    if (set.addition) record_addition(json, *set.addition);
     record_limits(json, set.limits);
     json.end_object();
   }

@@ -37,6 +37,7 @@ void record_failed(JsonWriter& json, const CheckRow& check) {
   json.begin_object();
   json.member("check", check.check);
   json.member("analyte", check.analyte);
+  if (!check.set.empty()) json.member("set", check.set);
   if (check.injection) {
     member_whole(json, "injection", *check.injection);
   } else {

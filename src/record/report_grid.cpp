@@ -44,6 +44,8 @@ void legend(std::ostream& out, const ResultIndex& index) {
 
 void head_limits(std::ostream& out, const AnalyteJudgement& analyte) {
   for (const CalibrationSet& set : analyte.sets) {
+    // Those of a single sample stand with its line, below.
+    if (set.over_additions) continue;
     out << "<span class=\"under\">";
     if (analyte.sets.size() > 1) out << "set " << html_text(set.set) << ": ";
     if (set.limits.governing) {

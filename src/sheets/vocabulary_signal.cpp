@@ -77,9 +77,8 @@ ElementRule calibration() {
                  "none", "Weight of a standard."),
        defaulted("intercept", choice({{"fitted"}, {"zero"}}), "fitted",
                  "Whether the curve is forced through zero."),
-       defaulted("sets",
-                 choice({{"one"}, {"bracketing", kLater}, {"latest", kLater}}),
-                 "one", "Which standards belong to which samples.")},
+       defaulted("sets", choice({{"one"}, {"bracketing"}, {"latest"}}), "one",
+                 "Which standards belong to which samples.")},
       {}};
 }
 

@@ -101,6 +101,23 @@ TEST(ReadMethod, AnalyteReplacesAttributeByAttribute) {
   EXPECT_TRUE(simazine.reporting.letters.empty());
 }
 
+TEST(ReadMethod, SetsOfStandards) {
+  using Sets = CalibrationSettings::Sets;
+  const std::pair<const char*, Sets> kinds[] = {
+      {"one", Sets::One},
+      {"bracketing", Sets::Bracketing},
+      {"latest", Sets::Latest}};
+  for (const auto& [word, sets] : kinds) {
+    const Method method = read_method(
+        replaced(kExampleMethod, R"(weight="1/x"/>)",
+                 std::string(R"(weight="1/x" sets=")") + word + R"("/>)"),
+        "method.xml");
+    ASSERT_EQ(method.analytes.size(), 2U);
+    EXPECT_EQ(method.analytes[0].calibration.sets, Sets::One) << word;
+    EXPECT_EQ(method.analytes[1].calibration.sets, sets) << word;
+  }
+}
+
 TEST(ReadMethod, ChecksOfTheLimits) {
   const Method method = read_method(
       replaced(replaced(kExampleMethod, "<calibration-residual ",

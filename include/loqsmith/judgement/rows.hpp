@@ -53,7 +53,7 @@ struct CheckRow {
   std::string action;          ///< "withhold", "flag"; empty: none
   std::string affects;
   std::string note;
-  std::string set;  ///< calibration set; empty: all, or there is only one
+  std::string set = {};  ///< calibration set; empty: all, or only one
 };
 
 /// A standard that gave no response; it stands in standards.csv with its note.
