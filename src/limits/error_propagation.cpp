@@ -6,6 +6,7 @@
 #include "loqsmith/limits/blanks.hpp"
 #include "loqsmith/limits/low_range_findings.hpp"
 #include "loqsmith/limits/low_range_line.hpp"
+#include "loqsmith/limits/low_range_procedure.hpp"
 #include "loqsmith/limits/spread_limit.hpp"
 #include "loqsmith/limits/words.hpp"
 
@@ -94,13 +95,14 @@ Outcome<LimitEstimate> error_propagation(const LimitEvidence& evidence,
                                        calibration.degrees_of_freedom);
   set_spread_limits(estimate, {parts.sum(), df}, calibration.slope, procedure);
   estimate.terms.push_back(
-      {"degrees of freedom of the sum (Welch and Satterthwaite; the bounds are "
-       "approximate)",
-       df, ""});
+      {"degrees of freedom of the sum (Welch and Satterthwaite)", df, ""});
   judge_blanks(estimate, *sample, evidence, settings);
   judge_blank_offset(estimate, *sample, calibration);
   judge_baseline_without_offset(estimate, evidence);
   judge_calibration(estimate, calibration);
+  judge_slope(estimate,
+              std::sqrt(std::fmax(0.0, calibration.covariance[1][1])) /
+                  calibration.slope);
   judge_distance_from_standards(estimate, calibration.lowest);
   return estimate;
 }

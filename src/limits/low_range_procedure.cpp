@@ -173,6 +173,16 @@ void judge_place(LimitEstimate& estimate, const LimitEvidence& evidence,
   judge_range(estimate, reading.highest);
 }
 
+void judge_slope(LimitEstimate& estimate, double relative_sd) {
+  if (!(relative_sd > 0.06)) return;
+  estimate.findings.push_back(
+      {Grade::Note, "bounds-approximate",
+       "the slope is known to " + percent_figure(relative_sd) +
+           " only: the confidence bounds, which leave that out, are "
+           "approximate (at 8 % they hold 0.86 to 0.95 of true limits in "
+           "simulations)"});
+}
+
 void judge_low_range(LimitEstimate& estimate, const LimitEvidence& evidence,
                      const LimitSettings& settings,
                      const ProcedureSettings& procedure,
@@ -182,6 +192,8 @@ void judge_low_range(LimitEstimate& estimate, const LimitEvidence& evidence,
   judge_curvature(estimate, line);
   if (const auto blanks = blanks_beside(evidence, settings, procedure))
     judge_against_blanks(estimate, line.residual_sd, df, *blanks);
+  judge_slope(estimate, line.residual_sd / line.slope *
+                            std::sqrt(line.leverage.inverse_squares));
   judge_place(estimate, evidence, settings, procedure,
               {line.intercept, line.intercept_sd(),
                line.blank_reading_sd(replicates_of(procedure)), df,
