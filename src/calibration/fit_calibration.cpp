@@ -6,6 +6,7 @@
 
 #include "loqsmith/calibration/inverse.hpp"
 #include "loqsmith/calibration/model_powers.hpp"
+#include "loqsmith/calibration/replicate_groups.hpp"
 #include "loqsmith/calibration/weight.hpp"
 #include "loqsmith/numerics/least_squares.hpp"
 
@@ -21,13 +22,12 @@ void add_note(StandardPoint& point, const std::string& word) {
 }
 
 // What enters the fit, with its weight; a weight has no value at zero.
-void assign_weights(std::vector<StandardPoint>& points,
-                    const CalibrationSettings& settings) {
-  for (StandardPoint& point : points) {
+void assign_weights(Calibration& calibration) {
+  for (StandardPoint& point : calibration.points) {
     point.weight = 0.0;
     if (!point.used) continue;
     const std::optional<double> weight =
-        calibration_weight(settings, point.concentration);
+        calibration_weight(calibration, point.concentration);
     if (weight) {
       point.weight = *weight;
     } else {
@@ -137,11 +137,16 @@ std::optional<double> relative_standard_error(const Calibration& calibration,
   return std::sqrt(sum / static_cast<double>(n - coefficients));
 }
 
-std::optional<NotApplicable> why_not_computed(
-    const CalibrationSettings& settings) {
-  if (settings.weight == CalibrationSettings::Weight::InverseVariance)
-    return NotApplicable{
-        "not-available: weight 1/s2 is not available in this version"};
+// Weight 1/s2 comes from the replicates; a mean response factor has its own.
+std::optional<NotApplicable> set_variance(Calibration& calibration) {
+  const CalibrationSettings& settings = calibration.settings;
+  if (settings.weight != CalibrationSettings::Weight::InverseVariance ||
+      settings.model == CalibrationSettings::Model::ResponseFactor)
+    return std::nullopt;
+  const auto variance =
+      pooled_variance_function(replicate_groups(calibration.points));
+  if (!variance) return NotApplicable{variance.reason()};
+  calibration.variance = *variance;
   return std::nullopt;
 }
 
@@ -189,13 +194,13 @@ void set_range(Calibration& calibration) {
 
 Outcome<Calibration> fit_calibration(std::vector<StandardPoint> points,
                                      const CalibrationSettings& settings) {
-  if (auto refused = why_not_computed(settings)) return *refused;
   const ModelPowers powers = model_powers(settings);
 
   Calibration calibration;
   calibration.settings = settings;
   calibration.points = std::move(points);
-  assign_weights(calibration.points, settings);
+  if (auto lacking = set_variance(calibration)) return *lacking;
+  assign_weights(calibration);
   calibration.levels = levels_of(calibration.points);
   set_range(calibration);
   if (auto lacking = why_not_enough(calibration, powers.count()))

@@ -21,7 +21,7 @@ bool has_an_additive_part_beside(const Calibration& calibration) {
 // 1 / w, the weight not taken below the lowest level.
 double law_at(const Calibration& calibration, double concentration) {
   const double at = std::max(concentration, calibration.lowest);
-  return 1.0 / calibration_weight(calibration.settings, at).value();
+  return 1.0 / calibration_weight(calibration, at).value();
 }
 
 }  // namespace

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "loqsmith/calibration/calibration.hpp"
 #include "loqsmith/numerics/mean.hpp"
 
 namespace loqsmith {

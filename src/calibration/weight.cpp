@@ -18,8 +18,9 @@ bool is_weighted(const CalibrationSettings& settings) {
          settings.weight != CalibrationSettings::Weight::None;
 }
 
-std::optional<double> calibration_weight(const CalibrationSettings& settings,
-                                         double concentration) {
+std::optional<double> calibration_weight(
+    const CalibrationSettings& settings,
+    const std::optional<VarianceFunction>& variance, double concentration) {
   if (settings.model == CalibrationSettings::Model::ResponseFactor)
     return inverse_power(concentration, true);
   switch (settings.weight) {
@@ -30,14 +31,22 @@ std::optional<double> calibration_weight(const CalibrationSettings& settings,
     case CalibrationSettings::Weight::InverseXSquared:
       return inverse_power(concentration, true);
     case CalibrationSettings::Weight::InverseVariance:
-      return std::nullopt;
+      if (!variance || !(variance->at(concentration) > 0.0))
+        return std::nullopt;
+      return 1.0 / variance->at(concentration);
   }
   return std::nullopt;
 }
 
+std::optional<double> calibration_weight(const Calibration& calibration,
+                                         double concentration) {
+  return calibration_weight(calibration.settings, calibration.variance,
+                            concentration);
+}
+
 double response_sd_at(const Calibration& calibration, double concentration) {
   const double at = std::max(concentration, calibration.lowest);
-  const double weight = calibration_weight(calibration.settings, at).value();
+  const double weight = calibration_weight(calibration, at).value();
   const double fitted = calibration.residual_sd / std::sqrt(weight);
   if (!calibration.blanks || !is_weighted(calibration.settings)) return fitted;
   return std::max(fitted, calibration.blanks->sd);

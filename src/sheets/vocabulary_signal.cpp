@@ -73,7 +73,7 @@ ElementRule calibration() {
                  choice({{"linear"}, {"quadratic"}, {"response-factor"}}),
                  "linear", "Shape of the curve."),
        defaulted("weight",
-                 choice({{"none"}, {"1/x"}, {"1/x2"}, {"1/s2", kLater}}),
+                 choice({{"none"}, {"1/x"}, {"1/x2"}, {"1/s2"}}),
                  "none", "Weight of a standard."),
        defaulted("intercept", choice({{"fitted"}, {"zero"}}), "fitted",
                  "Whether the curve is forced through zero."),

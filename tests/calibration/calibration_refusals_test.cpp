@@ -54,11 +54,12 @@ TEST(CalibrationRefusals, CurveThatTurnsOverInsideTheRange) {
       "curve-turns-over: "));
 }
 
-TEST(CalibrationRefusals, WhatIsNotComputedYet) {
+TEST(CalibrationRefusals, WeightFromReplicatesWithoutReplicates) {
   EXPECT_TRUE(
       contains(reason(fit_calibration(seven_levels(),
                                       {.weight = Weight::InverseVariance})),
-               "not available in this version"));
+               "no-replicates: weight 1/s2 needs replicate standards at two "
+               "levels"));
 }
 
 TEST(AcceptLevels, WithoutLimitsEveryUsedLevelIsAccepted) {

@@ -237,8 +237,6 @@ std::vector<MethodCase> unavailable() {
       later("own bounds", "response=\"area\"", "bounds=\"own\"", "bounds",
             "expected \"template\", found bounds=\"own\", not available in "
             "this version"),
-      later("weight 1/s2", "weight=\"1/x\"", "weight=\"1/s2\"",
-            "weight=\"1/s2\"", "not available in this version"),
       later("extracted trace", "kind=\"srm\"", "kind=\"extracted\"",
             "kind=\"extracted\"", "not available in this version"),
       later("check of controls", "<check-standard ",

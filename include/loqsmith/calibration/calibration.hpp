@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "loqsmith/calibration/settings.hpp"
+#include "loqsmith/calibration/variance_function.hpp"
 
 namespace loqsmith {
 
@@ -61,6 +62,8 @@ struct Calibration {
   std::optional<double> accepted_lowest;  ///< range by accepted levels
   std::optional<double> accepted_highest;
   std::vector<std::string> notes;  ///< reason words
+  /// What weight 1/s2 was taken from; the other weights have none.
+  std::optional<VarianceFunction> variance;
   /// Blank responses where there are any: of weighted fits they give the least
   /// that a response scatters by.
   std::optional<BlankSpread> blanks;

@@ -3,9 +3,9 @@
 #include <cstddef>
 #include <vector>
 
-#include "loqsmith/calibration/calibration.hpp"
-
 namespace loqsmith {
+
+struct StandardPoint;
 
 /// The used standards of one nominal concentration.
 struct ReplicateGroup {
