@@ -19,7 +19,8 @@ std::string document(const SmallNight& night, const SmallInjection& injection,
   SimulatedTrace wanted;
   wanted.end_minutes = 6.0;
   wanted.white_noise = night.noise_sd;
-  wanted.peaks = {{3.0, 0.05, injection.area}};
+  wanted.peaks = {{3.0, 0.05, injection.area},
+                  {4.5, 0.05, injection.internal_standard_area}};
   const Trace simulated = simulate_trace(wanted, name);
   MzmlTrace trace;
   trace.id = "uv";
@@ -33,13 +34,16 @@ std::string document(const SmallNight& night, const SmallInjection& injection,
 
 void SmallNight::write(const std::filesystem::path& folder) const {
   std::filesystem::create_directories(folder);
-  std::string sheet = "injection,file,sample,role,level,parent,dilution,prep\n";
+  std::string sheet =
+      "injection,file,sample,role,level,parent,dilution,"
+      "internal_standard_dilution,prep\n";
   for (std::size_t i = 0; i < injections.size(); ++i) {
     const SmallInjection& one = injections[i];
     const std::string name = "inj-" + std::to_string(i + 1);
     sheet += std::to_string(i + 1) + ',' + name + ".mzML," + one.sample + ',' +
              one.role + ',' + one.level + ',' + one.parent + ',' +
-             shortest(one.dilution) + ',' + one.prep + '\n';
+             shortest(one.dilution) + ',' +
+             shortest(one.internal_standard_dilution) + ',' + one.prep + '\n';
     write_file(folder / (name + ".mzML"), document(*this, one, name));
   }
   std::string contents = "level,analyte,concentration\n";

@@ -8,7 +8,8 @@
 namespace loqsmith::test {
 
 /// One injection of a night made for a single test: one analyte "zinol" on one
-/// trace "uv", a Gaussian peak at 3 minutes.
+/// trace "uv", a Gaussian peak at 3 minutes, and at 4.5 minutes that of an
+/// internal standard.
 struct SmallInjection {
   std::string sample;
   std::string role;
@@ -16,6 +17,8 @@ struct SmallInjection {
   std::string parent = {};
   double dilution = 1.0;
   double area = 0.0;  ///< true, signal unit x minute; 0: no peak
+  double internal_standard_area = 0.0;
+  double internal_standard_dilution = 1.0;
   std::string prep = {};
 };
 
