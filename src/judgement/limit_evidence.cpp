@@ -165,6 +165,17 @@ std::optional<double> noise_near_the_lowest(const MeasuredAnalyte& analyte) {
   return median(std::move(noises));
 }
 
+bool rests_on_blanks(const LimitRow& row) {
+  if (row.procedure == "low-level-precision") {
+    const std::vector<LimitTerm>& terms = row.estimate->terms;
+    return std::any_of(terms.begin(), terms.end(), [](const LimitTerm& term) {
+      return term.name == "number of results (blanks)";
+    });
+  }
+  return row.procedure == "blank-deviation" ||
+         row.procedure == "blank-and-low-level";
+}
+
 }  // namespace
 
 LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
@@ -204,7 +215,7 @@ void note_mean_internal_standard(const MeasuredAnalyte& analyte,
                     });
   if (without == 0) return;
   for (LimitRow& row : limits.rows) {
-    if (row.procedure != "blank-deviation" || !row.estimate) continue;
+    if (!row.estimate || !rests_on_blanks(row)) continue;
     row.estimate.value().findings.push_back(
         {Grade::Note, "mean-internal-standard",
          std::to_string(without) +

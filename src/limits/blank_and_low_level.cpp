@@ -5,6 +5,7 @@
 #include <string>
 #include <vector>
 
+#include "loqsmith/calibration/cochran_test.hpp"
 #include "loqsmith/limits/blanks.hpp"
 #include "loqsmith/limits/drawn_truth.hpp"
 #include "loqsmith/limits/limit_of_blank.hpp"
@@ -20,6 +21,7 @@ namespace {
 
 constexpr double kLowLevels = 4.0;  // times the lowest
 constexpr double kFarAbove = 10.0;
+constexpr double kNotTheSame = 0.01;
 constexpr std::size_t kAdvisedResults = 60;
 constexpr std::size_t kLeastResults = 20;
 constexpr std::size_t kLeastOfOneLevel = 3;
@@ -121,6 +123,22 @@ void set_bounds(LimitEstimate& estimate, const Evidence& from,
       });
 }
 
+// Pooling wants one spread in all low samples.
+void judge_spread(LimitEstimate& estimate,
+                  const std::vector<std::vector<double>>& low_samples) {
+  std::vector<ReplicateGroup> groups;
+  for (const std::vector<double>& sample : low_samples)
+    groups.push_back({static_cast<double>(groups.size()), sample, {}});
+  const Outcome<DiagnosticTest> test = cochran_test(groups);
+  if (!test || !test->p || test->passed) return;
+  estimate.findings.push_back(
+      {*test->p < kNotTheSame ? Grade::NotValid : Grade::Caution,
+       "spread-differs",
+       "one low sample scatters more than the others (Cochran, C " +
+           figure(test->statistic) + ", critical value " +
+           figure(test->critical) + "): their spread should not be pooled"});
+}
+
 Outcome<LimitEstimate> from_moments(const Evidence& from,
                                     const ProcedureSettings& procedure) {
   std::vector<std::vector<double>> low_samples;
@@ -146,6 +164,7 @@ Outcome<LimitEstimate> from_moments(const Evidence& from,
   estimate.terms.push_back(
       {"pooled standard deviation of the low samples", low.sd, kConcentration});
   judge_numbers(estimate, from.blanks.n(), low.results);
+  judge_spread(estimate, low_samples);
   Outcome<LimitEstimate> found = above_zero(std::move(estimate));
   if (found) set_bounds(found.value(), from, low, procedure);
   return found;

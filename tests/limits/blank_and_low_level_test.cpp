@@ -145,6 +145,29 @@ TEST(BlankAndLowLevel, HighLevelsDoNotEnterThePooledSpread) {
   EXPECT_GT(*limit(evidence)->detection, 1.1 * before);
 }
 
+// The first of the five samples, stretched about 0.9.
+TEST(BlankAndLowLevel, ALowSampleThatScattersMore) {
+  struct Row {
+    double stretch;
+    std::optional<Grade> grade;
+  };
+  for (const Row& row : std::initializer_list<Row>{{1.0, std::nullopt},
+                                                   {1.6, Grade::Caution},
+                                                   {2.5, Grade::NotValid}}) {
+    LimitEvidence evidence = example(0.88, 0.01);
+    for (std::size_t i = 0; i < 12; ++i) {
+      double& found = evidence.spikes[i].found_vial;
+      found = 0.9 + row.stretch * (found - 0.9);
+    }
+    const auto found = limit(evidence);
+    ASSERT_TRUE(found);
+    const LimitFinding* one = finding(*found, "spread-differs");
+    ASSERT_EQ(one != nullptr, row.grade.has_value()) << row.stretch;
+    if (one == nullptr) continue;
+    EXPECT_EQ(one->grade, *row.grade) << one->text;
+  }
+}
+
 TEST(BlankAndLowLevel, FewResults) {
   struct Row {
     std::size_t blanks, low;
