@@ -122,6 +122,19 @@ void check_baseline(MethodDocument& document, const MethodElement* own,
   if (section.value("overlap") != "drop") refuse("overlap");
 }
 
+// The learned shape is that of the whole template window.
+void check_bounds(MethodDocument& document, const MethodElement* own,
+                  const MethodElement* shared) {
+  const Section section(element_rule("integration"), own, shared);
+  if (section.value("bounds") != "own") return;
+  if (section.value("response") != "template") return;
+  const MethodElement& written = own != nullptr ? *own : *shared;
+  document.add(place_of(written, "bounds"),
+               "bounds \"own\" with response \"template\"",
+               "bounds \"template\", since the learned shape spans it",
+               "choose bounds \"template\" or another response");
+}
+
 }  // namespace
 
 void check_method_rules(MethodDocument& document) {
@@ -137,6 +150,7 @@ void check_method_rules(MethodDocument& document) {
   if (integration != nullptr) {
     check_smoothing(document, nullptr, integration);
     check_baseline(document, nullptr, integration);
+    check_bounds(document, nullptr, integration);
   }
   for (const MethodElement* analyte : method.at_path("analytes/analyte")) {
     if (const MethodElement* own = analyte->child("limits")) {
@@ -149,6 +163,7 @@ void check_method_rules(MethodDocument& document) {
     if (const MethodElement* own = analyte->child("integration")) {
       check_smoothing(document, own, integration);
       check_baseline(document, own, integration);
+      check_bounds(document, own, integration);
     }
   }
 }

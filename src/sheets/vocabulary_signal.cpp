@@ -11,7 +11,7 @@ ElementRule integration() {
       Content::Empty,
       {defaulted("response", choice({{"area"}, {"height"}, {"template"}}),
                  "area", "What is calibrated."),
-       defaulted("bounds", choice({{"template"}, {"own", kLater}}), "template",
+       defaulted("bounds", choice({{"template"}, {"own"}}), "template",
                  "Every role over the same window, or the found feet; limits "
                  "from blanks are not valid with the latter."),
        defaulted("baseline",

@@ -7,6 +7,7 @@
 #include "loqsmith/signal/estimated_baseline.hpp"
 #include "loqsmith/signal/fit_template.hpp"
 #include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/own_feet.hpp"
 #include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
 #include "loqsmith/signal/peak_working.hpp"
@@ -26,10 +27,13 @@ constexpr double kSharpHeight = 50.0;
 constexpr double kMarginWidths = 10.0;
 
 bool available(const IntegrationSettings& settings) {
-  return settings.bounds == IntegrationSettings::Bounds::Template &&
-         !(is_estimated(settings.baseline) &&
-           (settings.response == IntegrationSettings::Response::Template ||
-            settings.overlap != IntegrationSettings::Overlap::Drop));
+  const bool scaled =
+      settings.response == IntegrationSettings::Response::Template;
+  if (settings.bounds == IntegrationSettings::Bounds::Own && scaled) {
+    return false;
+  }
+  return !is_estimated(settings.baseline) ||
+         (!scaled && settings.overlap == IntegrationSettings::Overlap::Drop);
 }
 
 // The part of the trace that one target needs: its window of times, the feet,
@@ -87,6 +91,9 @@ class Measurement {
     if (chosen_.cut) {
       return NotApplicable{"peak-cut: the trace does not hold both its feet"};
     }
+    if (target_.integration.bounds == IntegrationSettings::Bounds::Own) {
+      take_own_feet();
+    }
     const Outcome<PlacedWindow> placed =
         place(chosen_.minutes.value_or(expected_));
     if (!placed) return NotApplicable{placed.reason()};
@@ -121,11 +128,25 @@ class Measurement {
 
  private:
   Outcome<PlacedWindow> place(double apex) const {
-    return place_window_above(
-        stretch_, chosen_.neighbours,
-        {apex, window_.left_minutes, window_.right_minutes,
-         window_.width_half_minutes, chosen_.minutes.has_value(),
-         point_noise_});
+    return place_window_above(stretch_, chosen_.neighbours,
+                              {apex, feet().left_minutes, feet().right_minutes,
+                               window_.width_half_minutes,
+                               chosen_.minutes.has_value(), point_noise_});
+  }
+
+  const WindowTemplate& feet() const { return own_ ? *own_ : window_; }
+
+  // A peak that is not seen has none: it keeps the template's.
+  void take_own_feet() {
+    if (!chosen_.minutes) return;
+    const double apex = *chosen_.minutes;
+    const Outcome<PlacedWindow> placed =
+        place_at_own_feet(stretch_, chosen_.neighbours, apex,
+                          window_.width_half_minutes, point_noise_);
+    if (!placed) return;
+    own_ = window_;
+    own_->left_minutes = apex - placed->left.minutes;
+    own_->right_minutes = placed->right.minutes - apex;
   }
 
   void state_response() {
@@ -152,7 +173,7 @@ class Measurement {
   }
 
   void part_from_neighbours() {
-    parted_ = part_overlap(stretch_, chosen_, placed_, window_,
+    parted_ = part_overlap(stretch_, chosen_, placed_, feet(),
                            target_.integration.overlap, peak_.retention_minutes,
                            point_noise_, peak_.reasons);
     if (!parted_) return;
@@ -335,6 +356,7 @@ class Measurement {
   double point_noise_ = 0.0;
   SmoothedStretch stretch_;
   ChosenApex chosen_;
+  std::optional<WindowTemplate> own_;  // with the feet found
   PlacedWindow placed_;
   std::optional<PartedPeak> parted_;
   std::optional<TemplateFit> fit_;

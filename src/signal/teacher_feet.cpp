@@ -9,6 +9,7 @@
 #include "loqsmith/signal/integrate.hpp"
 #include "loqsmith/signal/model_overlap.hpp"
 #include "loqsmith/signal/noise.hpp"
+#include "loqsmith/signal/own_feet.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/point_noise.hpp"
@@ -18,10 +19,7 @@
 namespace loqsmith {
 namespace {
 
-constexpr double kFirstWidths = 3.0;
 constexpr double kSliceWidths = 12.0;
-constexpr double kRelativeFloor = 0.001;
-constexpr double kStillFalling = 0.1;
 constexpr double kOverlapShare = 0.025;
 constexpr double kSharpHeight = 50.0;
 
@@ -46,37 +44,8 @@ class Teacher {
   const SmoothedStretch& stretch() const { return stretch_; }
   const std::vector<Summit>& summits() const { return summits_; }
 
-  Outcome<PlacedWindow> place(double left, double right) const {
-    // A straight line also where a baseline has been taken off: what that left
-    // below the noise must not keep the signal above the level of a foot.
-    return place_window(stretch_, summits_,
-                        {apex_, left, right, width_half_, true, noise_});
-  }
-
-  // The longest first window that leaves room for a baseline.
-  double first_reach(bool left) const {
-    const double room = left ? apex_ - stretch_.minutes.front()
-                             : stretch_.minutes.back() - apex_;
-    return std::min(kFirstWidths * width_half_, room - 0.5 * width_half_);
-  }
-
-  // Distance of the foot on one side; the placed window holds the valley.
-  double foot(const PlacedWindow& window, bool left) const {
-    const double height =
-        smoothed_at(stretch_, apex_) - window.baseline_at(apex_);
-    const double level =
-        std::max(stretch_.gain * noise_, kRelativeFloor * height);
-    const double end =
-        left ? apex_ - window.left.minutes : window.right.minutes - apex_;
-    const double step = 0.02 * width_half_;
-    double out = 0.5 * width_half_;
-    for (; out < end; out += step) {
-      const double here = above(window, out, left);
-      if (here <= level) return refine(window, out, step, level, left);
-      const double before = above(window, out - 0.5 * width_half_, left);
-      if (here < kStillFalling * height && before - here < level) return out;
-    }
-    return end;
+  Outcome<PlacedWindow> place() const {
+    return place_at_own_feet(stretch_, summits_, apex_, width_half_, noise_);
   }
 
   bool overlapped(const PlacedWindow& window, bool left) const {
@@ -101,21 +70,6 @@ class Teacher {
       apex_ = summit.minutes;
       seen_ = true;
     }
-  }
-
-  double above(const PlacedWindow& window, double out, bool left) const {
-    const double t = left ? apex_ - out : apex_ + out;
-    return smoothed_at(stretch_, t) - window.baseline_at(t);
-  }
-
-  // Where the level was crossed between the last two looks.
-  double refine(const PlacedWindow& window, double out, double step,
-                double level, bool left) const {
-    const double here = above(window, out, left);
-    const double before = above(window, out - step, left);
-    if (!(before > here)) return out;
-    const double share = (before - level) / (before - here);
-    return out - step + std::clamp(share, 0.0, 1.0) * step;
   }
 
   double noise_;
@@ -175,14 +129,8 @@ Outcome<TeacherFeet> find_teacher_feet(const Trace& trace,
   if (!teacher.has_peak()) {
     return NotApplicable{"no-peak: none at the smoothing of its width"};
   }
-  Outcome<PlacedWindow> window =
-      teacher.place(teacher.first_reach(true), teacher.first_reach(false));
+  const Outcome<PlacedWindow> window = teacher.place();
   if (!window) return NotApplicable{window.reason()};
-  for (int round = 0; round < 2; ++round) {
-    window = teacher.place(teacher.foot(*window, true),
-                           teacher.foot(*window, false));
-    if (!window) return NotApplicable{window.reason()};
-  }
 
   const SmoothedStretch& stretch = teacher.stretch();
   TeacherFeet feet;

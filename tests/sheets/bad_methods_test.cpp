@@ -85,7 +85,7 @@ TEST(BadMethods, GoodOnesAreNotRefused) {
 TEST(BadMethods, AllProblemsAreSaidAtOnceInTheirOrder) {
   std::string text = kExampleMethod;
   text = test::replaced(text, "response=\"area\"", "respons=\"area\"");
-  text = test::replaced(text, "baseline=\"valley\"", "bounds=\"own\"");
+  text = test::replaced(text, "baseline=\"valley\"", "bounds=\"feet\"");
   text = test::replaced(text, "trace=\"uv220\"", "trace=\"uv\"");
   text = test::replaced(text, "weight=\"1/x\"", "weight=\"1/y\"");
   text = test::replaced(text, "85 115", "85");
@@ -97,8 +97,8 @@ TEST(BadMethods, AllProblemsAreSaidAtOnceInTheirOrder) {
             "minimum-width, hold-up-time in <integration>, found the attribute "
             "\"respons\"; did you mean \"response\"?");
   EXPECT_EQ(describe(problems[1]),
-            "method.xml:8:31: expected \"template\", found bounds=\"own\", not "
-            "available in this version");
+            "method.xml:8:31: expected \"template\" or \"own\", found "
+            "bounds=\"feet\"");
   EXPECT_EQ(problems[2].line, 11U);
   EXPECT_EQ(problems[3].line, 16U);
   EXPECT_EQ(problems[4].line, 27U);

@@ -135,14 +135,6 @@ TEST(MeasurePeak, NoSignal) {
   EXPECT_TRUE(begins_with(peak.reason(), "no-signal"));
 }
 
-TEST(MeasurePeak, WhatThisVersionDoesNotComputeIsRefused) {
-  TargetSettings target = target_at(5.0);
-  target.integration.bounds = IntegrationSettings::Bounds::Own;
-  const auto peak = measured(simulate_trace(sample(300.0), "own"), target);
-  ASSERT_FALSE(peak);
-  EXPECT_TRUE(begins_with(peak.reason(), "not-available"));
-}
-
 TEST(MeasurePeak, NarrowThingsAreNoPeaksWhereAWidthIsAskedFor) {
   TargetSettings target = target_at(5.0);
   target.integration.minimum_width_minutes = 0.1;

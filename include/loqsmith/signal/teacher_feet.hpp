@@ -25,19 +25,12 @@ struct TeacherFeet {
 
 /// Where a peak begins and ends.
 ///
-/// A first baseline is laid three widths at half height away on either side
-/// (nearer where a neighbour or the end of the trace is). Going outwards from
-/// the apex, the foot is where the smoothed signal above the baseline comes
-/// down to the noise: to one standard deviation of a smoothed point, or 0.1 %
-/// of the height where that is more; or, below a tenth of the height, where it
-/// has stopped falling (less than that noise in half a width), so that the
-/// foot does not creep along a tail or a bent baseline. A second baseline just
-/// outside these feet then gives the final ones. A neighbour's valley ends the
-/// way; it counts as overlap when the signal there is still above 2.5 % of the
-/// height. Where the settings' overlap is `model` the peak is fitted together
-/// with its neighbours. Where one overlaps, width and overlapped feet are those
-/// of the fitted peak (0.1 % of its height), so that the template spans a whole
-/// peak even where none of the standards shows one.
+/// Its own feet are found as own_feet.hpp has it; a neighbour's valley counts
+/// as overlap when the signal there is still above 2.5 % of the height. Where
+/// the settings' overlap is `model` the peak is fitted together with its
+/// neighbours. Where one overlaps, width and overlapped feet are those of the
+/// fitted peak (0.1 % of its height), so that the template spans a whole peak
+/// even where none of the standards shows one.
 ///
 /// @param apex        as seen so far, minutes
 /// @param width_half  as seen so far
