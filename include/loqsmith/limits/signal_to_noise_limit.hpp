@@ -25,6 +25,9 @@ namespace loqsmith {
 /// Findings: height-over-noise (H/h at the limits, which is half the ratio of
 /// the pharmacopoeias), line-through-zero, far-below-standards.
 ///
+/// No confidence bounds: how the noise figure itself scatters is not known, and
+/// it would be the larger part of them.
+///
 /// Source: ICH Q2(R2) (2023) 3.2.2 (3:1 and 10:1); Ph. Eur. 2.2.46 and USP
 /// <621>, S/N = 2H/h; from memory.
 Outcome<LimitEstimate> signal_to_noise_limit(
