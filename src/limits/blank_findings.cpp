@@ -6,6 +6,7 @@
 #include "loqsmith/limits/words.hpp"
 #include "loqsmith/numerics/distributions.hpp"
 #include "loqsmith/numerics/least_squares.hpp"
+#include "loqsmith/numerics/shapiro_wilk.hpp"
 
 namespace loqsmith {
 namespace {
@@ -13,6 +14,7 @@ namespace {
 // One false alarm in a hundred clean nights.
 constexpr double kAlarmRate = 0.01;
 constexpr std::size_t kLeastForDrift = 5;
+constexpr std::size_t kLeastForNormality = 5;
 // Spread of low peaks over that of blanks which a limit may leave out.
 constexpr double kSpreadRatio = 1.2;
 
@@ -103,6 +105,22 @@ void judge_outlier(LimitEstimate& estimate, const BlankSample& sample) {
            figure(critical) + "); it stays in"});
 }
 
+// One blank alone that lies far off is said already.
+void judge_normality(LimitEstimate& estimate, const BlankSample& sample) {
+  if (sample.n() < kLeastForNormality) return;
+  std::vector<double> response;
+  for (const BlankResponse& blank : sample.blanks)
+    response.push_back(blank.response);
+  const Outcome<ShapiroWilk> test = shapiro_wilk(response);
+  if (!test || !(test->p < kAlarmRate)) return;
+  estimate.findings.push_back(
+      {Grade::Caution, "blanks-not-normal",
+       "the blanks do not scatter like normal values (Shapiro and Wilk, W " +
+           figure(test->w) + ", p " + figure(test->p) +
+           "): multiples of their standard deviation do not promise the usual "
+           "rates"});
+}
+
 void judge_drift(LimitEstimate& estimate, const BlankSample& sample) {
   if (sample.n() < kLeastForDrift) return;
   std::vector<double> order, response;
@@ -133,7 +151,9 @@ void judge_blanks(LimitEstimate& estimate, const BlankSample& sample,
   judge_left_out(estimate, sample, settings);
   judge_bounds(estimate, evidence);
   judge_estimated_baseline(estimate, sample, evidence);
+  const std::size_t before = estimate.findings.size();
   judge_outlier(estimate, sample);
+  if (estimate.findings.size() == before) judge_normality(estimate, sample);
   judge_drift(estimate, sample);
 }
 

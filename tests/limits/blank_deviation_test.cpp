@@ -291,6 +291,19 @@ TEST(BlankFindings, OneFarFromTheOthers) {
                        "blank-outlier"));
 }
 
+// Two heaps: no single one lies far off, and no drift.
+TEST(BlankFindings, NotNormal) {
+  const std::vector<double> heaps = {1.00, 2.00, 1.01, 2.01, 2.02, 1.02,
+                                     1.03, 2.03, 2.00, 1.01, 1.02, 2.01};
+  const auto found = limit(evidence_of(heaps, known_line(1.5, 1)));
+  ASSERT_TRUE(found);
+  ASSERT_TRUE(finding(*found, "blanks-not-normal"));
+  EXPECT_EQ(finding(*found, "blanks-not-normal")->grade, Grade::Caution);
+  EXPECT_FALSE(finding(*found, "blank-outlier"));
+  EXPECT_FALSE(finding(*limit(evidence_of(kBlanks, known_line(1.25, 0.229))),
+                       "blanks-not-normal"));
+}
+
 TEST(BlankFindings, Drift) {
   const auto found = limit(
       evidence_of({1.0, 1.2, 1.3, 1.55, 1.7, 1.8, 2.1}, known_line(1.5, 1)));

@@ -46,8 +46,9 @@ BlankKind blank_kind_of(const LimitSettings& settings,
 double false_positive_rate(const BlankSample& sample, double threshold);
 
 /// Findings about the blanks themselves: too few of them, integration over
-/// found feet, what an estimated baseline does to them, one far from the others, a drift over the run. Nothing is ever
-/// deleted.
+/// found feet, what an estimated baseline does to them, one far from the
+/// others, values that are not normal (Shapiro and Wilk, 1 %; where no single
+/// one lies far off), a drift over the run. Nothing is ever deleted.
 void judge_blanks(LimitEstimate& estimate, const BlankSample& sample,
                   const LimitEvidence& evidence, const LimitSettings& settings);
 
