@@ -62,14 +62,15 @@ std::optional<Candidate> examine(const SmoothedStretch& stretch,
   Candidate candidate{summit, 0.0, 0.0};
   candidate.height = summit.value - placed->baseline_at(summit.minutes);
   if (!(candidate.height > 0.0)) return {};
-  candidate.deviation = std::max(
-      stretch.rounding,
-      weighted_noise(smoothed_height_weights(stretch, *placed, summit.minutes),
-                     noise));
+  const double threshold = target.integration.threshold;
   if (!(candidate.height >=
-        target.integration.threshold * candidate.deviation)) {
+        threshold * least_smoothed_height_noise(stretch, *placed,
+                                                summit.minutes, noise))) {
     return {};
   }
+  candidate.deviation =
+      smoothed_height_noise(stretch, *placed, summit.minutes, noise);
+  if (!(candidate.height >= threshold * candidate.deviation)) return {};
   if (is_beside_dip(stretch, *placed, candidate)) return {};
   const double least = target.integration.minimum_width_minutes;
   if (least > 0.0 &&

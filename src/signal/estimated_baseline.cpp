@@ -122,8 +122,9 @@ std::optional<EstimatedBaseline> estimate_baseline(const Trace& near,
                                                    Baseline baseline,
                                                    double width_half_minutes,
                                                    double longer_side_minutes) {
+  if (!is_estimated(baseline)) return {};
   const double step = typical_step(near.minutes);
-  if (!is_estimated(baseline) || !(step > 0.0)) return {};
+  if (!(step > 0.0)) return {};
   const std::vector<double> bend = bend_below(near, width_half_minutes, step);
   Trace rest;
   rest.minutes = near.minutes;
@@ -136,17 +137,19 @@ std::optional<EstimatedBaseline> estimate_baseline(const Trace& near,
   return found;
 }
 
-SmoothedStretch smooth_stretch_above(const Trace& near,
+SmoothedStretch smooth_stretch_above(Trace near,
                                      const IntegrationSettings& settings,
                                      double width_half_minutes,
                                      double longer_side_minutes,
                                      const NoiseModel& noise) {
-  const int points = smoothing_length(settings, width_half_minutes,
-                                      typical_step(near.minutes));
+  const Spacing spacing = spacing_of(near.minutes);
+  const int points =
+      smoothing_length(settings, width_half_minutes, spacing.step);
+  const int order = settings.smoothing_order;
   const auto baseline = estimate_baseline(
       near, settings.baseline, width_half_minutes, longer_side_minutes);
   if (!baseline) {
-    return smooth_stretch(near, points, settings.smoothing_order, noise);
+    return smooth_stretch(std::move(near), spacing, points, order, noise);
   }
   Trace above;
   above.minutes = near.minutes;
@@ -154,8 +157,8 @@ SmoothedStretch smooth_stretch_above(const Trace& near,
     above.signal.push_back(near.signal[i] - baseline->signal[i]);
   }
   SmoothedStretch stretch =
-      smooth_stretch(above, points, settings.smoothing_order, noise);
-  stretch.detector = near.signal;
+      smooth_stretch(std::move(above), spacing, points, order, noise);
+  stretch.detector = std::move(near.signal);
   stretch.baseline_settled = baseline->settled;
   return stretch;
 }

@@ -50,9 +50,10 @@ Trace surroundings(const Trace& trace, const TargetSettings& target,
 // point to point: a sample may be noisier than the blank.
 NoiseModel noise_of_this_trace(const Trace& near,
                                const Outcome<NoiseEstimate>& noise) {
-  const double own = point_to_point_noise(near.signal);
-  if (!noise) return white_noise(own);
+  if (!noise) return white_noise(point_to_point_noise(near.signal));
   const double known = noise->model.point_to_point();
+  if (is_surely_quieter(near.signal, known)) return noise->model;
+  const double own = point_to_point_noise(near.signal);
   if (own <= known) return noise->model;
   return known > 0.0 ? noise->model.scaled(own / known) : white_noise(own);
 }
@@ -104,9 +105,8 @@ class Measurement {
                            " in the window, at least 5 are needed"};
     }
     if (points < kFewPoints) add_reason("few-points");
-    const bool whole =
-        covers(stretch_.minutes, expected_ - target_.window_minutes,
-               expected_ + target_.window_minutes);
+    const bool whole = covers(stretch_, expected_ - target_.window_minutes,
+                              expected_ + target_.window_minutes);
     if (!whole && !chosen_.minutes) {
       return NotApplicable{
           "window-not-covered: no peak in what the trace holds of the window"};
@@ -308,11 +308,11 @@ class Measurement {
   std::vector<double> response_weights() const {
     if (by(IntegrationSettings::Response::Height)) {
       if (parted_) return parted_->height_weights;
-      return height_weights(stretch_, placed_, peak_.retention_minutes);
+      return height_weights(stretch_, placed_, peak_.retention_minutes).values;
     }
     if (peak_.template_response) return fit_->weights;
     if (parted_) return parted_->area_weights;
-    return area_weights(stretch_, placed_);
+    return area_weights(stretch_, placed_).values;
   }
 
   void name_troubles() {

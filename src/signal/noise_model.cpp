@@ -127,10 +127,14 @@ double weighted_noise(const std::vector<double>& weights,
   const auto first = std::find_if(weights.begin(), weights.end(), counts);
   const auto last = std::find_if(weights.rbegin(), weights.rend(), counts);
   if (first == weights.end()) return 0.0;
-  for (const double weight : std::span(first, last.base())) {
+  const std::span<const double> counting(first, last.base());
+  for (const double weight : counting) squares += weight * weight;
+  if (!(noise.creeping_variance > 0.0)) {
+    return std::sqrt(std::max(0.0, noise.white_variance * squares));
+  }
+  for (const double weight : counting) {
     crossed += weight * carried;
     carried = noise.correlation * (carried + weight);
-    squares += weight * weight;
   }
   const double variance = noise.white_variance * squares +
                           noise.creeping_variance * (squares + 2.0 * crossed);

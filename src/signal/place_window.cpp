@@ -8,6 +8,7 @@
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/point_noise.hpp"
 #include "loqsmith/signal/ringing.hpp"
+#include "loqsmith/signal/time_index.hpp"
 
 namespace loqsmith {
 namespace {
@@ -112,16 +113,9 @@ class Side {
   std::pair<std::size_t, std::size_t> range(double from, double to) const {
     const std::vector<double>& t = stretch_.minutes;
     if (!(to > from)) return {0, 0};
-    const auto index = [&](double minutes) {
-      return static_cast<std::size_t>(
-          std::lower_bound(t.begin(), t.end(), minutes) - t.begin());
-    };
-    const auto beyond = [&](double minutes) {
-      return static_cast<std::size_t>(
-          std::upper_bound(t.begin(), t.end(), minutes) - t.begin());
-    };
-    return left_ ? std::pair{beyond(at(to)), beyond(at(from))}
-                 : std::pair{index(at(from)), index(at(to))};
+    return left_ ? std::pair{first_after(t, at(to)), first_after(t, at(from))}
+                 : std::pair{first_at_or_after(t, at(from)),
+                             first_at_or_after(t, at(to))};
   }
 
   std::size_t points_between(double from, double to) const {
@@ -188,19 +182,19 @@ void mend_missing_anchors(const SmoothedStretch& stretch,
   add_reason(window, true, "baseline-one-sided");
 }
 
+// What rounding alone may leave of a prominence.
+double rounding_of_smoothed(const SmoothedStretch& stretch) {
+  return 1e-12 * std::abs(*std::max_element(stretch.smoothed.begin(),
+                                            stretch.smoothed.end()));
+}
+
 double noise_around(const SmoothedStretch& stretch, const Summit& summit,
                     double width_half) {
   const std::vector<double>& t = stretch.minutes;
-  const auto first =
-      std::lower_bound(t.begin(), t.end(), summit.minutes - width_half) -
-      t.begin();
-  const auto last =
-      std::upper_bound(t.begin(), t.end(), summit.minutes + width_half) -
-      t.begin();
+  const std::size_t first = first_at_or_after(t, summit.minutes - width_half);
+  const std::size_t last = first_after(t, summit.minutes + width_half);
   return point_to_point_noise(
-      std::span(stretch.signal)
-          .subspan(static_cast<std::size_t>(first),
-                   static_cast<std::size_t>(last - first)));
+      std::span(stretch.signal).subspan(first, last - first));
 }
 
 }  // namespace
@@ -251,14 +245,12 @@ std::vector<Summit> significant_summits(const SmoothedStretch& stretch,
                                         double multiple, double noise,
                                         double width_half) {
   std::vector<Summit> significant;
-  const double rounding =
-      summits.empty()
-          ? 0.0
-          : 1e-12 * std::abs(*std::max_element(stretch.smoothed.begin(),
-                                               stretch.smoothed.end()));
+  std::optional<double> rounding;  // few traces need it
   const double unit = multiple * std::sqrt(2.0) * stretch.gain;
   for (const Summit& summit : summits) {
-    if (!(summit.prominence > std::max(unit * noise, rounding))) continue;
+    if (!(summit.prominence > unit * noise)) continue;
+    if (!rounding) rounding = rounding_of_smoothed(stretch);
+    if (!(summit.prominence > *rounding)) continue;
     const double here = noise_around(stretch, summit, width_half);
     if (!(summit.prominence > unit * here)) continue;
     if (is_ringing(stretch, summits, summit, multiple, noise)) continue;

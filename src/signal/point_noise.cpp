@@ -26,11 +26,12 @@ LineNoise first_line(std::span<const double> x, std::span<const double> y) {
   const std::size_t third = std::max<std::size_t>(1, x.size() / 3);
   LineNoise line = line_through(median(x.first(third)), median(y.first(third)),
                                 median(x.last(third)), median(y.last(third)));
-  std::vector<double> distances;
+  std::vector<double> distances(x.size());
   for (std::size_t i = 0; i < x.size(); ++i) {
-    distances.push_back(std::abs(residual(line, x[i], y[i])));
+    distances[i] = std::abs(residual(line, x[i], y[i]));
   }
-  line.standard_deviation = kDeviationPerMedianDeviation * median(distances);
+  line.standard_deviation =
+      kDeviationPerMedianDeviation * median_in_place(distances);
   return line;
 }
 
@@ -56,26 +57,48 @@ LineNoise least_squares_line(const std::vector<double>& x,
   return line;
 }
 
+// Its size.
+double third_difference(std::span<const double> y, std::size_t i) {
+  return std::abs((y[i + 3] - y[i]) - 3.0 * (y[i + 2] - y[i + 1]));
+}
+
 }  // namespace
 
 double point_to_point_noise(std::span<const double> signal) {
   if (signal.size() < 4) return 0.0;
-  std::vector<double> sizes;
-  for (std::size_t i = 0; i + 3 < signal.size(); ++i) {
-    sizes.push_back(std::abs((signal[i + 3] - signal[i]) -
-                             3.0 * (signal[i + 2] - signal[i + 1])));
+  std::vector<double> sizes(signal.size() - 3);
+  for (std::size_t i = 0; i < sizes.size(); ++i) {
+    sizes[i] = third_difference(signal, i);
   }
-  return kDeviationPerMedianDeviation * median(sizes) / std::sqrt(20.0);
+  return kDeviationPerMedianDeviation * median_in_place(sizes) /
+         std::sqrt(20.0);
+}
+
+bool is_surely_quieter(std::span<const double> signal, double noise) {
+  if (signal.size() < 4) return true;
+  constexpr double kRounding = 1.0 - 1e-12;
+  const double most =
+      kRounding * noise * std::sqrt(20.0) / kDeviationPerMedianDeviation;
+  const std::size_t n = signal.size() - 3;
+  std::size_t within = 0;
+  for (std::size_t i = 0; i < n; ++i) {
+    within += third_difference(signal, i) <= most ? 1 : 0;
+  }
+  return within > n / 2;
 }
 
 LineNoise noise_about_line(std::span<const double> minutes,
                            std::span<const double> signal) {
   LineNoise line = first_line(minutes, signal);
   std::size_t kept_before = 0;
+  std::vector<double> x;
+  std::vector<double> y;
+  x.reserve(minutes.size());
+  y.reserve(minutes.size());
   for (int round = 0; round < kMostRounds; ++round) {
     const double cut = kCut * line.standard_deviation;
-    std::vector<double> x;
-    std::vector<double> y;
+    x.clear();
+    y.clear();
     for (std::size_t i = 0; i < minutes.size(); ++i) {
       if (std::abs(residual(line, minutes[i], signal[i])) <= cut) {
         x.push_back(minutes[i]);

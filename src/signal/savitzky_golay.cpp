@@ -3,8 +3,6 @@
 #include <algorithm>
 #include <cmath>
 
-#include "loqsmith/signal/local_fit.hpp"
-
 namespace loqsmith {
 namespace {
 
@@ -18,11 +16,13 @@ Jet times_shifted(const Jet& p, double u) {
 bool even_to(std::span<const double> minutes, double share) {
   const double mean_step = (minutes.back() - minutes.front()) /
                            static_cast<double>(minutes.size() - 1);
+  const double most = share * mean_step;
+  std::size_t even = 1;
   for (std::size_t i = 1; i < minutes.size(); ++i) {
     const double step = minutes[i] - minutes[i - 1];
-    if (!(std::abs(step - mean_step) <= share * mean_step)) return false;
+    even += std::abs(step - mean_step) <= most ? 1 : 0;
   }
-  return true;
+  return even == minutes.size();
 }
 
 double weighted(std::span<const double> weights,
@@ -98,21 +98,6 @@ bool evenly_spaced(std::span<const double> minutes) {
   return minutes.size() < 2 || even_to(minutes, 0.45 * kEven);
 }
 
-void smooth_ends(std::span<const double> minutes,
-                 std::span<const double> signal, std::size_t half, int order,
-                 int derivative, std::vector<double>& result) {
-  const std::size_t n = signal.size();
-  const std::size_t points = std::min(2 * half + 1, n);
-  const auto d = static_cast<std::size_t>(derivative);
-  const LocalFit first(minutes.first(points), signal.first(points), order);
-  const std::size_t middle = std::min(half, n);
-  for (std::size_t i = 0; i < middle; ++i) result[i] = first.at(minutes[i])[d];
-  const LocalFit last(minutes.last(points), signal.last(points), order);
-  for (std::size_t i = n - std::min(half, n - middle); i < n; ++i) {
-    result[i] = last.at(minutes[i])[d];
-  }
-}
-
 std::vector<double> savitzky_golay(std::span<const double> minutes,
                                    std::span<const double> signal, int points,
                                    int order, int derivative) {
@@ -125,7 +110,9 @@ std::vector<double> savitzky_golay(std::span<const double> minutes,
   const Length used = usable_length(n, points, order, derivative);
   // Of too few points all are used, for all places alike.
   const std::size_t half = used.points % 2 == 1 ? used.points / 2 : n;
-  smooth_ends(minutes, signal, half, used.order, derivative, result);
+  const auto d = static_cast<std::size_t>(derivative);
+  fit_ends(minutes, signal, half, used.order,
+           [&](std::size_t i, const Jet& jet) { result[i] = jet[d]; });
   const std::vector<double> classical = savitzky_golay_weights(
       static_cast<int>(used.points), used.order, derivative);
   const bool all_even = evenly_spaced(minutes);

@@ -140,8 +140,8 @@ class Skim {
         placement_.found ? height_over(line, placement_.apex) : 0.0;
     if (!rides(height, above_baseline(parent))) return {};
     const Foot& near = parent_left ? line.left : line.right;
-    if (!placement_.found && above_baseline(near.minutes) >
-                                 kTailShare * above_baseline(parent)) {
+    if (!placement_.found &&
+        above_baseline(near.minutes) > kTailShare * above_baseline(parent)) {
       return {};
     }
     return parted(line, {});
@@ -221,13 +221,15 @@ class Skim {
     peak.area = integrate_window(stretch_, window);
     peak.height =
         signal_near(stretch_, peak.apex) - window.baseline_at(peak.apex);
-    peak.area_weights = area_weights(stretch_, window);
-    peak.height_weights = height_weights(stretch_, window, peak.apex);
+    const std::size_t points = stretch_.minutes.size();
+    peak.area_weights = area_weights(stretch_, window).over(points);
+    peak.height_weights =
+        height_weights(stretch_, window, peak.apex).over(points);
     for (const PlacedWindow& rider : riders) {
       peak.area -= integrate_window(stretch_, rider);
-      const std::vector<double> off = area_weights(stretch_, rider);
-      for (std::size_t i = 0; i < off.size(); ++i) {
-        peak.area_weights[i] -= off[i];
+      const PointWeights off = area_weights(stretch_, rider);
+      for (std::size_t i = 0; i < off.values.size(); ++i) {
+        peak.area_weights[off.first + i] -= off.values[i];
       }
     }
     return peak;

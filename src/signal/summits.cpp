@@ -7,15 +7,15 @@
 #include "loqsmith/numerics/mean.hpp"
 #include "loqsmith/signal/moving_parabola.hpp"
 #include "loqsmith/signal/savitzky_golay.hpp"
+#include "loqsmith/signal/time_index.hpp"
 #include "loqsmith/signal/trace_trouble.hpp"
 
 namespace loqsmith {
 namespace {
 
 // Signal of a spike replaced by what its neighbours say.
-std::vector<double> without_spikes(const Trace& stretch,
+std::vector<double> without_spikes(std::vector<double> signal,
                                    const std::vector<std::size_t>& spikes) {
-  std::vector<double> signal = stretch.signal;
   for (const std::size_t i : spikes) {
     signal[i] = 0.5 * (signal[i - 1] + signal[i + 1]);
   }
@@ -31,33 +31,43 @@ double smoothing_gain(int points, int order, const NoiseModel& noise) {
          deviation;
 }
 
-std::size_t first_at_or_after(const std::vector<double>& minutes, double at) {
-  return static_cast<std::size_t>(
-      std::lower_bound(minutes.begin(), minutes.end(), at) - minutes.begin());
-}
-
-// Lowest value on the way from summit k to the next higher one (or the end).
-double valley_towards(const std::vector<Summit>& summits,
-                      const std::vector<double>& valleys, std::size_t k,
-                      bool left) {
-  double lowest = summits[k].value;
-  for (std::size_t i = k;;) {
-    lowest = std::min(lowest, valleys[left ? i : i + 1]);
-    if (left ? i == 0 : i + 1 == summits.size()) return lowest;
-    i = left ? i - 1 : i + 1;
-    if (summits[i].value > summits[k].value) return lowest;
+// Lowest value on the way from each summit to the next higher one that came
+// before it (or to the beginning), in the order in which they are shown.
+class WayBack {
+ public:
+  // @param valley  lowest value since the summit before
+  double lowest(double summit, double valley) {
+    while (!higher_.empty() && !(higher_.back().summit > summit)) {
+      valley = std::min(valley, higher_.back().lowest);
+      higher_.pop_back();
+    }
+    higher_.push_back({summit, valley});
+    return std::min(summit, valley);
   }
-}
+
+ private:
+  struct Seen {
+    double summit;
+    double lowest;
+  };
+  std::vector<Seen> higher_;  // each is higher than those behind it
+};
 
 // Lowest value between two places that lie between points: of these two and
-// of the points [first, last) that part them.
+// of the points [first, last) that part them. Two at a time: one alone waits
+// for its own last comparison.
 double lowest_of(const SmoothedStretch& stretch, std::size_t first,
                  std::size_t last, double one_end, double other_end) {
-  double lowest = std::min(one_end, other_end);
-  for (std::size_t i = first; i < last; ++i) {
-    lowest = std::min(lowest, stretch.smoothed[i]);
+  const std::vector<double>& y = stretch.smoothed;
+  double even = one_end;
+  double odd = other_end;
+  std::size_t i = first;
+  for (; i + 1 < last; i += 2) {
+    even = std::min(even, y[i]);
+    odd = std::min(odd, y[i + 1]);
   }
-  return lowest;
+  if (i < last) even = std::min(even, y[i]);
+  return std::min(even, odd);
 }
 
 // @param behind  first point behind each summit
@@ -77,10 +87,15 @@ void measure_prominence(const SmoothedStretch& stretch,
   }
   valleys.push_back(lowest_of(stretch, from, stretch.smoothed.size(), before,
                               stretch.smoothed.back()));
+  WayBack to_the_left;
   for (std::size_t k = 0; k < summits.size(); ++k) {
-    const double higher = std::max(valley_towards(summits, valleys, k, true),
-                                   valley_towards(summits, valleys, k, false));
-    summits[k].prominence = std::max(0.0, summits[k].value - higher);
+    summits[k].prominence = to_the_left.lowest(summits[k].value, valleys[k]);
+  }
+  WayBack to_the_right;
+  for (std::size_t k = summits.size(); k-- > 0;) {
+    const double right = to_the_right.lowest(summits[k].value, valleys[k + 1]);
+    summits[k].prominence = std::max(
+        0.0, summits[k].value - std::max(summits[k].prominence, right));
   }
 }
 
@@ -101,17 +116,20 @@ Trace cut_trace(const Trace& trace, double from_minutes, double to_minutes) {
 }
 
 double typical_step(std::span<const double> minutes) {
-  if (minutes.size() < 2) return 0.0;
+  return spacing_of(minutes).step;
+}
+
+Spacing spacing_of(std::span<const double> minutes) {
+  const std::size_t n = minutes.size();
+  if (n < 2) return {};
   if (evenly_spaced(minutes)) {
-    return (minutes.back() - minutes.front()) /
-           static_cast<double>(minutes.size() - 1);
+    return {(minutes.back() - minutes.front()) / static_cast<double>(n - 1),
+            true};
   }
-  std::vector<double> steps;
-  steps.reserve(minutes.size());
-  for (std::size_t i = 1; i < minutes.size(); ++i) {
-    steps.push_back(minutes[i] - minutes[i - 1]);
-  }
-  return median(steps);
+  std::vector<double> steps(n - 1);
+  for (std::size_t i = 1; i < n; ++i)
+    steps[i - 1] = minutes[i] - minutes[i - 1];
+  return {median_in_place(steps), false};
 }
 
 int smoothing_length(const IntegrationSettings& settings,
@@ -126,10 +144,11 @@ std::vector<std::size_t> find_spikes(std::span<const double> signal,
                                      double noise) {
   constexpr double kNoiseMultiple = 5.0;
   constexpr double kOwnShare = 0.75;
+  const double least = std::max(0.0, kNoiseMultiple * noise);
   std::vector<std::size_t> spikes;
   for (std::size_t i = 1; i + 1 < signal.size(); ++i) {
     const double excess = signal[i] - std::max(signal[i - 1], signal[i + 1]);
-    if (!(excess > 0.0) || !(excess > kNoiseMultiple * noise)) continue;
+    if (!(excess > least)) continue;
     const std::size_t first = i >= 3 ? i - 3 : 0;
     const std::size_t last = std::min(i + 4, signal.size());
     const double level = median(signal.subspan(first, last - first));
@@ -138,15 +157,27 @@ std::vector<std::size_t> find_spikes(std::span<const double> signal,
   return spikes;
 }
 
-SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
+SmoothedStretch smooth_stretch(Trace stretch, int points, int order,
                                const NoiseModel& noise) {
+  const Spacing spacing = spacing_of(stretch.minutes);
+  return smooth_stretch(std::move(stretch), spacing, points, order, noise);
+}
+
+SmoothedStretch smooth_stretch(Trace stretch, const Spacing& spacing,
+                               int points, int order, const NoiseModel& noise) {
   SmoothedStretch ready;
-  ready.minutes = stretch.minutes;
-  ready.signal = stretch.signal;
-  ready.spikes = find_spikes(stretch.signal, noise.standard_deviation());
-  const std::vector<double> clean = without_spikes(stretch, ready.spikes);
+  ready.spacing = spacing;
+  ready.minutes = std::move(stretch.minutes);
+  ready.signal = std::move(stretch.signal);
+  ready.spikes = find_spikes(ready.signal, noise.standard_deviation());
+  std::vector<double> mended;
+  if (!ready.spikes.empty()) {
+    mended = without_spikes(ready.signal, ready.spikes);
+  }
+  const std::vector<double>& clean =
+      ready.spikes.empty() ? ready.signal : mended;
   ValueAndSlope smoothed =
-      smooth_value_and_slope(ready.minutes, clean, points, order);
+      smooth_value_and_slope(ready.minutes, clean, points, order, spacing.even);
   ready.smoothed = std::move(smoothed.value);
   ready.slope = std::move(smoothed.slope);
   ready.points = points > order ? points : 1;
@@ -162,24 +193,23 @@ std::vector<Summit> find_summits(const SmoothedStretch& stretch) {
   const std::vector<double>& slope = stretch.slope;
   const std::vector<double>& t = stretch.minutes;
   const std::size_t n = slope.size();
-  std::size_t up = n;  // last point on the rise
-  for (std::size_t i = 0; i < n; ++i) {
-    if (slope[i] > 0.0) {
-      up = i;
-    } else if (slope[i] < 0.0 && up < n) {
-      const double share = slope[up] / (slope[up] - slope[i]);
-      const double at = t[up] + share * (t[i] - t[up]);
-      std::size_t next = up + 1;
-      while (next < i && t[next] <= at) ++next;
-      const double along = (at - t[next - 1]) / (t[next] - t[next - 1]);
-      summits.push_back(
-          {at,
-           stretch.smoothed[next - 1] +
-               along * (stretch.smoothed[next] - stretch.smoothed[next - 1]),
-           0.0});
-      behind.push_back(next);
-      up = n;
-    }
+  for (std::size_t i = 0;;) {
+    while (i < n && !(slope[i] > 0.0)) ++i;
+    while (i < n && !(slope[i] < 0.0)) ++i;
+    if (i == n) break;
+    std::size_t up = i - 1;  // last point on the rise
+    while (!(slope[up] > 0.0)) --up;
+    const double share = slope[up] / (slope[up] - slope[i]);
+    const double at = t[up] + share * (t[i] - t[up]);
+    std::size_t next = up + 1;
+    while (next < i && t[next] <= at) ++next;
+    const double along = (at - t[next - 1]) / (t[next] - t[next - 1]);
+    summits.push_back(
+        {at,
+         stretch.smoothed[next - 1] +
+             along * (stretch.smoothed[next] - stretch.smoothed[next - 1]),
+         0.0});
+    behind.push_back(next);
   }
   measure_prominence(stretch, behind, summits);
   return summits;
@@ -189,8 +219,9 @@ double lowest_between(const SmoothedStretch& stretch, double from_minutes,
                       double to_minutes) {
   double where = from_minutes;
   double lowest = smoothed_at(stretch, from_minutes);
+  const std::size_t last = first_after(stretch.minutes, to_minutes);
   for (std::size_t i = first_at_or_after(stretch.minutes, from_minutes);
-       i < stretch.minutes.size() && stretch.minutes[i] <= to_minutes; ++i) {
+       i < last; ++i) {
     if (stretch.smoothed[i] < lowest) {
       lowest = stretch.smoothed[i];
       where = stretch.minutes[i];
@@ -208,8 +239,7 @@ double interpolate(std::span<const double> x, std::span<const double> y,
                    double at) {
   if (at <= x.front()) return y.front();
   if (at >= x.back()) return y.back();
-  const auto next = static_cast<std::size_t>(
-      std::upper_bound(x.begin(), x.end(), at) - x.begin());
+  const std::size_t next = first_after(x, at);
   const double share = (at - x[next - 1]) / (x[next] - x[next - 1]);
   return y[next - 1] + share * (y[next] - y[next - 1]);
 }

@@ -5,6 +5,7 @@
 #include <cstddef>
 
 #include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/time_index.hpp"
 
 namespace loqsmith {
 namespace {
@@ -31,13 +32,10 @@ bool has_gap(const SmoothedStretch& stretch, const PlacedWindow& window) {
   const std::vector<double>& t = stretch.minutes;
   const double from = std::min(window.left.minutes, window.left.anchor_minutes);
   const double to = std::max(window.right.minutes, window.right.anchor_minutes);
-  const auto before = [&](double minutes) {
-    return static_cast<std::size_t>(
-        std::lower_bound(t.begin(), t.end(), minutes) - t.begin());
-  };
-  const std::size_t first = std::max<std::size_t>(before(from), 1);
-  const std::size_t last = std::min(before(to) + 1, t.size());
-  const double most = kGapSteps * typical_step(t);
+  const std::size_t first =
+      std::max<std::size_t>(first_at_or_after(t, from), 1);
+  const std::size_t last = std::min(first_at_or_after(t, to) + 1, t.size());
+  const double most = kGapSteps * stretch.spacing.step;
   for (std::size_t i = first; i < last; ++i) {
     if (t[i] - t[i - 1] > most) return true;
   }
@@ -47,23 +45,23 @@ bool has_gap(const SmoothedStretch& stretch, const PlacedWindow& window) {
 bool has_negative_peak(const SmoothedStretch& stretch,
                        const PlacedWindow& window, const NoiseModel& noise,
                        double multiple, double height) {
+  const std::vector<double>& t = stretch.minutes;
   double depth = kDepthShare * std::max(height, 0.0);
   double where = window.left.minutes;
   bool seen = false;
-  for (std::size_t i = 0; i < stretch.minutes.size(); ++i) {
-    const double t = stretch.minutes[i];
-    if (t < window.left.minutes || t > window.right.minutes) continue;
-    const double here = window.baseline_at(t) - stretch.smoothed[i];
+  for (std::size_t i = first_at_or_after(t, window.left.minutes);
+       i < t.size() && t[i] <= window.right.minutes; ++i) {
+    const double here = window.baseline_at(t[i]) - stretch.smoothed[i];
     if (!(here > depth)) continue;
     depth = here;
-    where = t;
+    where = t[i];
     seen = true;
   }
   if (!seen) return false;
-  const double deviation = std::max(
-      stretch.rounding,
-      weighted_noise(smoothed_height_weights(stretch, window, where), noise));
-  return depth >= multiple * deviation;
+  return depth >= multiple * least_smoothed_height_noise(stretch, window, where,
+                                                         noise) &&
+         depth >=
+             multiple * smoothed_height_noise(stretch, window, where, noise);
 }
 
 bool is_flat(std::span<const double> signal) {
@@ -71,12 +69,12 @@ bool is_flat(std::span<const double> signal) {
                      [&](double y) { return y == signal.front(); });
 }
 
-bool covers(std::span<const double> minutes, double from_minutes,
+bool covers(const SmoothedStretch& stretch, double from_minutes,
             double to_minutes) {
-  if (minutes.empty()) return false;
-  const double step = typical_step(minutes);
-  return minutes.front() <= from_minutes + step &&
-         minutes.back() >= to_minutes - step;
+  const std::vector<double>& t = stretch.minutes;
+  if (t.empty()) return false;
+  const double step = stretch.spacing.step;
+  return t.front() <= from_minutes + step && t.back() >= to_minutes - step;
 }
 
 }  // namespace loqsmith

@@ -109,10 +109,11 @@ TEST(Integrate, WeightsGiveTheSameAreaAndHeight) {
   const auto placed =
       place_window(stretch, {}, {5.003, 0.1777, 0.2123, 0.1177, true, 1.0});
   ASSERT_TRUE(placed);
-  const auto sum = [&](const std::vector<double>& weights) {
+  const auto sum = [&](const PointWeights& weights) {
+    const std::vector<double> all = weights.over(stretch.minutes.size());
     double total = 0.0;
-    for (std::size_t i = 0; i < weights.size(); ++i) {
-      total += weights[i] * stretch.signal[i];
+    for (std::size_t i = 0; i < all.size(); ++i) {
+      total += all[i] * stretch.signal[i];
     }
     return total;
   };

@@ -25,8 +25,8 @@ TEST_P(Lengths, MovingSumsEqualTheWeights) {
   wanted.peaks = {test::gaussian_of_height(2.0, 0.05, 300.0)};
   const Trace trace = simulate_trace(wanted, "moving sums");
   const int points = GetParam();
-  const auto fast =
-      smooth_value_and_slope(trace.minutes, trace.signal, points, 2);
+  const auto fast = smooth_value_and_slope(trace.minutes, trace.signal, points,
+                                           2, evenly_spaced(trace.minutes));
   const auto value = savitzky_golay(trace.minutes, trace.signal, points, 2, 0);
   const auto slope = savitzky_golay(trace.minutes, trace.signal, points, 2, 1);
   ASSERT_EQ(fast.value.size(), value.size());
@@ -44,7 +44,7 @@ TEST(MovingParabola, APlateauHasNoSlopeAtAll) {
   std::vector<double> minutes;
   for (int i = 0; i < 100; ++i) minutes.push_back(0.01 * i);
   const std::vector<double> level(100, 0.1);
-  const auto fast = smooth_value_and_slope(minutes, level, 11, 2);
+  const auto fast = smooth_value_and_slope(minutes, level, 11, 2, true);
   for (std::size_t i = 5; i < 95; ++i) {
     EXPECT_EQ(fast.slope[i], 0.0);
     EXPECT_EQ(fast.value[i], 0.1);
@@ -58,8 +58,8 @@ TEST(MovingParabola, UnevenTimesAndOtherOrdersTakeTheWeights) {
   wanted.jitter = 0.3;
   const Trace trace = simulate_trace(wanted, "uneven");
   for (const int order : {2, 4}) {
-    const auto fast =
-        smooth_value_and_slope(trace.minutes, trace.signal, 9, order);
+    const auto fast = smooth_value_and_slope(
+        trace.minutes, trace.signal, 9, order, evenly_spaced(trace.minutes));
     EXPECT_EQ(fast.value,
               savitzky_golay(trace.minutes, trace.signal, 9, order, 0));
     EXPECT_EQ(fast.slope,

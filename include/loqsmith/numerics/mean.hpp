@@ -9,7 +9,9 @@ namespace loqsmith {
 
 /// Sum with a running compensation of what rounding loses.
 ///
-/// Source: A. Neumaier, Z. Angew. Math. Mech. 54 (1974) 39; from memory.
+/// Source: A. Neumaier, Z. Angew. Math. Mech. 54 (1974) 39; from memory. What
+/// an addition loses: D. E. Knuth, The Art of Computer Programming, vol.
+/// 2, 4.2.2; from memory.
 double compensated_sum(std::span<const double> values);
 
 /// Arithmetic mean, corrected by the mean of the residuals. At least 1 value.
@@ -23,11 +25,8 @@ double standard_deviation(std::span<const double> values);
 /// Middle value; mean of the two middle ones where n is even. At least 1 value.
 double median(std::span<const double> values);
 
-/// Standard deviation of a normal sample from the median of the absolute
-/// deviations from the median: 1.4826 times it (1 over the upper quartile of
-/// the standard normal). Not moved by up to half of the values. At least 1
-/// value; zero where more than half are equal.
-double robust_deviation(std::span<const double> values);
+/// The same; the values lose their order.
+double median_in_place(std::span<double> values);
 
 /// 1 / 0.6744897501960817: from a median absolute deviation to a standard
 /// deviation of normal values.

@@ -76,7 +76,7 @@ std::optional<EstimatedBaseline> estimate_baseline(
 
 /// smooth_stretch() of the signal above the baseline that the settings name;
 /// of the signal itself for the straight one, which is laid later.
-SmoothedStretch smooth_stretch_above(const Trace& near,
+SmoothedStretch smooth_stretch_above(Trace near,
                                      const IntegrationSettings& settings,
                                      double width_half_minutes,
                                      double longer_side_minutes,

@@ -1,5 +1,6 @@
 #pragma once
 
+#include <cstddef>
 #include <vector>
 
 #include "loqsmith/signal/place_window.hpp"
@@ -14,24 +15,44 @@ namespace loqsmith {
 double integrate_window(const SmoothedStretch& stretch,
                         const PlacedWindow& window);
 
-/// The weights g of all points of the stretch such that the area above is the
-/// sum of g times signal, the baseline's points included.
-std::vector<double> area_weights(const SmoothedStretch& stretch,
-                                 const PlacedWindow& window);
+/// Weights of successive points of a stretch; its other points have none.
+struct PointWeights {
+  std::size_t first = 0;  ///< the point that the first value belongs to
+  std::vector<double> values;
+
+  /// One weight for each of so many points.
+  std::vector<double> over(std::size_t points) const;
+};
+
+/// The weights g such that the area above is the sum of g times signal, the
+/// baseline's points included.
+PointWeights area_weights(const SmoothedStretch& stretch,
+                          const PlacedWindow& window);
 
 /// The same for the height at a time (see signal_near).
-std::vector<double> height_weights(const SmoothedStretch& stretch,
-                                   const PlacedWindow& window, double minutes);
+PointWeights height_weights(const SmoothedStretch& stretch,
+                            const PlacedWindow& window, double minutes);
 
 /// The same for the smoothed signal at the point nearest to a time.
-std::vector<double> smoothed_height_weights(const SmoothedStretch& stretch,
-                                            const PlacedWindow& window,
-                                            double minutes);
+PointWeights smoothed_height_weights(const SmoothedStretch& stretch,
+                                     const PlacedWindow& window,
+                                     double minutes);
 
-/// Signal at a time, by the parabola through the three points nearest to it:
-/// weights of those points, zero elsewhere. At least 3 points.
-std::vector<double> parabola_weights(const std::vector<double>& minutes,
-                                     double at);
+/// Standard deviation of a smoothed height: that of its weighted sum of points
+/// or, where the signal shows no noise, of rounding.
+double smoothed_height_noise(const SmoothedStretch& stretch,
+                             const PlacedWindow& window, double minutes,
+                             const NoiseModel& noise);
+
+/// A bound that is quickly found: the standard deviation is not smaller. The
+/// weights of n smoothed points sum to 1, and so their squares to 1/n or more.
+double least_smoothed_height_noise(const SmoothedStretch& stretch,
+                                   const PlacedWindow& window, double minutes,
+                                   const NoiseModel& noise);
+
+/// Weights that give the signal at a time by the parabola through the three
+/// points nearest to it. At least 3 points.
+PointWeights parabola_weights(const std::vector<double>& minutes, double at);
 
 /// The parabola's signal at a time: what height is measured with, in blanks
 /// and samples alike.

@@ -23,10 +23,12 @@ struct ValueAndSlope {
 /// so that the time taken does not grow with the length; they are summed
 /// afresh after as many places as they have points, lest rounding builds up.
 ///
+/// @param even  what evenly_spaced() says of the times
+///
 /// Source: the closed form of the weights of A. Savitzky, M. J. E. Golay,
 /// Anal. Chem. 36 (1964) 1627; derived from the normal equations.
 ValueAndSlope smooth_value_and_slope(std::span<const double> minutes,
                                      std::span<const double> signal, int points,
-                                     int order);
+                                     int order, bool even);
 
 }  // namespace loqsmith

@@ -14,6 +14,10 @@ namespace loqsmith {
 /// line (a thresholded detector), and for fewer than 4 points.
 double point_to_point_noise(std::span<const double> signal);
 
+/// True where that is not above a given noise, as far as counting tells; false
+/// where it may be. Takes a fraction of the time.
+bool is_surely_quieter(std::span<const double> signal, double noise);
+
 /// Standard deviation about a straight line, n - 2 degrees of freedom, of the
 /// points that lie within 3.5 standard deviations of it; line and deviation
 /// are found in turn, from a start (line through the medians of the outer

@@ -1,8 +1,11 @@
 #pragma once
 
+#include <algorithm>
 #include <cstddef>
 #include <span>
 #include <vector>
+
+#include "loqsmith/signal/local_fit.hpp"
 
 namespace loqsmith {
 
@@ -46,11 +49,22 @@ std::vector<double> savitzky_golay(std::span<const double> minutes,
 /// True when the classical weights serve for every part of these times.
 bool evenly_spaced(std::span<const double> minutes);
 
-/// The first and last `half` points of `result` from the fits of the first and
-/// last 2 half + 1 points (of all, where they are fewer).
-void smooth_ends(std::span<const double> minutes,
-                 std::span<const double> signal, std::size_t half, int order,
-                 int derivative, std::vector<double>& result);
+/// Hands out (index, polynomial there) for the first and last `half` points
+/// from the fits of the first and last 2 half + 1 points (of all, where they
+/// are fewer).
+template <class Take>
+void fit_ends(std::span<const double> minutes, std::span<const double> signal,
+              std::size_t half, int order, Take take) {
+  const std::size_t n = signal.size();
+  const std::size_t points = std::min(2 * half + 1, n);
+  const LocalFit first(minutes.first(points), signal.first(points), order);
+  const std::size_t middle = std::min(half, n);
+  for (std::size_t i = 0; i < middle; ++i) take(i, first.at(minutes[i]));
+  const LocalFit last(minutes.last(points), signal.last(points), order);
+  for (std::size_t i = n - std::min(half, n - middle); i < n; ++i) {
+    take(i, last.at(minutes[i]));
+  }
+}
 
 /// Standard deviation of a smoothed point over that of a point, for
 /// independent noise: the square root of the middle weight.

@@ -10,6 +10,12 @@
 
 namespace loqsmith {
 
+/// How the times of a stretch follow each other.
+struct Spacing {
+  double step = 0.0;  ///< minutes, typical_step()
+  bool even = true;   ///< evenly_spaced()
+};
+
 /// A stretch of a trace made ready for finding peaks. What is measured is
 /// always `signal`; the rest only decides where.
 struct SmoothedStretch {
@@ -18,6 +24,7 @@ struct SmoothedStretch {
   std::vector<double> smoothed;     ///< without spikes, Savitzky-Golay
   std::vector<double> slope;        ///< of the same, per minute
   std::vector<std::size_t> spikes;  ///< single points left out of both
+  Spacing spacing;                  ///< of the times
   int points = 1;                   ///< smoothing length used
   int order = 0;                    ///< of its polynomial, below points
   double gain = 1.0;  ///< sd of a smoothed point over that of a point
@@ -42,14 +49,20 @@ Trace cut_trace(const Trace& trace, double from_minutes, double to_minutes);
 /// zero for fewer than 2 points.
 double typical_step(std::span<const double> minutes);
 
+Spacing spacing_of(std::span<const double> minutes);
+
 /// Smoothing length that the settings ask for: their own, or the odd number
 /// of points nearest the width at half height, at least 3.
 int smoothing_length(const IntegrationSettings& settings,
                      double width_half_minutes, double step_minutes);
 
 /// @param noise  tells a spike from noise, and what smoothing makes of it
-SmoothedStretch smooth_stretch(const Trace& stretch, int points, int order,
+SmoothedStretch smooth_stretch(Trace stretch, int points, int order,
                                const NoiseModel& noise);
+
+/// The same where the spacing of its times is known already.
+SmoothedStretch smooth_stretch(Trace stretch, const Spacing& spacing,
+                               int points, int order, const NoiseModel& noise);
 
 /// A single point that stands out by more than 5 noise standard deviations
 /// over its neighbours, which themselves do not rise to a quarter of it: no

@@ -34,9 +34,9 @@ bool has_negative_peak(const SmoothedStretch& stretch,
 /// True where every point of the stretch has the same signal.
 bool is_flat(std::span<const double> signal);
 
-/// True where the trace holds all times from one to another, up to a typical
+/// True where the stretch holds all times from one to another, up to a typical
 /// step at either end.
-bool covers(std::span<const double> minutes, double from_minutes,
+bool covers(const SmoothedStretch& stretch, double from_minutes,
             double to_minutes);
 
 }  // namespace loqsmith
