@@ -215,7 +215,7 @@ Outcome<LimitEstimate> with_linear_variance(
   judge_promise(estimate, *line, procedure.alpha,
                 predicted_rate(*line, *factors, replicates));
   estimate.findings.push_back(
-      {Grade::Note, "no-confidence-bounds",
+      {Grade::Note, "bounds-absent",
        "the limits rest on two estimated coefficients of the standard "
        "deviation: chi-square bounds do not hold for them"});
   note_no_quantitation(estimate, kQuantitationFactor);

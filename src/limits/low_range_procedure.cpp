@@ -203,7 +203,7 @@ void judge_low_range(LimitEstimate& estimate, const LimitEvidence& evidence,
 void note_no_quantitation(LimitEstimate& estimate, double factor) {
   if (estimate.quantitation) return;
   estimate.findings.push_back(
-      {Grade::Caution, "no-quantitation-limit",
+      {Grade::Caution, "quantitation-absent",
        "no found concentration is " + figure(factor) +
            " times its own standard deviation: that of the slope, or the "
            "growth of the scatter, is too large"});

@@ -91,7 +91,7 @@ TEST(CriticalAndDetectable, NoQuantitationLimitWhereTheSlopeIsLost) {
   ASSERT_TRUE(found);
   EXPECT_TRUE(found->detection);
   EXPECT_FALSE(found->quantitation);
-  EXPECT_TRUE(finding(*found, "no-quantitation-limit"));
+  EXPECT_TRUE(finding(*found, "quantitation-absent"));
 }
 
 TEST(CriticalAndDetectable, NotApplicable) {

@@ -132,8 +132,8 @@ TEST(Din32645, NoQuantitationLimitWhereTheIterationDiverges) {
   EXPECT_TRUE(found->critical_value && found->detection);
   EXPECT_FALSE(found->quantitation);
   EXPECT_FALSE(found->quantitation_lower || found->quantitation_upper);
-  ASSERT_TRUE(finding(*found, "no-quantitation-limit"));
-  EXPECT_EQ(finding(*found, "no-quantitation-limit")->grade, Grade::Caution);
+  ASSERT_TRUE(finding(*found, "quantitation-absent"));
+  EXPECT_EQ(finding(*found, "quantitation-absent")->grade, Grade::Caution);
 }
 
 TEST(Din32645, WantsLevelsNearTheLimit) {

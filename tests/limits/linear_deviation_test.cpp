@@ -80,7 +80,7 @@ TEST(LinearDeviation, LimitsOfGrowingScatter) {
     EXPECT_EQ(found->degrees_of_freedom, 22.0);
     EXPECT_EQ(found->n, 24U);
     EXPECT_FALSE(found->detection_lower || found->detection_upper);
-    EXPECT_TRUE(finding(*found, "no-confidence-bounds"));
+    EXPECT_TRUE(finding(*found, "bounds-absent"));
 
     // The iteration of the source, with 1/T1 + xm^2/sxx of the example.
     const double c = *term(*found, "standard deviation of a response at zero");
@@ -140,7 +140,7 @@ TEST(LinearDeviation, NoDetectableValueWhereTheIterationDiverges) {
   ASSERT_TRUE(many);
   EXPECT_TRUE(many->detection);
   EXPECT_FALSE(many->quantitation);
-  EXPECT_TRUE(finding(*many, "no-quantitation-limit"));
+  EXPECT_TRUE(finding(*many, "quantitation-absent"));
 }
 
 TEST(LinearDeviation, NotApplicable) {

@@ -43,11 +43,11 @@ namespace loqsmith {
 ///         iteration diverges.
 ///
 /// Findings: those of judge_low_range with constant variance, of judge_place
-/// with linear; no-quantitation-limit, no-upper-bound; with linear variance
+/// with linear; quantitation-absent, no-upper-bound; with linear variance
 /// few-replicates-at-zero (caution: fewer than 4 replicates of a level, or a
 /// rate of blanks at or above the critical value that exceeds 1.2 alpha, by
 /// Welch and Satterthwaite for the variance behind x_C), scatter-exceeds-model
-/// (chi-square, 1 %) and the note no-confidence-bounds.
+/// (chi-square, 1 %) and the note bounds-absent.
 ///
 /// Bounds (constant variance): chi-square bounds of s put in the place of s,
 /// without the slope's uncertainty.

@@ -39,7 +39,7 @@ namespace loqsmith {
 ///         calibration a quadratic, fewer than 4 levels in the range, no
 ///         scatter at all; from blanks fewer than 3 or all equal.
 ///
-/// Findings: those of judge_low_range, no-quantitation-limit (the iteration
+/// Findings: those of judge_low_range, quantitation-absent (the iteration
 /// diverges where k t s_x0 >= sqrt(Qx)), no-upper-bound,
 /// range-above-ten-limits (note: the standard wants levels up to 10 times the
 /// decision limit); from blanks those of judge_blanks and of the blanks' mean.

@@ -77,7 +77,7 @@ void judge_low_range(LimitEstimate& estimate, const LimitEvidence& evidence,
                      const ProcedureSettings& procedure,
                      const LowRangeLine& line);
 
-/// no-quantitation-limit (caution): where there is none, because the relative
+/// quantitation-absent (caution): where there is none, because the relative
 /// standard deviation of found concentrations nowhere falls to 1 / factor.
 void note_no_quantitation(LimitEstimate& estimate, double factor);
 
