@@ -30,8 +30,11 @@ std::optional<double> profile_limit(const std::vector<ProfilePoint>& profile,
 
 /// Quantitation limit, in vial concentration, from an accuracy profile: low
 /// spikes of several levels in three or more preparations, which are the runs
-/// of tolerance_interval.hpp. There is no detection limit, and no confidence
-/// bounds are given.
+/// of tolerance_interval.hpp. There is no detection limit.
+///
+/// No confidence bounds: drawn from the variances and means that the runs leave
+/// open, they held the true limit of four levels of 4 x 3 spikes in 62 to 77 of
+/// 100 simulated studies only, because the worse of two bounds decides.
 ///
 /// `beta`: part of future results (0.80); `acceptance`: recovery, percent
 /// ("80 120").
