@@ -48,4 +48,15 @@ std::string FigureChoice::caption(const std::string& analyte,
   return found == captions_.end() ? std::string{} : found->second;
 }
 
+std::string FigureChoice::claim_parted(const std::string& analyte,
+                                       int injection,
+                                       const std::string& overlap) {
+  if (overlap != "model" && overlap != "skim") return {};
+  const std::lock_guard<std::mutex> guard(mutex_);
+  const auto [known, first] = parted_.emplace(analyte, injection);
+  if (!first && known->second < injection) return {};
+  known->second = injection;
+  return "the first peak that is parted from a neighbour";
+}
+
 }  // namespace loqsmith

@@ -4,7 +4,9 @@
 #include <map>
 #include <mutex>
 #include <optional>
+#include <set>
 #include <string>
+#include <utility>
 
 #include "loqsmith/base/digest.hpp"
 #include "loqsmith/base/input_error.hpp"
@@ -84,7 +86,7 @@ CurveNoise drawn_noise(const Learned& learned, std::size_t target,
 class InjectionAtWork {
  public:
   InjectionAtWork(const SequenceFolder& folder, const Learned& learned,
-                  const FigureChoice& figures, const FileVisit& visit,
+                  FigureChoice& figures, const FileVisit& visit,
                   const Injection& injection)
       : folder_(folder),
         learned_(learned),
@@ -144,7 +146,7 @@ class InjectionAtWork {
                                       noise.noise, noise.source);
     if (peak) {
       note_shift(target.id, *peak, expected);
-      draw(index, *trace, expected, noise);
+      draw(index, *trace, expected, noise, *peak);
     }
     return peak;
   }
@@ -203,9 +205,15 @@ class InjectionAtWork {
 
   // Measured once more for the few that are drawn, with the working kept.
   void draw(std::size_t index, const Trace& trace, double expected,
-            const NoiseFor& noise) {
+            const NoiseFor& noise, const Peak& peak) {
     const TargetSettings& target = learned_.targets[index];
-    const std::string caption = figures_.caption(target.id, injection_.number);
+    std::string caption = figures_.caption(target.id, injection_.number);
+    const bool analyte =
+        folder_.sheets.method.internal_standard(target.id) == nullptr;
+    if (caption.empty() && peak.found && analyte) {
+      caption =
+          figures_.claim_parted(target.id, injection_.number, peak.overlap);
+    }
     if (caption.empty()) return;
     const WindowTemplate& window = *learned_.windows[index];
     const WorkedPeak worked = measure_peak_with_working(
@@ -219,12 +227,13 @@ class InjectionAtWork {
                               .injection = injection_.number,
                               .caption = caption,
                               .peak = *worked.peak,
-                              .curve = std::move(curve)});
+                              .curve = std::move(curve),
+                              .signal_unit = trace.header.signal_unit});
   }
 
   const SequenceFolder& folder_;
   const Learned& learned_;
-  const FigureChoice& figures_;
+  FigureChoice& figures_;
   const FileVisit& visit_;
   const Injection& injection_;
   InjectionMeasured result_;
@@ -234,6 +243,17 @@ class InjectionAtWork {
   Sha256 hash_;
   bool any_trace_ = false;
 };
+
+// One figure of each kind for an analyte: of those that were claimed by several
+// threads the earliest.
+void keep_first_curves(std::vector<InjectionMeasured>& injections) {
+  std::set<std::pair<std::string, std::string>> seen;
+  for (InjectionMeasured& injection : injections) {
+    std::erase_if(injection.curves, [&](const FigureCurve& curve) {
+      return !seen.insert({curve.analyte, curve.caption}).second;
+    });
+  }
+}
 
 void refuse_if_changed(FileVisit& visit, const Learned& learned) {
   const auto known = learned.hashes.find(visit.input.path);
@@ -254,7 +274,7 @@ Measured measure_sequence(
     const SequenceFolder& folder, const Learned& learned, unsigned jobs,
     const std::function<void(std::size_t, std::size_t)>& progress) {
   const std::vector<FileTask> tasks = file_tasks(folder.sheets.sequence);
-  const FigureChoice figures(folder.sheets);
+  FigureChoice figures(folder.sheets);
   std::vector<std::vector<InjectionMeasured>> by_file(tasks.size());
   Measured measured;
   measured.inputs.resize(tasks.size());
@@ -282,6 +302,7 @@ Measured measure_sequence(
             [](const InjectionMeasured& a, const InjectionMeasured& b) {
               return a.injection < b.injection;
             });
+  keep_first_curves(measured.injections);
   std::sort(
       measured.inputs.begin(), measured.inputs.end(),
       [](const InputFile& a, const InputFile& b) { return a.path < b.path; });

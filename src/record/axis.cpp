@@ -36,7 +36,7 @@ void make_drawable(double& low, double& high) {
 
 std::string linear_label(double tick, double step) {
   const double size = std::max(std::abs(tick), step);
-  if (size >= 1e6 || step < 1e-5) {
+  if (size >= 1e6 || step < 0.9e-4) {
     // As many digits as tell one tick from the next.
     const double digits = std::floor(std::log10(size / step) + 1e-9) + 1.0;
     return power_number(tick, static_cast<int>(std::clamp(digits, 1.0, 17.0)));

@@ -22,7 +22,14 @@ struct Frame {
   Axis y;
 };
 
-Frame frame_of(const std::vector<StandardPoint>& points) {
+// A line of standard addition is drawn from where it meets zero response.
+double left_end(const CalibrationSet& set) {
+  return set.addition && set.addition->amount > 0.0
+             ? -1.1 * set.addition->amount
+             : 0.0;
+}
+
+Frame frame_of(const std::vector<StandardPoint>& points, double left) {
   double most = 0.0;
   double low = 0.0;
   double high = 0.0;
@@ -31,7 +38,7 @@ Frame frame_of(const std::vector<StandardPoint>& points) {
     low = std::min(low, point.response);
     high = std::max(high, point.response);
   }
-  return {tight_axis(0.0, 1.04 * most, kLeft, kRight, 5),
+  return {tight_axis(left, 1.04 * most, kLeft, kRight, 5),
           tight_axis(low - 0.02 * (high - low), 1.06 * high, kBottom, kTop, 5)};
 }
 
@@ -47,6 +54,24 @@ void draw_curve(std::ostream& out, const Frame& frame, const Calibration& line,
     }
   }
   if (points.size() > 1) svg_polyline(out, css, points);
+}
+
+// The curve without each standard that the diagnostics point at, and a ring
+// around it.
+void draw_suggestions(std::ostream& out, const Frame& frame,
+                      const CalibrationSet& set) {
+  if (!set.diagnostics) return;
+  for (const SuggestedExclusion& one : set.diagnostics->suggested_exclusions) {
+    if (one.without) {
+      draw_curve(out, frame, *one.without, frame.x.low, frame.x.high,
+                 "curve without");
+    }
+    for (const StandardPoint& point : standards_of(set)) {
+      if (point.injection != one.injection) continue;
+      svg_circle(out, "ring", frame.x.place(point.concentration),
+                 frame.y.place(point.response), 8);
+    }
+  }
 }
 
 void draw_levels(std::ostream& out, const Frame& frame,
@@ -77,7 +102,7 @@ void figure_calibration(std::ostream& out, const AnalyteJudgement& analyte,
                         const CalibrationSet& set) {
   const std::vector<StandardPoint>& points = standards_of(set);
   if (points.empty()) return;
-  const Frame frame = frame_of(points);
+  const Frame frame = frame_of(points, left_end(set));
   svg_begin(out, kWidth, kHeight,
             "Calibration of " + analyte.analyte +
                 ": response of each standard against its concentration");
@@ -87,9 +112,14 @@ void figure_calibration(std::ostream& out, const AnalyteJudgement& analyte,
   if (set.calibration) {
     const Calibration& line = *set.calibration;
     draw_levels(out, frame, line);
-    draw_curve(out, frame, line, 0.0, frame.x.high, "curve beyond");
+    draw_curve(out, frame, line, frame.x.low, frame.x.high, "curve beyond");
     draw_curve(out, frame, line, line.accepted_lowest.value_or(line.lowest),
                line.accepted_highest.value_or(line.highest), "curve");
+    draw_suggestions(out, frame, set);
+    if (set.addition && frame.x.covers(-set.addition->amount)) {
+      svg_diamond(out, "found", frame.x.place(-set.addition->amount),
+                  frame.y.place(0.0), 6);
+    }
   }
   draw_points(out, frame, points, set.calibration.has_value());
   svg_end(out);

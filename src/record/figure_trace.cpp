@@ -1,44 +1,30 @@
 #include <algorithm>
 #include <cmath>
 
+#include "loqsmith/record/curve_strokes.hpp"
 #include "loqsmith/record/figures.hpp"
+#include "loqsmith/record/html.hpp"
 #include "loqsmith/record/svg.hpp"
 
 namespace loqsmith {
 namespace {
 
 constexpr double kWidth = 440;
-constexpr double kHeight = 240;
 constexpr double kLeft = 62;
 constexpr double kRight = kWidth - 14;
 constexpr double kTop = 34;
-constexpr double kBottom = kHeight - 46;
-constexpr std::size_t kColumns = 364;  ///< about one a pixel
+constexpr double kBottom = 200;
+constexpr double kStripTop = kBottom + 34;
+constexpr double kStripBottom = kStripTop + 56;
+constexpr double kBelow = 46;  ///< for the axis of time
+constexpr double kFootSize = 3.5;
+constexpr double kResidualDeviations = 2.0;
 
-using Points = std::vector<std::pair<double, double>>;
-
-// The lowest and highest point of each column in their order, so that no
-// extreme is lost.
-Points thinned(const PeakCurve& curve, const Axis& x, const Axis& y) {
-  const std::size_t n = std::min(curve.minutes.size(), curve.signal.size());
-  Points points;
-  const std::size_t stride = n > 3 * kColumns ? n / kColumns : 1;
-  for (std::size_t start = 0; start < n; start += stride) {
-    const auto first =
-        curve.signal.begin() + static_cast<std::ptrdiff_t>(start);
-    const auto last =
-        first + static_cast<std::ptrdiff_t>(std::min(stride, n - start));
-    const auto [low, high] = std::minmax_element(first, last);
-    auto a = static_cast<std::size_t>(low - curve.signal.begin());
-    auto b = static_cast<std::size_t>(high - curve.signal.begin());
-    if (a > b) std::swap(a, b);
-    points.emplace_back(x.place(curve.minutes[a]), y.place(curve.signal[a]));
-    if (b != a) {
-      points.emplace_back(x.place(curve.minutes[b]), y.place(curve.signal[b]));
-    }
-  }
-  return points;
-}
+// Both parts of the figure stand on one axis of time.
+struct Frame {
+  Axis x;
+  Axis y;
+};
 
 Axis signal_axis(const PeakCurve& curve, double span) {
   const auto [low, high] =
@@ -47,7 +33,108 @@ Axis signal_axis(const PeakCurve& curve, double span) {
   const double room =
       std::max(span - (*high - *low), 0.0) + 0.08 * (*high - *low);
   // Room goes above: a trace stands on its baseline.
-  return tight_axis(*low - 0.1 * room, *high + 0.9 * room, kBottom, kTop, 4);
+  return tight_axis(*low - 0.1 * room, *high + 0.9 * room, kBottom, kTop, 6);
+}
+
+bool by_deviation(const CurveNoise& noise) {
+  return noise.measure == NoiseSettings::Measure::StandardDeviation;
+}
+
+std::string noise_words(const CurveNoise& noise) {
+  return by_deviation(noise) ? "sd " + short_number(noise.standard_deviation, 3)
+                             : "h " + short_number(noise.peak_to_peak, 3);
+}
+
+// A band as high as the noise figure: h, or one standard deviation to either
+// side of the middle.
+void draw_noise_here(std::ostream& out, const Frame& frame,
+                     const CurveNoise& noise) {
+  const double middle = 0.5 * (noise.low + noise.high);
+  const double half =
+      by_deviation(noise) ? noise.standard_deviation : 0.5 * noise.peak_to_peak;
+  const double top = frame.y.place(middle + half);
+  const double bottom = frame.y.place(middle - half);
+  for (const auto& [from, to] : noise.stretches) {
+    const double left = frame.x.place(from);
+    svg_rect(out, "noise", left, top, frame.x.place(to) - left,
+             std::max(bottom - top, 1.0));
+  }
+  const double at = frame.x.place(noise.stretches.front().first);
+  svg_text(out, "label small", at + 2, top - 6, "start", noise_words(noise));
+}
+
+// Noise that was measured elsewhere: its size as an upright bar.
+void draw_noise_elsewhere(std::ostream& out, const Frame& frame,
+                          const PeakCurve& curve) {
+  const CurveNoise& noise = curve.noise;
+  const double half =
+      by_deviation(noise) ? noise.standard_deviation : 0.5 * noise.peak_to_peak;
+  const double top = frame.y.place(curve.baseline_end + half);
+  const double bottom = frame.y.place(curve.baseline_end - half);
+  const double x = kRight - 7;
+  svg_line(out, "noise-size", x, top, x, bottom);
+  svg_line(out, "noise-size", x - 4, top, x + 4, top);
+  svg_line(out, "noise-size", x - 4, bottom, x + 4, bottom);
+  svg_text(out, "label small", kRight - 2, top - 6, "end",
+           noise_words(noise) + ", " + noise.source);
+}
+
+void draw_noise(std::ostream& out, const Frame& frame, const PeakCurve& curve) {
+  if (curve.noise.source.empty()) return;
+  if (curve.noise.stretches.empty()) {
+    draw_noise_elsewhere(out, frame, curve);
+  } else {
+    draw_noise_here(out, frame, curve.noise);
+  }
+}
+
+void draw_baseline(std::ostream& out, const Frame& frame,
+                   const FigureCurve& figure) {
+  const PeakCurve& curve = figure.curve;
+  const double start = frame.x.place(figure.peak.start_minutes);
+  const double end = frame.x.place(figure.peak.end_minutes);
+  for (const CurveFoot& foot : curve.feet) {
+    const double y = frame.y.place(foot.signal);
+    svg_line(out, "foot", frame.x.place(foot.from_minutes), y,
+             frame.x.place(foot.to_minutes), y);
+  }
+  if (curve.baseline.size() == curve.minutes.size()) {
+    draw_curve(out, "baseline", curve.minutes, curve.baseline, frame.x,
+               frame.y);
+  } else {
+    svg_line(out, "baseline", start, frame.y.place(curve.baseline_start), end,
+             frame.y.place(curve.baseline_end));
+  }
+  svg_circle(out, "foot-end", start, frame.y.place(curve.baseline_start),
+             kFootSize);
+  svg_circle(out, "foot-end", end, frame.y.place(curve.baseline_end),
+             kFootSize);
+}
+
+void draw_fit(std::ostream& out, const Frame& frame, const PeakCurve& curve) {
+  if (curve.fit == PeakCurve::Fit::None) return;
+  for (const std::vector<double>& part : curve.parts) {
+    draw_curve(out, "part", curve.fitted_minutes, part, frame.x, frame.y);
+  }
+  draw_curve(out, curve.fit_stands ? "fitted" : "fitted fails",
+             curve.fitted_minutes, curve.fitted, frame.x, frame.y);
+}
+
+// Signal minus fit, with the noise's own spread behind it.
+void draw_residual(std::ostream& out, const Axis& x, const PeakCurve& curve) {
+  double most = kResidualDeviations * curve.noise.standard_deviation;
+  for (const double left : curve.residual)
+    most = std::max(most, std::abs(left));
+  const Axis y =
+      tight_axis(-1.05 * most, 1.05 * most, kStripBottom, kStripTop, 4);
+  if (!curve.noise.source.empty()) {
+    const double reach = kResidualDeviations * curve.noise.standard_deviation;
+    const double top = y.place(reach);
+    svg_rect(out, "noise", kLeft, top, kRight - kLeft, y.place(-reach) - top);
+  }
+  svg_left_axis(out, y, kLeft, kRight, "signal minus fit");
+  svg_line(out, "zero", kLeft, y.place(0.0), kRight, y.place(0.0));
+  draw_curve(out, "residual", curve.fitted_minutes, curve.residual, x, y);
 }
 
 }  // namespace
@@ -59,42 +146,34 @@ double signal_span(const PeakCurve& curve) {
   return *high - *low;
 }
 
-void figure_trace(std::ostream& out, const FigureCurve& figure,
-                  const std::string& signal_unit, double span) {
+void figure_trace(std::ostream& out, const FigureCurve& figure, double span) {
   const PeakCurve& curve = figure.curve;
   if (curve.minutes.size() < 2 || curve.signal.size() < 2) return;
-  const Axis x =
-      tight_axis(curve.minutes.front(), curve.minutes.back(), kLeft, kRight, 6);
-  const Axis y = signal_axis(curve, span);
-  svg_begin(out, kWidth, kHeight,
+  const bool strip = !curve.residual.empty();
+  const double floor = strip ? kStripBottom : kBottom;
+  const Frame frame{
+      tight_axis(curve.minutes.front(), curve.minutes.back(), kLeft, kRight, 6),
+      signal_axis(curve, span)};
+  svg_begin(out, kWidth, floor + kBelow,
             "Trace of " + figure.analyte + " in injection " +
                 std::to_string(figure.injection) + ", " + figure.caption);
-  const double start = x.place(figure.peak.start_minutes);
-  const double end = x.place(figure.peak.end_minutes);
+  const double start = frame.x.place(figure.peak.start_minutes);
+  const double end = frame.x.place(figure.peak.end_minutes);
   svg_rect(out, "window", start, kTop, end - start, kBottom - kTop);
-  svg_bottom_axis(out, x, kBottom, kTop, "minutes");
-  svg_left_axis(out, y, kLeft, kRight,
-                signal_unit.empty() ? "signal" : "signal, " + signal_unit);
-  svg_polyline(out, "trace", thinned(curve, x, y));
-  if (curve.baseline.size() == curve.minutes.size()) {
-    PeakCurve below;
-    below.minutes = curve.minutes;
-    below.signal = curve.baseline;
-    svg_polyline(out, "baseline", thinned(below, x, y));
-  } else {
-    svg_line(out, "baseline", start, y.place(curve.baseline_start), end,
-             y.place(curve.baseline_end));
-  }
-  if (!curve.fitted.empty()) {
-    PeakCurve scaled;
-    scaled.minutes = curve.fitted_minutes;
-    scaled.signal = curve.fitted;
-    svg_polyline(out, "baseline", thinned(scaled, x, y));
-  }
+  svg_bottom_axis(out, frame.x, floor, kTop, "minutes");
+  svg_left_axis(
+      out, frame.y, kLeft, kRight,
+      figure.signal_unit.empty() ? "signal" : "signal, " + figure.signal_unit);
+  draw_noise(out, frame, curve);
+  draw_curve(out, "trace", curve.minutes, curve.signal, frame.x, frame.y);
+  draw_curve(out, "smoothed", curve.minutes, curve.smoothed, frame.x, frame.y);
+  draw_baseline(out, frame, figure);
+  draw_fit(out, frame, curve);
   if (figure.peak.found) {
-    const double apex = x.place(figure.peak.retention_minutes);
+    const double apex = frame.x.place(figure.peak.retention_minutes);
     svg_line(out, "apex", apex, kTop, apex, kTop + 8);
   }
+  if (strip) draw_residual(out, frame.x, curve);
   svg_end(out);
 }
 

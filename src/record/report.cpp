@@ -18,7 +18,7 @@ void write_report(std::ostream& out, const PublishedRun& run) {
          "'none'; style-src 'unsafe-inline'\">\n<title>"
       << html_text(run.sequence.name) << ", run "
       << std::to_string(run.run_number) << "</title>\n<style>" << kReportStyle
-      << "</style>\n</head>\n<body>\n"
+      << kFigureStyle << "</style>\n</head>\n<body>\n"
       << kReportMarks << "<main>\n";
   report_head(out, run);
   report_attention(out, run);

@@ -5,6 +5,7 @@
 #include <string_view>
 
 #include "loqsmith/record/html.hpp"
+#include "loqsmith/record/limit_text.hpp"
 #include "loqsmith/record/report_parts.hpp"
 
 namespace loqsmith {
@@ -42,16 +43,19 @@ void legend(std::ostream& out, const ResultIndex& index) {
   out << "</ul>\n";
 }
 
-void head_limits(std::ostream& out, const AnalyteJudgement& analyte) {
+void head_limits(std::ostream& out, const PublishedRun& run,
+                 const AnalyteJudgement& analyte) {
+  const ReportingSettings reporting = reporting_of(run.method, analyte.analyte);
   for (const CalibrationSet& set : analyte.sets) {
     // Those of a single sample stand with its line, below.
     if (set.over_additions) continue;
     out << "<span class=\"under\">";
     if (analyte.sets.size() > 1) out << "set " << html_text(set.set) << ": ";
     if (set.limits.governing) {
-      out << "detection " << html_number(set.limits.governing->detection, 3)
+      out << "detection "
+          << html_limit(set.limits.governing->detection, reporting)
           << "</span><span class=\"under\">quantitation "
-          << html_number(set.limits.governing->quantitation, 3);
+          << html_limit(set.limits.governing->quantitation, reporting);
     } else {
       out << "no limits";
     }
@@ -68,7 +72,7 @@ void grid_head(std::ostream& out, const PublishedRun& run,
     out << "<th scope=\"col\" class=\"analyte\"><a href=\"#"
         << analyte_id(analyte.analyte) << "\">" << html_name(analyte.analyte)
         << "</a>";
-    head_limits(out, analyte);
+    head_limits(out, run, analyte);
     out << "</th>";
   }
   out << "</tr></thead>\n";

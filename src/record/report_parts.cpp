@@ -37,4 +37,13 @@ std::string analyte_id(const std::string& analyte) {
   return html_id("a-", analyte);
 }
 
+std::string residuals_id(const std::string& analyte, const std::string& set) {
+  return html_id("d-", analyte) + html_id("__", set);
+}
+
+std::string limit_row_id(const std::string& analyte, const std::string& set,
+                         std::size_t row) {
+  return html_id("l" + std::to_string(row) + "-", analyte) + html_id("__", set);
+}
+
 }  // namespace loqsmith

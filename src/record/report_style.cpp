@@ -12,14 +12,14 @@ const char* const kReportStyle = R"css(
 --estimated-bg:#fbefd6;--not-detected:#4b5764;--not-detected-bg:transparent;
 --above-range:#5a2c84;--above-range-bg:#efe6f6;--withheld:#98202a;
 --withheld-bg:#fbe7e5;--hatch:rgba(152,32,42,.13);--curve:#1d4f80;
---window:#e9eef3;--band:#f6ead0}
+--window:#e9eef3;--band:#f6ead0;--noise:#dfe3d2}
 @media (prefers-color-scheme:dark){:root{--paper:#14181d;--ink:#e8e5dc;
 --soft:#a6b0bb;--rule:#3a434d;--margin:#a8645c;--link:#8fbfec;--shade:#1c2229;
 --reportable:#83d9bc;--reportable-bg:#12312a;--estimated:#f0c673;
 --estimated-bg:#352a10;--not-detected:#b0bac4;--not-detected-bg:transparent;
 --above-range:#cfaef3;--above-range-bg:#2c213c;--withheld:#ffa39c;
 --withheld-bg:#3b1c1e;--hatch:rgba(255,163,156,.12);--curve:#8fbfec;
---window:#222b34;--band:#332b18}}
+--window:#222b34;--band:#332b18;--noise:#333b2b}}
 *{box-sizing:border-box}
 html{color-scheme:light dark;-webkit-text-size-adjust:100%}
 body{margin:0;background:var(--paper);color:var(--ink);
@@ -92,64 +92,23 @@ clip-path:inset(50%);white-space:nowrap}
 .failed{color:var(--withheld);font-weight:600;white-space:nowrap}
 .unchecked{color:var(--soft);white-space:nowrap}
 .small{font-size:.82rem}
-.figures{display:grid;gap:1.4rem 2rem;
-grid-template-columns:repeat(auto-fit,minmax(min(100%,420px),1fr))}
-figure{margin:0;max-width:560px}
-figcaption,.reading{font-size:.87rem;color:var(--soft);margin-top:.2rem}
-.key{color:var(--curve)}.key.bad{color:var(--withheld);font-weight:700}
-.figure{display:block;width:100%;height:auto}
-.figure text{fill:var(--ink);font-size:12.5px;font-family:inherit}
-.figure text.tick,.figure text.title{fill:var(--soft)}
-.figure text.governs{font-weight:700}
-.figure text.label{paint-order:stroke;stroke:var(--paper);stroke-width:5px;
-stroke-linejoin:round}
-.figure line,.figure polyline,.figure path{fill:none;stroke:var(--ink);
-stroke-width:1}
-.figure .grid{stroke:var(--rule);stroke-width:.6}
-.figure .axis{stroke:var(--soft)}
-.figure .row{stroke:var(--rule)}
-.figure .curve{stroke:var(--curve);stroke-width:1.8}
-.figure .beyond{stroke-dasharray:4 4;stroke-width:1}
-.figure .point,.figure .sample{fill:var(--curve);stroke:var(--paper);
-stroke-width:1}
-.figure .sample{fill-opacity:.75}
-.figure .left-out{stroke:var(--withheld);stroke-width:2.2}
-.figure .level{stroke:var(--ink);stroke-width:2}
-.figure .level.refused{stroke:var(--withheld);stroke-dasharray:2 2}
-.figure .zero{stroke:var(--ink)}.figure .stem{stroke:var(--curve)}
-.figure .bounds{stroke:var(--soft);stroke-width:1.2}
-.figure .detection{fill:var(--paper);stroke:var(--curve);stroke-width:2.2}
-.figure .quantitation{fill:var(--curve);stroke:var(--paper)}
-.figure .invalid{fill:var(--paper);stroke:var(--curve);stroke-width:1.6;
-stroke-dasharray:2.5 2}
-.figure .between{fill:var(--band)}
-.figure .rule-detection,.figure .rule-quantitation{stroke:var(--estimated);
-stroke-width:1.4}
-.figure .rule-quantitation{stroke-dasharray:6 3}
-.figure text.rule-name{fill:var(--estimated)}
-.figure .window{fill:var(--window)}
-.figure .trace{stroke:var(--curve);stroke-width:1.3;stroke-linejoin:round}
-.figure .baseline{stroke:var(--withheld);stroke-width:1.6}
-.figure .apex{stroke:var(--ink);stroke-width:1.6}
 @media (max-width:640px){main{padding:1rem .8rem 3rem 1rem}
 h1{font-size:1.5rem}h2{font-size:1.25rem}
 .grid .sample{min-width:8rem;max-width:9.5rem;position:sticky;left:0;
 z-index:1;background:var(--paper)}
-.figure text{font-size:15px}
 th,td{padding:.35rem .5rem}}
 @media print{@page{size:A4;margin:14mm 12mm}
 :root{--paper:#fff;--ink:#000;--soft:#444;--rule:#bbb;--link:#000;
 --reportable:#0b5a48;--reportable-bg:#e4f1ec;--estimated:#6f4700;
 --estimated-bg:#fbefd6;--not-detected:#444;--above-range:#5a2c84;
 --above-range-bg:#efe6f6;--withheld:#98202a;--withheld-bg:#fbe7e5;
---hatch:rgba(152,32,42,.13);--curve:#1d4f80;--window:#e9eef3;--band:#f6ead0}
+--hatch:rgba(152,32,42,.13);--curve:#1d4f80;--window:#e9eef3;--band:#f6ead0;--noise:#dfe3d2}
 *{-webkit-print-color-adjust:exact;print-color-adjust:exact}
 html{font-size:9.5pt}body{font-size:1rem}main{max-width:none;padding:0;border:0}
-nav,details{display:none}.wide{overflow:visible}table{font-size:.9rem}
+nav,details:not(.panel){display:none}.wide{overflow:visible}table{font-size:.9rem}
 th,td{padding:.2rem .35rem}.grid .sample{min-width:0;max-width:11rem}
 .grid td,.under,.why,.bounds-text,.number{white-space:normal}
 .terms{min-width:0}
-.figures{grid-template-columns:1fr 1fr}
 figure,tr,.attention li{break-inside:avoid}h2,h3{break-after:avoid}
 thead{display:table-header-group}a{text-decoration:none}}
 )css";
@@ -161,6 +120,15 @@ const char* const kReportMarks = R"svg(
 <symbol id="mark-not-detected" viewBox="0 0 12 12"><circle cx="6" cy="6" r="4.8"/></symbol>
 <symbol id="mark-above-range" viewBox="0 0 12 12"><path d="M6 1l5 9.6H1z" fill="currentColor"/></symbol>
 <symbol id="mark-withheld" viewBox="0 0 12 12"><path d="M1.8 1.8l8.4 8.4M10.2 1.8l-8.4 8.4" stroke-width="2.4"/></symbol>
+<symbol id="grade-valid" viewBox="0 0 12 12"><path d="M1.5 6.5l3.2 3.4L10.5 2.4" stroke-width="2"/></symbol>
+<symbol id="grade-note" viewBox="0 0 12 12"><path d="M1 6.5l2.6 3L8 3" stroke-width="2"/><circle cx="10.4" cy="9.6" r="1" fill="currentColor"/></symbol>
+<symbol id="grade-caution" viewBox="0 0 12 12"><path d="M6 1.2l5 9.4H1z"/><path d="M6 4.6v2.8M6 8.6v.8" stroke-width="1.4"/></symbol>
+<symbol id="grade-not-valid" viewBox="0 0 12 12"><circle cx="6" cy="6" r="5"/><path d="M2.6 9.4l6.8-6.8" stroke-width="1.8"/></symbol>
+<symbol id="grade-not-applicable" viewBox="0 0 12 12"><path d="M2 6h8" stroke-width="2"/></symbol>
+<symbol id="limit-critical" viewBox="0 0 14 14"><path d="M7 2.5l5 9H2z"/></symbol>
+<symbol id="limit-detection" viewBox="0 0 14 14"><circle cx="7" cy="7" r="5"/></symbol>
+<symbol id="limit-quantitation" viewBox="0 0 14 14"><path d="M7 .8L13.2 7 7 13.2.8 7z"/></symbol>
+<symbol id="limit-struck" viewBox="0 0 14 14"><path d="M1 1l12 12M13 1L1 13"/></symbol>
 </svg>
 )svg";
 

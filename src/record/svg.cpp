@@ -60,11 +60,43 @@ void svg_polyline(std::ostream& out, std::string_view css,
   out << "\"/>\n";
 }
 
+void svg_polygon(std::ostream& out, std::string_view css,
+                 const std::vector<std::pair<double, double>>& points) {
+  out << "<polygon class=\"" << css << "\" points=\"";
+  for (const auto& [x, y] : points) out << px(x) << ',' << px(y) << ' ';
+  out << "\"/>\n";
+}
+
 void svg_text(std::ostream& out, std::string_view css, double x, double y,
               std::string_view anchor, std::string_view text) {
   out << "<text class=\"" << css << "\" x=\"" << px(x) << "\" y=\"" << px(y)
       << "\" text-anchor=\"" << anchor << "\">" << html_text(text)
       << "</text>\n";
+}
+
+void svg_swatch(std::ostream& out, std::string_view css,
+                std::string_view meaning) {
+  out << "<span class=\"meaning\"><svg class=\"figure swatch\" viewBox=\"0 0 "
+         "26 12\" aria-hidden=\"true\">";
+  svg_line(out, css, 1, 6, 25, 6);
+  out << "</svg>" << html_text(meaning) << "</span> ";
+}
+
+void svg_swatch_area(std::ostream& out, std::string_view css,
+                     std::string_view meaning) {
+  out << "<span class=\"meaning\"><svg class=\"figure swatch\" viewBox=\"0 0 "
+         "26 12\" aria-hidden=\"true\">";
+  svg_rect(out, css, 1, 1, 24, 10);
+  out << "</svg>" << html_text(meaning) << "</span> ";
+}
+
+void svg_swatch_mark(std::ostream& out, std::string_view shape,
+                     std::string_view css, std::string_view meaning) {
+  out << "<span class=\"meaning\"><svg class=\"figure swatch scale-strip\" "
+         "viewBox=\"0 0 26 12\" aria-hidden=\"true\"><use href=\"#"
+      << shape << "\" class=\"" << css
+      << "\" x=\"7\" y=\"0\" width=\"12\" height=\"12\"/></svg>"
+      << html_text(meaning) << "</span> ";
 }
 
 void svg_bottom_axis(std::ostream& out, const Axis& axis, double y, double top,

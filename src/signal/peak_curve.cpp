@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cstddef>
 
+#include "loqsmith/signal/peak_working.hpp"
+
 namespace loqsmith {
 namespace {
 

@@ -207,10 +207,11 @@ TEST(Report, ACellSaysTheReasonThatItsMarkDoesNot) {
 
 TEST(Report, EveryAnalyteHasItsFigures) {
   const std::string html = page(test::example_run());
-  // Calibration, deviation, limits and two traces of three analytes; the
-  // fourth has neither standards nor limits.
-  EXPECT_EQ(count(html, "<svg class=\"figure\""), 15U);
-  EXPECT_EQ(count(html, "class=\"trace\""), 6U);
+  // Calibration, deviation, residuals, the limits' ground and two traces of
+  // three analytes; the fourth has neither standards nor limits.
+  EXPECT_EQ(count(html, "<svg class=\"figure\""), 18U);
+  EXPECT_EQ(count(html, "<figure class=\"scale\""), 3U);
+  EXPECT_EQ(count(html, "<polyline class=\"trace\""), 6U);
   EXPECT_EQ(count(html, "class=\"curve\""), 3U);
 }
 

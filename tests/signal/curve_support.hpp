@@ -2,6 +2,7 @@
 
 #include "loqsmith/signal/measure_peak.hpp"
 #include "loqsmith/signal/peak_curve.hpp"
+#include "loqsmith/signal/peak_working.hpp"
 
 namespace loqsmith::test {
 

@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "loqsmith/signal/measure_peak.hpp"
+#include "loqsmith/signal/peak_working.hpp"
 #include "one_peak.hpp"
 #include "overlap_support.hpp"
 #include "support/tolerance.hpp"

@@ -48,6 +48,7 @@ struct FigureCurve {
   std::string caption;  ///< "lowest standard", "blank"
   Peak peak;
   PeakCurve curve;
+  std::string signal_unit = {};  ///< empty: not stated
 };
 
 /// Everything one published run says.

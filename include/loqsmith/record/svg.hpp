@@ -32,9 +32,21 @@ void svg_diamond(std::ostream& out, std::string_view css, double x, double y,
 void svg_polyline(std::ostream& out, std::string_view css,
                   const std::vector<std::pair<double, double>>& points);
 
+void svg_polygon(std::ostream& out, std::string_view css,
+                 const std::vector<std::pair<double, double>>& points);
+
 /// @param anchor  "start", "middle", "end"; the text is escaped here
 void svg_text(std::ostream& out, std::string_view css, double x, double y,
               std::string_view anchor, std::string_view text);
+
+/// A sample of a stroke or an area with its meaning, for legends in text.
+void svg_swatch(std::ostream& out, std::string_view css,
+                std::string_view meaning);
+void svg_swatch_area(std::ostream& out, std::string_view css,
+                     std::string_view meaning);
+/// One of the page's marks (kReportMarks).
+void svg_swatch_mark(std::ostream& out, std::string_view shape,
+                     std::string_view css, std::string_view meaning);
 
 /// The axis along the bottom at height y, with strokes, labels and title; grid
 /// lines up to `top`.

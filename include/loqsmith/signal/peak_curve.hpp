@@ -8,10 +8,11 @@
 #include "loqsmith/chromatogram/trace.hpp"
 #include "loqsmith/signal/learn.hpp"
 #include "loqsmith/signal/noise.hpp"
-#include "loqsmith/signal/peak_working.hpp"
 #include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
+
+struct PeakWorking;
 
 /// The points beside a foot whose mean holds the straight baseline.
 struct CurveFoot {
