@@ -141,16 +141,4 @@ double emg_fallen_to(const EmgShape& shape, double fraction, bool before_apex) {
   return 0.5 * (near + far);
 }
 
-EmgMoments emg_moments(const EmgShape& shape) {
-  EmgMoments moments;
-  const double t = shape.tau;
-  moments.mean = shape.mu + t;
-  moments.variance = shape.sigma * shape.sigma + t * t;
-  moments.skewness =
-      2.0 * t * t * t / (moments.variance * std::sqrt(moments.variance));
-  moments.excess_kurtosis =
-      6.0 * t * t * t * t / (moments.variance * moments.variance);
-  return moments;
-}
-
 }  // namespace loqsmith

@@ -98,20 +98,6 @@ double resolution(double first_minutes, double first_width_half,
          (first_width_half + second_width_half);
 }
 
-std::optional<ParabolaApex> parabola_apex(const double (&minutes)[3],
-                                          const double (&signal)[3]) {
-  // Newton's form about the middle point.
-  const double before = minutes[0] - minutes[1];
-  const double after = minutes[2] - minutes[1];
-  const double rise = (signal[0] - signal[1]) / before;
-  const double fall = (signal[2] - signal[1]) / after;
-  const double bend = (fall - rise) / (after - before);
-  if (!(bend < 0.0)) return {};
-  const double slope = rise - bend * before;
-  const double offset = -slope / (2.0 * bend);
-  return ParabolaApex{minutes[1] + offset, signal[1] + 0.5 * slope * offset};
-}
-
 double apex_reach(double noise_share) {
   const double reach = kWidestReach * std::pow(100.0 * noise_share, 1.0 / 5.5);
   return std::clamp(reach, kLeastReach, kWidestReach);

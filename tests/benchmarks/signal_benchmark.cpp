@@ -15,9 +15,13 @@ namespace {
 constexpr int kTraces = 16;
 constexpr double kTimes[] = {4.0, 7.5, 11.0};
 constexpr double kSigma = 0.025;  ///< minutes; 35 points at half height
+constexpr double kAway = 0.1;     ///< minutes; a neighbour at resolution 1.0
 
-// 9,000 points over 15 minutes: ten a second.
-test::SimulatedTrace detector(double height) {
+using Overlap = IntegrationSettings::Overlap;
+
+// 9,000 points over 15 minutes: ten a second. Each analyte may have a neighbour
+// behind it.
+test::SimulatedTrace detector(double height, double neighbour = 0.0) {
   test::SimulatedTrace wanted;
   wanted.step_minutes = 1.0 / 600.0;
   wanted.end_minutes = 8999.0 / 600.0;
@@ -26,7 +30,10 @@ test::SimulatedTrace detector(double height) {
   wanted.white_noise = 1.0;
   for (const double minutes : kTimes) {
     if (!(height > 0.0)) break;
-    wanted.peaks.push_back({minutes, kSigma, height * kSigma * 2.5066, 0.01});
+    const double area = kSigma * 2.5066;
+    wanted.peaks.push_back({minutes, kSigma, height * area, 0.01});
+    if (!(neighbour > 0.0)) continue;
+    wanted.peaks.push_back({minutes + kAway, kSigma, neighbour * area, 0.01});
   }
   return wanted;
 }
@@ -39,7 +46,8 @@ struct Night {
   std::vector<Trace> traces;
 };
 
-Night prepare(double height) {
+Night prepare(double height, double neighbour = 0.0,
+              Overlap overlap = Overlap::Drop) {
   Night night;
   RandomStream stream("benchmark");
   const Trace standard = simulate_trace(detector(500.0), stream);
@@ -48,6 +56,7 @@ Night prepare(double height) {
     TargetSettings target;
     target.id = "analyte " + std::to_string(night.targets.size() + 1);
     target.retention_minutes = minutes;
+    target.integration.overlap = overlap;
     const auto seen = observe_teacher(standard, target, 1, Role::Standard);
     const auto window = learn_template({*seen});
     night.noises.push_back(measure_noise(
@@ -56,25 +65,42 @@ Night prepare(double height) {
     night.targets.push_back(std::move(target));
   }
   for (int i = 0; i < kTraces; ++i) {
-    night.traces.push_back(simulate_trace(detector(height), stream));
+    night.traces.push_back(simulate_trace(detector(height, neighbour), stream));
   }
   return night;
 }
 
-void measure_traces(benchmark::State& state) {
-  const Night night = prepare(static_cast<double>(state.range(0)));
+void measure_all(const Night& night, benchmark::State& state) {
   std::size_t next = 0;
   for (auto _ : state) {
     const Trace& trace = night.traces[next++ % kTraces];
     for (std::size_t k = 0; k < night.targets.size(); ++k) {
-      benchmark::DoNotOptimize(
-          measure_peak(trace, night.targets[k], night.windows[k],
-                       kTimes[k] + 0.008, night.noises[k], "blank 1"));
+      benchmark::DoNotOptimize(measure_peak(trace, night.targets[k],
+                                            night.windows[k], kTimes[k] + 0.008,
+                                            night.noises[k], "blank 1"));
     }
   }
   state.SetItemsProcessed(state.iterations());
 }
+
+void measure_traces(benchmark::State& state) {
+  measure_all(prepare(static_cast<double>(state.range(0))), state);
+}
 BENCHMARK(measure_traces)->Arg(0)->Arg(10)->Arg(200);
+
+// The smaller of each pair at 100 times the noise. Counts the pairs of the
+// first trace whose model is fitted.
+void measure_pairs_by_model(benchmark::State& state) {
+  const Night night = prepare(100.0, 500.0, Overlap::Model);
+  measure_all(night, state);
+  for (std::size_t k = 0; k < night.targets.size(); ++k) {
+    const auto peak =
+        measure_peak(night.traces[0], night.targets[k], night.windows[k],
+                     kTimes[k] + 0.008, night.noises[k], "blank 1");
+    if (peak && peak->overlap == "model") state.counters["fitted"] += 1;
+  }
+}
+BENCHMARK(measure_pairs_by_model);
 
 void learn_from_a_trace(benchmark::State& state) {
   const Night night = prepare(200.0);

@@ -14,7 +14,6 @@ using test::simulate_trace;
 using test::SimulatedTrace;
 using test::target_at;
 using test::window_of;
-using test::within_condition;
 
 // Ph. Eur. 2.2.46 and USP <621>, formulas from memory; t 5.0, width 0.12, and
 // t 5.6, width 0.14.
@@ -22,18 +21,6 @@ TEST(PeakShape, PlatesAndResolutionOfTheFormulas) {
   EXPECT_TRUE(agrees_to_digits(plate_number(5.0, 0.12), 9618.055556, 10));
   EXPECT_TRUE(
       agrees_to_digits(resolution(5.0, 0.12, 5.6, 0.14), 2.723076923, 10));
-}
-
-TEST(PeakShape, ParabolaGoesThroughItsThreePoints) {
-  // 7 - 4 (t - 2.1)^2 at uneven times.
-  const auto at = [](double t) { return 7.0 - 4.0 * (t - 2.1) * (t - 2.1); };
-  const auto apex =
-      parabola_apex({1.9, 2.0, 2.25}, {at(1.9), at(2.0), at(2.25)});
-  ASSERT_TRUE(apex);
-  EXPECT_TRUE(within_condition(apex->minutes, 2.1, 100.0));
-  EXPECT_TRUE(within_condition(apex->value, 7.0, 100.0));
-  EXPECT_FALSE(parabola_apex({0, 1, 2}, {3, 1, 2}));
-  EXPECT_FALSE(parabola_apex({0, 1, 2}, {1, 1, 1}));
 }
 
 struct ModifiedPeak {

@@ -47,12 +47,4 @@ double emg_apex(const EmgShape& shape);
 /// after the apex.
 double emg_fallen_to(const EmgShape& shape, double fraction, bool before_apex);
 
-struct EmgMoments {
-  double mean = 0.0;             ///< mu + tau
-  double variance = 0.0;         ///< sigma^2 + tau^2
-  double skewness = 0.0;         ///< 2 tau^3 / variance^1.5
-  double excess_kurtosis = 0.0;  ///< 6 tau^4 / variance^2
-};
-EmgMoments emg_moments(const EmgShape& shape);
-
 }  // namespace loqsmith

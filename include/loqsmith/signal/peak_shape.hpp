@@ -49,20 +49,6 @@ std::optional<double> capacity_factor(double retention_minutes,
 double resolution(double first_minutes, double first_width_half,
                   double second_minutes, double second_width_half);
 
-/// Apex of the parabola through three points, as offset from the middle one
-/// and height; for evenly spaced points t0 - step, t0, t0 + step
-///
-///     offset = step (y- - y+) / (2 (y- - 2 y0 + y+)),
-///     height = y0 - (y- - y+) (offset / step) / 4
-struct ParabolaApex {
-  double minutes = 0.0;
-  double value = 0.0;
-};
-
-/// @return nothing where the three do not bend downwards
-std::optional<ParabolaApex> parabola_apex(const double (&minutes)[3],
-                                          const double (&signal)[3]);
-
 /// How far to either side of an apex a polynomial of order 4 is fitted for its
 /// time, in widths at half height. The time scatters as the noise times reach
 /// to the power of -1.5, and is off as reach to the power of 4 for a tailing
