@@ -8,6 +8,7 @@
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/record/record_json.hpp"
 #include "loqsmith/record/report.hpp"
+#include "loqsmith/record/summaries.hpp"
 #include "loqsmith/record/tables.hpp"
 
 namespace loqsmith {
@@ -51,6 +52,7 @@ void stage_run(const fs::path& staging, const SequenceFolder& folder,
   write(staging / "standards.csv", run, write_standards_table);
   write(staging / "peaks.csv", run, write_peaks_table);
   write(staging / "checks.csv", run, write_checks_table);
+  write(staging / "summary.csv", run, write_summary_table);
   write(staging / "record.json", run, write_record);
   if (with_report) write(staging / "report.html", run, write_report);
 }

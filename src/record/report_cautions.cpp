@@ -24,7 +24,8 @@ void report_cautions(std::ostream& out, const PublishedRun& run) {
          "prediction alone (95 %). Sampling, preparation and recovery are not "
          "in it: it is not the method's whole uncertainty.</li>\n"
          "<li>States are decided on unrounded values. A reported text may "
-         "therefore equal a printed limit and still lie below it.</li>\n"
+         "therefore equal a printed limit and still lie below it. Printed "
+         "limits are rounded up, never down.</li>\n"
          "<li>Confidence bounds of limits come from the spread that the limit "
          "is proportional to; they do not contain the uncertainty of the "
          "slope.</li>\n";

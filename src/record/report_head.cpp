@@ -3,6 +3,7 @@
 
 #include "loqsmith/record/html.hpp"
 #include "loqsmith/record/report_parts.hpp"
+#include "loqsmith/record/summaries.hpp"
 
 namespace loqsmith {
 namespace {
@@ -35,6 +36,7 @@ std::string ledger(const PublishedRun& run) {
 void links(std::ostream& out, const PublishedRun& run) {
   out << "<nav aria-label=\"Sections\"><a href=\"#attention\">Needs a "
          "person</a> <a href=\"#results\">Results</a>";
+  if (has_groups(run)) out << " <a href=\"#groups\">Groups</a>";
   for (const AnalyteJudgement& analyte : run.analytes) {
     out << " <a href=\"#" << analyte_id(analyte.analyte) << "\">"
         << html_name(analyte.analyte) << "</a>";

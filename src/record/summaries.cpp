@@ -1,0 +1,38 @@
+#include "loqsmith/record/summaries.hpp"
+
+#include <algorithm>
+
+#include "loqsmith/judgement/summary_inputs.hpp"
+
+namespace loqsmith {
+namespace {
+
+ReportingSettings reporting_for(const Method& method,
+                                const std::string& analyte) {
+  for (const AnalyteSettings& settings : method.analytes) {
+    if (settings.target.id == analyte) return settings.reporting;
+  }
+  return {};
+}
+
+}  // namespace
+
+bool has_groups(const PublishedRun& run) {
+  const std::vector<Injection>& all = run.sequence.injections;
+  return std::any_of(all.begin(), all.end(), [](const Injection& one) {
+    return one.role == Role::Sample && !one.group.empty();
+  });
+}
+
+std::vector<SummaryRow> summaries_of(const PublishedRun& run) {
+  std::vector<SummaryInput> inputs;
+  for (const AnalyteJudgement& analyte : run.analytes) {
+    const std::vector<SummaryInput> own =
+        summary_inputs(analyte, run.sequence, run.method.units,
+                       reporting_for(run.method, analyte.analyte));
+    inputs.insert(inputs.end(), own.begin(), own.end());
+  }
+  return summarise_groups(inputs);
+}
+
+}  // namespace loqsmith
