@@ -126,14 +126,6 @@ std::string html_number(double number, int digits) {
          short_number(number, digits) + "</data>";
 }
 
-std::string html_limit(double limit, int digits) {
-  if (!std::isfinite(limit)) return std::string(kDash);
-  const auto rounded =
-      parse_number(round_to_significant(limit, digits, RoundingRule::Up));
-  return "<data value=\"" + shortest(limit) + "\">" +
-         short_number(rounded.value_or(limit), digits) + "</data>";
-}
-
 std::string html_number(const std::optional<double>& number, int digits) {
   return number ? html_number(*number, digits) : std::string(kDash);
 }

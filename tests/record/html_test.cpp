@@ -34,14 +34,6 @@ TEST(HtmlNumber, ShowsFewDigitsAndKeepsAll) {
   EXPECT_EQ(html_number(std::optional<double>{}), "\xE2\x80\x93");
 }
 
-TEST(HtmlLimit, NeverPrintsLessThanTheLimit) {
-  EXPECT_EQ(html_limit(0.1201), "<data value=\"0.1201\">0.121</data>");
-  EXPECT_EQ(html_limit(0.12), "<data value=\"0.12\">0.12</data>");
-  EXPECT_EQ(html_limit(99.91), "<data value=\"99.91\">100</data>");
-  EXPECT_EQ(html_limit(1.2301e-6), "<data value=\"1.2301e-06\">1.24e-6</data>");
-  EXPECT_EQ(html_limit(0.120001, 4), "<data value=\"0.120001\">0.1201</data>");
-}
-
 TEST(PowerNumber, DropsWhatSaysNothing) {
   EXPECT_EQ(power_number(2e6, 3), "2e6");
   EXPECT_EQ(power_number(-1.25e-12, 3), "-1.25e-12");

@@ -27,10 +27,6 @@ std::string html_number(double number, int digits = 4);
 /// The same; a dash where there is none.
 std::string html_number(const std::optional<double>& number, int digits = 4);
 
-/// A limit for the eye: rounded up, so that what is printed never excludes an
-/// amount that the limit does not.
-std::string html_limit(double limit, int digits = 3);
-
 /// "1.2e-7": at most so many digits, none that say nothing.
 std::string power_number(double number, int digits);
 
