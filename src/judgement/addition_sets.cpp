@@ -5,6 +5,7 @@
 #include <utility>
 
 #include "loqsmith/base/numbers.hpp"
+#include "loqsmith/base/reading_figures.hpp"
 #include "loqsmith/judgement/calibration_sets.hpp"
 #include "loqsmith/judgement/reasons.hpp"
 #include "loqsmith/judgement/sample_units.hpp"
@@ -63,10 +64,10 @@ AdditionMembers members_of(const MeasuredAnalyte& night, const Line& line) {
 }
 
 std::string note_of(const StandardAddition& found) {
-  std::string note = "standard addition: a/b = " + shortest(found.amount);
+  std::string note = "standard addition: a/b = " + figure(found.amount);
   if (found.interval) {
-    note += ", 95 % interval " + shortest(found.interval->lower) + " to " +
-            shortest(found.interval->upper);
+    note += ", 95 % interval " + figure(found.interval->lower) + " to " +
+            figure(found.interval->upper);
   }
   return note;
 }
