@@ -10,6 +10,7 @@
 #include "loqsmith/judgement/established_limit_check.hpp"
 #include "loqsmith/judgement/limit_evidence.hpp"
 #include "loqsmith/judgement/standards.hpp"
+#include "loqsmith/limits/blanks.hpp"
 
 namespace loqsmith {
 namespace {
@@ -82,6 +83,16 @@ void check_limits(SetVerdict& verdict, const AnalyteRules& settings,
   }
 }
 
+// Intervals of weighted fits want to know what scatter is left near zero.
+// Between found feet the blanks' spread says nothing of the standards'.
+void note_blank_spread(Calibration& calibration, const LimitEvidence& evidence,
+                       const LimitSettings& limits) {
+  if (evidence.bounds_own) return;
+  const Outcome<BlankSample> blanks = usable_blanks(evidence, limits.blanks);
+  if (!blanks) return;
+  calibration.blanks = BlankSpread{blanks->sd, blanks->degrees_of_freedom()};
+}
+
 }  // namespace
 
 CalibrationSet calibrate_set(const MeasuredAnalyte& members,
@@ -115,6 +126,8 @@ void limit_set(CalibrationSet& set, const LimitEvidence& evidence,
   set.limits = compute_limits(evidence, members.settings->limits);
   set.blanks = evidence.blanks;
   set.low_spikes = evidence.spikes;
+  note_blank_spread(set.calibration.value(), evidence,
+                    members.settings->limits);
   note_mean_internal_standard(members, set.limits);
 }
 

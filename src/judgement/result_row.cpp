@@ -63,6 +63,10 @@ bool set_concentration(ResultRow& row, const CalibrationSet& set,
     row.calibration_uncertainty =
         in_sample(*found->expanded_uncertainty, factor);
   }
+  if (found->interval) {
+    row.calibration_interval = {in_sample(found->interval->lower, factor),
+                                in_sample(found->interval->upper, factor)};
+  }
   return true;
 }
 

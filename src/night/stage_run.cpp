@@ -49,6 +49,7 @@ void stage_run(const fs::path& staging, const SequenceFolder& folder,
   write(staging / "results.csv", run, write_results_table);
   write(staging / "limits.csv", run, write_limits_table);
   write(staging / "calibration.csv", run, write_calibration_table);
+  write(staging / "diagnostics.csv", run, write_diagnostics_table);
   write(staging / "standards.csv", run, write_standards_table);
   write(staging / "peaks.csv", run, write_peaks_table);
   write(staging / "checks.csv", run, write_checks_table);

@@ -44,6 +44,11 @@ void record_line(JsonWriter& json, const Calibration& line) {
   json.member("accepted_lowest", line.accepted_lowest);
   json.member("accepted_highest", line.accepted_highest);
   record_levels(json, line);
+  if (line.variance) {
+    json.member("variance_additive", line.variance->additive);
+    json.member("variance_proportional", line.variance->proportional);
+  }
+  if (line.blanks) json.member("blank_sd", line.blanks->sd);
   member_words(json, "notes", line.notes);
 }
 
@@ -147,6 +152,10 @@ void record_decision(JsonWriter& json, const ResultRow& row) {
   json.member("set", row.set);
   json.member("result", row.result);
   json.member("unit", row.unit);
+  if (row.calibration_interval) {
+    json.member("calibration_lower", row.calibration_interval->lower);
+    json.member("calibration_upper", row.calibration_interval->upper);
+  }
   json.member("detection_limit", row.detection_limit);
   json.member("quantitation_limit", row.quantitation_limit);
   json.member("status", status_name(row.status));
@@ -166,6 +175,7 @@ void record_analyte(JsonWriter& json, const AnalyteJudgement& analyte) {
     json.member("set", set.set);
     json.member("accepted", calibration_accepted(analyte, set));
     record_calibration(json, set.calibration);
+    record_diagnostics(json, set.diagnostics);
     if (set.addition) record_addition(json, *set.addition);
     record_limits(json, set.limits);
     json.end_object();

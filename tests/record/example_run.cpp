@@ -103,6 +103,7 @@ AnalyteJudgement judgement_of(std::size_t which,
   CalibrationSet set;
   set.set = "1";
   set.calibration = calibration_of(compound);
+  set.diagnostics = diagnose_calibration(*set.calibration);
   set.limits = limits_of(compound);
   for (const Injection& row : rows) {
     if (row.role == Role::Conditioning || row.role == Role::Standard) continue;

@@ -7,6 +7,7 @@
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/calibration/calibration.hpp"
 #include "loqsmith/calibration/diagnostics.hpp"
+#include "loqsmith/calibration/inverse.hpp"
 #include "loqsmith/calibration/standard_addition.hpp"
 #include "loqsmith/chromatogram/role.hpp"
 #include "loqsmith/judgement/settings.hpp"
@@ -38,6 +39,8 @@ struct ResultRow {
   std::string reported;  ///< the text that may leave the laboratory
   std::string qualifier;
   std::vector<std::string> reasons;  ///< most serious first
+  /// Both ends of the inverse prediction's 95 % interval, in the sample.
+  std::optional<ConcentrationInterval> calibration_interval;
 };
 
 /// One row of checks.csv.

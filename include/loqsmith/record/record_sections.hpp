@@ -26,6 +26,11 @@ void record_noise(JsonWriter& json, const PublishedRun& run);
 /// each result with its reasons.
 void record_analytes(JsonWriter& json, const PublishedRun& run);
 
+/// `diagnostics` of one calibration set: tests, influence of each standard,
+/// sums of errors by weight, suggested exclusions with the fit without.
+void record_diagnostics(JsonWriter& json,
+                        const Outcome<CalibrationDiagnostics>& diagnostics);
+
 /// `checks`: how often each passed and failed, and those that failed.
 void record_checks(JsonWriter& json, const PublishedRun& run);
 

@@ -12,6 +12,9 @@ namespace loqsmith {
 void write_results_table(std::ostream& out, const PublishedRun& run);
 void write_limits_table(std::ostream& out, const PublishedRun& run);
 void write_calibration_table(std::ostream& out, const PublishedRun& run);
+/// One row a test, done or not, then the advice on weights and the standards
+/// that tests point at.
+void write_diagnostics_table(std::ostream& out, const PublishedRun& run);
 void write_standards_table(std::ostream& out, const PublishedRun& run);
 void write_peaks_table(std::ostream& out, const PublishedRun& run);
 void write_checks_table(std::ostream& out, const PublishedRun& run);
