@@ -12,6 +12,7 @@
 #include "loqsmith/judgement/judge_set.hpp"
 #include "loqsmith/judgement/limit_evidence.hpp"
 #include "loqsmith/judgement/measured_analyte.hpp"
+#include "loqsmith/judgement/result_checks.hpp"
 #include "loqsmith/judgement/result_row.hpp"
 #include "loqsmith/judgement/set_evidence.hpp"
 #include "loqsmith/judgement/signal_unit.hpp"
@@ -81,34 +82,60 @@ void limit_addition(CalibrationSet& set, const MeasuredAnalyte& night,
   limit_set(set, addition_evidence(night, members, set, spikes), night);
 }
 
-/// @param elsewhere  injections whose result another set gives
-void judge_results(AnalyteJudgement& judgement, const MeasuredAnalyte& members,
-                   const CalibrationSet& set, SetVerdict verdict,
-                   const std::set<int>& elsewhere,
-                   const std::vector<std::string>& withholding) {
-  name_set(verdict.checks, set);
-  verdict.findings.withholding.insert(verdict.findings.withholding.begin(),
-                                      withholding.begin(), withholding.end());
-  append(judgement.checks, std::move(verdict.checks));
-  for (const InjectionResponse& one : members.injections) {
-    if (!is_quantified(one.injection->role)) continue;
-    if (elsewhere.contains(one.injection->number)) continue;
-    judgement.results.push_back(
-        judge_result(one, members, set, verdict.findings));
-  }
+// One set ready to give results.
+struct Ready {
+  const MeasuredAnalyte* members = nullptr;
+  const CalibrationSet* set = nullptr;
+  AnalyteFindings findings;
+  std::set<int> elsewhere = {};  // injections whose result another set gives
+};
+
+void sort_by_run_order(std::vector<ResultRow>& rows) {
+  std::stable_sort(rows.begin(), rows.end(),
+                   [](const ResultRow& a, const ResultRow& b) {
+                     return a.injection < b.injection;
+                   });
 }
 
-void judge_by_standards(AnalyteJudgement& judgement, Sets sets,
-                        const std::set<int>& by_addition,
-                        const std::vector<std::string>& withholding) {
-  for (std::size_t i = 0; i < sets.members.size(); ++i) {
-    const CalibrationSet& set = sets.calibrated[i];
-    SetVerdict verdict = check_set(sets.members[i].analyte, set);
-    check_bracket(verdict, sets.members[i], set);
-    judge_results(judgement, sets.members[i].analyte, set, std::move(verdict),
-                  by_addition, withholding);
+std::vector<ResultRow> results_of(std::vector<Ready>& ready,
+                                  const std::vector<CheckEffect>& effects) {
+  std::vector<ResultRow> results;
+  for (Ready& one : ready) {
+    one.findings.effects = effects;
+    for (const InjectionResponse& injection : one.members->injections) {
+      if (!is_quantified(injection.injection->role)) continue;
+      if (one.elsewhere.contains(injection.injection->number)) continue;
+      results.push_back(
+          judge_result(injection, *one.members, *one.set, one.findings));
+    }
   }
-  judgement.sets = std::move(sets.calibrated);
+  sort_by_run_order(results);
+  return results;
+}
+
+// The rows go to the judgement, what they mean to the set's results.
+Ready make_ready(AnalyteJudgement& judgement, const MeasuredAnalyte& members,
+                 const CalibrationSet& set, SetVerdict verdict,
+                 const std::vector<std::string>& withholding) {
+  name_set(verdict.checks, set);
+  append(judgement.checks, std::move(verdict.checks));
+  verdict.findings.withholding.insert(verdict.findings.withholding.begin(),
+                                      withholding.begin(), withholding.end());
+  return {&members, &set, std::move(verdict.findings)};
+}
+
+// Twice: checks that rest on results need them first.
+void judge_results(AnalyteJudgement& judgement, std::vector<Ready>& ready,
+                   const MeasuredAnalyte& night,
+                   std::vector<CheckEffect> effects) {
+  const std::vector<ResultRow> first = results_of(ready, effects);
+  CheckOutcome outcome = check_results({night, judgement.sets, first});
+  append(judgement.checks, std::move(outcome.rows));
+  for (CheckEffect& effect : outcome.effects) {
+    if (effect.whole_injection) judgement.for_others.push_back(effect);
+    effects.push_back(std::move(effect));
+  }
+  judgement.results = results_of(ready, effects);
 }
 
 std::set<int> injections_of(const std::vector<AdditionMembers>& additions) {
@@ -121,11 +148,26 @@ std::set<int> injections_of(const std::vector<AdditionMembers>& additions) {
   return numbers;
 }
 
-void sort_by_run_order(std::vector<ResultRow>& rows) {
-  std::stable_sort(rows.begin(), rows.end(),
-                   [](const ResultRow& a, const ResultRow& b) {
-                     return a.injection < b.injection;
-                   });
+std::vector<Ready> ready_sets(AnalyteJudgement& judgement,
+                              const std::vector<SetMembers>& members,
+                              const std::vector<AdditionMembers>& additions,
+                              const std::vector<std::string>& withholding) {
+  std::vector<Ready> ready;
+  const std::set<int> by_addition = injections_of(additions);
+  for (std::size_t i = 0; i < members.size(); ++i) {
+    const CalibrationSet& set = judgement.sets[i];
+    SetVerdict verdict = check_set(members[i].analyte, set);
+    check_bracket(verdict, members[i], set);
+    ready.push_back(make_ready(judgement, members[i].analyte, set,
+                               std::move(verdict), withholding));
+    ready.back().elsewhere = by_addition;
+  }
+  for (std::size_t i = 0; i < additions.size(); ++i) {
+    const CalibrationSet& set = judgement.sets[members.size() + i];
+    ready.push_back(make_ready(judgement, additions[i].analyte, set,
+                               check_addition(additions[i], set), withholding));
+  }
+  return ready;
 }
 
 }  // namespace
@@ -134,7 +176,8 @@ AnalyteJudgement judge_analyte(const AnalyteRules& settings,
                                const UnitSettings& units,
                                const Sequence& sequence,
                                const std::vector<MeasuredInjection>& injections,
-                               const std::string& template_reason) {
+                               const std::string& template_reason,
+                               const std::vector<CheckEffect>& from_others) {
   const MeasuredAnalyte analyte =
       collect_responses(settings, units, sequence, injections);
   const Outcome<std::string> unit = common_signal_unit(injections);
@@ -154,16 +197,15 @@ AnalyteJudgement judge_analyte(const AnalyteRules& settings,
   }
   const std::vector<SpikeResult> spikes = spikes_of(sets);
   compute_limits_of(sets, analyte, spikes);
-  judge_by_standards(judgement, std::move(sets), injections_of(additions),
-                     withholding);
+  judgement.sets = std::move(sets.calibrated);
   for (const AdditionMembers& members : additions) {
-    CalibrationSet set = calibrate_addition(members, refused);
-    limit_addition(set, analyte, members, spikes);
-    judge_results(judgement, members.analyte, set, check_addition(members, set),
-                  {}, withholding);
-    judgement.sets.push_back(std::move(set));
+    judgement.sets.push_back(calibrate_addition(members, refused));
+    limit_addition(judgement.sets.back(), analyte, members, spikes);
   }
-  sort_by_run_order(judgement.results);
+
+  std::vector<Ready> ready =
+      ready_sets(judgement, sets.members, additions, withholding);
+  judge_results(judgement, ready, analyte, from_others);
   append(judgement.checks,
          unchecked_rows(settings.acceptance, settings.analyte));
   append(judgement.checks, check_traces(analyte));

@@ -145,6 +145,15 @@ void bracket(VerdictFacts& facts, const Injection& injection,
   }
 }
 
+void affect(VerdictFacts& facts, const std::vector<CheckEffect>& effects,
+            int injection) {
+  for (const CheckEffect& effect : effects) {
+    if (effect.injection != injection) continue;
+    const bool withholds = effect.action == CheckAction::Withhold;
+    (withholds ? facts.withholding : facts.careful).push_back(effect.word);
+  }
+}
+
 VerdictFacts facts_before_placing(const InjectionResponse& one,
                                   const MeasuredAnalyte& analyte,
                                   const CalibrationSet& set,
@@ -164,6 +173,7 @@ VerdictFacts facts_before_placing(const InjectionResponse& one,
       governing && governing->decision_threshold != governing->detection;
   govern(facts, one, analyte, findings);
   bracket(facts, *one.injection, findings);
+  affect(facts, findings.effects, one.injection->number);
   return facts;
 }
 
@@ -193,10 +203,9 @@ ResultRow judge_result(const InjectionResponse& one,
   if (set.calibration && set.calibration->accepted_highest) {
     numbers.highest = in_sample(end_of_range(set), factor);
   }
-  row.reported =
-      reported_text(row.status, numbers,
-                    reporting_of(*one.injection, *analyte.units,
-                                 analyte.settings->reporting));
+  row.reported = reported_text(row.status, numbers,
+                               reporting_of(*one.injection, *analyte.units,
+                                            analyte.settings->reporting));
   return row;
 }
 

@@ -31,11 +31,14 @@ struct MeasuredInjection {
 ///
 /// @param template_reason  why the analyte could not be learned; empty: it was.
 ///                         Then every result is withheld with that reason.
-AnalyteJudgement judge_analyte(const AnalyteRules& settings,
-                               const UnitSettings& units,
-                               const Sequence& sequence,
-                               const std::vector<MeasuredInjection>& injections,
-                               const std::string& template_reason);
+/// @param from_others  failed checks of other analytes (surrogates) that
+/// concern
+///                     whole injections
+AnalyteJudgement judge_analyte(
+    const AnalyteRules& settings, const UnitSettings& units,
+    const Sequence& sequence, const std::vector<MeasuredInjection>& injections,
+    const std::string& template_reason,
+    const std::vector<CheckEffect>& from_others = {});
 
 /// What `night` found about the files; the checks that every run makes.
 struct SequenceFacts {

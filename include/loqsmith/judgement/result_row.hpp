@@ -4,6 +4,7 @@
 #include <string>
 #include <vector>
 
+#include "loqsmith/judgement/check_effect.hpp"
 #include "loqsmith/judgement/check_standards.hpp"
 #include "loqsmith/judgement/measured_analyte.hpp"
 #include "loqsmith/judgement/rows.hpp"
@@ -25,6 +26,8 @@ struct AnalyteFindings {
   /// Where standards are to stand on both sides: results before the first get
   /// "no-opening-standards", after the last "no-closing-standards".
   std::optional<Bracket> bracket;
+  /// Of checks that rest on results, each for one injection.
+  std::vector<CheckEffect> effects;
 };
 
 /// Whether injections of a role get a row of results: every role but

@@ -10,6 +10,7 @@
 #include "loqsmith/calibration/inverse.hpp"
 #include "loqsmith/calibration/standard_addition.hpp"
 #include "loqsmith/chromatogram/role.hpp"
+#include "loqsmith/judgement/check_effect.hpp"
 #include "loqsmith/judgement/settings.hpp"
 #include "loqsmith/limits/governing.hpp"
 
@@ -94,6 +95,8 @@ struct AnalyteJudgement {
   std::vector<CalibrationSet> sets;
   std::vector<ResultRow> results;  ///< in run order
   std::vector<CheckRow> checks;
+  /// Failed checks of this analyte that concern whole injections.
+  std::vector<CheckEffect> for_others;
 };
 
 }  // namespace loqsmith
