@@ -121,7 +121,7 @@ margin:.2rem 0}
 .diagnostics td:last-child{min-width:18rem}
 .weight{white-space:nowrap;margin-left:.8em}
 .weight .reason{white-space:normal}
-@media (max-width:760px){.scale{--names:0px;--numbers:0px}
+@media screen and (max-width:760px){.scale{--names:0px;--numbers:0px}
 .scale-row{grid-template-columns:minmax(0,1fr) auto}
 .scale-name{grid-column:1;padding-right:.4rem}
 .scale-name>span{background:var(--paper)}
