@@ -98,6 +98,32 @@ TEST(JudgeAnalyte, LimitsComeFromTheBlanks) {
   EXPECT_EQ(judgement.sets[0].standards.size(), 7U);
 }
 
+// Intervals of a weighted fit widen near zero by what blanks scatter; between
+// found feet their scatter says nothing.
+TEST(JudgeAnalyte, ACalibrationIsDiagnosedAndKnowsItsBlanks) {
+  NightBuilder night = ordinary_night();
+  night.settings.calibration.weight =
+      CalibrationSettings::Weight::InverseXSquared;
+  night.add(Role::Sample, 3.0, true);
+  close(night);
+  const AnalyteJudgement judgement = night.judge();
+  const CalibrationSet& set = judgement.sets.at(0);
+  ASSERT_TRUE(set.calibration && set.diagnostics && set.calibration->blanks);
+  EXPECT_TRUE(agrees_to_digits(set.calibration->blanks->sd, 0.1, 12));
+  EXPECT_TRUE(same_bits(set.calibration->blanks->degrees_of_freedom, 6.0));
+  EXPECT_EQ(set.diagnostics->tests.front().name, "lack-of-fit");
+  for (const ResultRow& row : judgement.results) {
+    if (row.role != Role::Sample) continue;
+    ASSERT_TRUE(row.calibration_interval && row.calibration_uncertainty);
+    EXPECT_LT(row.calibration_interval->lower, *row.result);
+    EXPECT_GT(row.calibration_interval->upper, *row.result);
+    EXPECT_GT(*row.calibration_uncertainty, 0.0);
+  }
+
+  night.settings.bounds_own = true;
+  EXPECT_FALSE(night.judge().sets.at(0).calibration->blanks);
+}
+
 TEST(JudgeAnalyte, ARowForEveryQuantifiedInjectionInRunOrder) {
   NightBuilder night = ordinary_night();
   night.add(Role::Conditioning, 1.0);
