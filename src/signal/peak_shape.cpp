@@ -108,7 +108,7 @@ double sharpened_apex(const SmoothedStretch& stretch, double apex,
   constexpr int kOrder = 4;
   constexpr double kLeastSteps = 3.5;
   const double reach = std::max(apex_reach(noise_share) * width_half_minutes,
-                                kLeastSteps * typical_step(stretch.minutes));
+                                kLeastSteps * stretch.spacing.step);
   const std::vector<double>& t = stretch.minutes;
   const auto first = static_cast<std::size_t>(
       std::lower_bound(t.begin(), t.end(), apex - reach) - t.begin());

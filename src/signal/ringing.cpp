@@ -38,7 +38,7 @@ LocalMean mean_around(const SmoothedStretch& stretch, double minutes,
 bool dips_by_smoothing(const SmoothedStretch& stretch, const Summit& taller,
                        const Summit& summit, double multiple, double noise) {
   const double length =
-      typical_step(stretch.minutes) * static_cast<double>(stretch.points);
+      stretch.spacing.step * static_cast<double>(stretch.points);
   const double dip =
       lowest_between(stretch, std::min(taller.minutes, summit.minutes),
                      std::max(taller.minutes, summit.minutes));
