@@ -126,7 +126,7 @@ void draw_residual(std::ostream& out, const Axis& x, const PeakCurve& curve) {
   for (const double left : curve.residual)
     most = std::max(most, std::abs(left));
   const Axis y =
-      tight_axis(-1.05 * most, 1.05 * most, kStripBottom, kStripTop, 4);
+      tight_axis(-1.05 * most, 1.05 * most, kStripBottom, kStripTop, 6);
   if (!curve.noise.source.empty()) {
     const double reach = kResidualDeviations * curve.noise.standard_deviation;
     const double top = y.place(reach);

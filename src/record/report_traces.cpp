@@ -68,16 +68,22 @@ void legend(std::ostream& out, const Curves& curves) {
 }
 
 std::string fit_words(const PeakCurve& curve) {
+  const std::string below =
+      curve.noise.source.empty()
+          ? " Below: what it leaves."
+          : " Below: what it leaves; shaded, two standard deviations of the "
+            "noise to either side.";
   switch (curve.fit) {
     case PeakCurve::Fit::None:
       return {};
     case PeakCurve::Fit::Template:
-      return curve.fit_stands
-                 ? " The response is the template's; below, what it leaves."
-                 : " <b>The template does not fit</b>: the area stands in for "
-                   "it; below, what it leaves.";
+      return (curve.fit_stands
+                  ? " The response is the template's."
+                  : " <b>The template does not fit</b>: the area stands in "
+                    "for it.") +
+             below;
     case PeakCurve::Fit::Model:
-      return " The response is the model's; below, what it leaves.";
+      return " The response is the model's." + below;
   }
   return {};
 }
