@@ -14,6 +14,8 @@ namespace loqsmith {
 namespace {
 
 constexpr std::size_t kLeastMeasured = 3;
+// From here on over a third of the mean comes from the uppermost 1 %.
+constexpr double kVerySkew = 2.0;
 
 /// Centred logarithms.
 struct Logarithms {
@@ -159,6 +161,7 @@ CensoredEstimate lognormal_estimate(const LognormalFit& fit, std::size_t n) {
     return estimate;
   }
   estimate.mean = mean;
+  if (sigma > kVerySkew) estimate.notes.emplace_back("mean-rests-on-shape");
   estimate.standard_deviation = mean * std::sqrt(std::expm1(sigma * sigma));
   for (std::size_t i = 0; i < kSummaryPercentiles.size(); ++i) {
     estimate.percentiles[i] = std::exp(

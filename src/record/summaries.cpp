@@ -3,19 +3,9 @@
 #include <algorithm>
 
 #include "loqsmith/judgement/summary_inputs.hpp"
+#include "loqsmith/record/limit_text.hpp"
 
 namespace loqsmith {
-namespace {
-
-ReportingSettings reporting_for(const Method& method,
-                                const std::string& analyte) {
-  for (const AnalyteSettings& settings : method.analytes) {
-    if (settings.target.id == analyte) return settings.reporting;
-  }
-  return {};
-}
-
-}  // namespace
 
 bool has_groups(const PublishedRun& run) {
   const std::vector<Injection>& all = run.sequence.injections;
@@ -29,7 +19,7 @@ std::vector<SummaryRow> summaries_of(const PublishedRun& run) {
   for (const AnalyteJudgement& analyte : run.analytes) {
     const std::vector<SummaryInput> own =
         summary_inputs(analyte, run.sequence, run.method.units,
-                       reporting_for(run.method, analyte.analyte));
+                       reporting_of(run.method, analyte.analyte));
     inputs.insert(inputs.end(), own.begin(), own.end());
   }
   return summarise_groups(inputs);

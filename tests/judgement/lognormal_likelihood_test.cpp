@@ -82,6 +82,21 @@ TEST(LognormalLikelihood, WithoutCensoringTheClosedForm) {
                                8));
 }
 
+// Beyond sigma 2 the uppermost 1 % make 37 % of the mean and more.
+TEST(LognormalLikelihood, SaysWhereTheMeanRestsOnTheShape) {
+  LognormalFit fit;
+  fit.variance_mean = fit.variance_deviation = 0.01;
+  fit.log_deviation = 1.9;
+  EXPECT_TRUE(lognormal_estimate(fit, 20).notes.empty());
+  fit.log_deviation = 2.1;
+  EXPECT_EQ(lognormal_estimate(fit, 20).notes,
+            std::vector<std::string>{"mean-rests-on-shape"});
+  fit.log_deviation = 40.0;
+  EXPECT_FALSE(lognormal_estimate(fit, 20).mean);
+  EXPECT_EQ(lognormal_estimate(fit, 20).notes,
+            std::vector<std::string>{"spread-beyond-numbers"});
+}
+
 // A change of unit moves mu and leaves sigma.
 TEST(LognormalLikelihood, FollowsTheUnit) {
   std::vector<CensoredValue> scaled = test::both_sides();

@@ -6,6 +6,7 @@
 
 #include "loqsmith/record/record_json.hpp"
 #include "loqsmith/record/report.hpp"
+#include "loqsmith/record/summaries.hpp"
 #include "loqsmith/record/tables.hpp"
 #include "record/example_run.hpp"
 
@@ -22,13 +23,15 @@ struct CommaDecimals : std::numpunct<char> {
 };
 
 std::string everything() {
-  const PublishedRun run = test::example_run();
+  PublishedRun run = test::example_run();
+  for (Injection& one : run.sequence.injections) one.group = "wells";
   std::ostringstream out;
   write_results_table(out, run);
   write_limits_table(out, run);
   write_calibration_table(out, run);
   write_standards_table(out, run);
   write_peaks_table(out, run);
+  write_summary_table(out, run);
   write_checks_table(out, run);
   write_record(out, run);
   write_report(out, run);

@@ -46,6 +46,8 @@ Outcome<LognormalFit> fit_lognormal(std::span<const CensoredValue> values);
 /// Sources: C. E. Land, Technometrics 14 (1972) 145, who gives it as Cox's;
 /// Student's t in place of the normal quantile: U. Olsson, J. Stat. Educ. 13
 /// (2005) 1; from memory.
+/// Note "mean-rests-on-shape" where sigma is above 2: there over a third of the
+/// mean comes from the uppermost 1 %, which nobody has measured.
 CensoredEstimate lognormal_estimate(const LognormalFit& fit, std::size_t n);
 
 }  // namespace loqsmith
