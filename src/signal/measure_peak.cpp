@@ -12,10 +12,10 @@
 #include "loqsmith/signal/peak_shape.hpp"
 #include "loqsmith/signal/peak_working.hpp"
 #include "loqsmith/signal/place_window.hpp"
-#include "loqsmith/signal/point_noise.hpp"
 #include "loqsmith/signal/response_noise.hpp"
 #include "loqsmith/signal/saturation.hpp"
 #include "loqsmith/signal/summits.hpp"
+#include "loqsmith/signal/trace_at_hand.hpp"
 #include "loqsmith/signal/trace_trouble.hpp"
 
 namespace loqsmith {
@@ -24,7 +24,6 @@ namespace {
 constexpr std::size_t kFewestPoints = 5;
 constexpr std::size_t kFewPoints = 10;
 constexpr double kSharpHeight = 50.0;
-constexpr double kMarginWidths = 10.0;
 
 bool available(const IntegrationSettings& settings) {
   const bool scaled =
@@ -34,39 +33,6 @@ bool available(const IntegrationSettings& settings) {
   }
   return !is_estimated(settings.baseline) ||
          (!scaled && settings.overlap == IntegrationSettings::Overlap::Drop);
-}
-
-// The part of the trace that one target needs: its window of times, the feet,
-// and neighbours beside them.
-Trace surroundings(const Trace& trace, const TargetSettings& target,
-                   const WindowTemplate& window, double expected) {
-  const double margin =
-      target.window_minutes + kMarginWidths * window.width_half_minutes;
-  return cut_trace(trace, expected - 2.0 * window.left_minutes - margin,
-                   expected + 2.0 * window.right_minutes + margin);
-}
-
-// The noise as it was measured, but never less than this very trace shows from
-// point to point: a sample may be noisier than the blank.
-NoiseModel noise_of_this_trace(const Trace& near,
-                               const Outcome<NoiseEstimate>& noise) {
-  if (!noise) return white_noise(point_to_point_noise(near.signal));
-  const double known = noise->model.point_to_point();
-  if (is_surely_quieter(near.signal, known)) return noise->model;
-  const double own = point_to_point_noise(near.signal);
-  if (own <= known) return noise->model;
-  return known > 0.0 ? noise->model.scaled(own / known) : white_noise(own);
-}
-
-// The whole trace's noise tells the colour better than a stretch around the
-// peak; how large it is here, the trace at hand says.
-NoiseModel colour_of_noise(const Outcome<NoiseEstimate>& noise,
-                           const NoiseModel& here) {
-  if (!noise || !noise->whole) return here;
-  const double known = noise->whole->point_to_point();
-  const double seen = here.point_to_point();
-  if (!(seen > known) || !(known > 0.0)) return *noise->whole;
-  return noise->whole->scaled(seen / known);
 }
 
 // One target in one trace, measured step by step.
