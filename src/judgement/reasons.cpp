@@ -9,7 +9,7 @@ namespace {
 
 // Most serious first. First why there is no number, then why the number may
 // not be used, then why to be careful with it.
-constexpr std::array<std::string_view, 58> kDoubtful{
+constexpr auto kDoubtful = std::to_array<std::string_view>({
     "peak-not-found",
     "file-refused",
     "trace-missing",
@@ -31,6 +31,11 @@ constexpr std::array<std::string_view, 58> kDoubtful{
     "no-valid-limit",
     "calibration-failed",
     "check-standard-failed",
+    "second-source-failed",
+    "control-failed",
+    "surrogate-failed",
+    "fortified-failed",
+    "duplicate-failed",
     "established-limit-failed",
     "confirmation-failed",
     "response-without-peak",
@@ -68,7 +73,7 @@ constexpr std::array<std::string_view, 58> kDoubtful{
     "noise-zero",
     "noise-from-same-trace",
     "noise-stretch-short",
-};
+});
 
 // They say nothing against the number, only which status it has.
 constexpr std::array<std::string_view, 3> kExplaining{

@@ -40,6 +40,25 @@ struct CheckStandardAcceptance {
   Governs governs = Governs::Both;
 };
 
+/// What is recovered of a known amount, percent.
+struct RecoveryAcceptance {
+  CheckAction action = CheckAction::Withhold;
+  PercentRange recovery{};
+};
+
+/// Fortified samples. What is absent is not judged.
+struct FortifiedAcceptance {
+  CheckAction action = CheckAction::Flag;
+  std::optional<PercentRange> recovery;
+  std::optional<double> relative_difference;  ///< percent
+  double native_ratio = 4.0;  ///< largest native over added amount
+};
+
+struct DuplicateAcceptance {
+  CheckAction action = CheckAction::Flag;
+  double relative_difference = 0.0;  ///< percent, largest
+};
+
 /// Tonight's limits by one procedure against the established ones.
 struct EstablishedLimitAcceptance {
   CheckAction action = CheckAction::Flag;
@@ -56,10 +75,66 @@ struct ConfirmationAcceptance {
   PercentRange prediction{50.0, 150.0};  ///< of one future result
 };
 
+/// The most that a blank may contain. A blank at the limit reaches it and
+/// fails; a number is itself allowed.
+struct BlankMaximum {
+  enum class Kind { DetectionLimit, QuantitationLimit, Number };
+  Kind kind = Kind::DetectionLimit;
+  double number = 0.0;  ///< in the unit of the blank's own result
+};
+
+struct SolventBlankAcceptance {
+  CheckAction action = CheckAction::Flag;
+  BlankMaximum maximum;
+};
+
+struct MethodBlankAcceptance {
+  CheckAction action = CheckAction::Flag;
+  BlankMaximum maximum;
+  /// Results above this many times the blank's are not affected.
+  double sample_ratio = 10.0;
+};
+
+struct InternalStandardAcceptance {
+  CheckAction action = CheckAction::Withhold;
+  PercentRange area{50.0, 200.0};  ///< of the calibration's mean
+};
+
+struct RetentionTimeAcceptance {
+  CheckAction action = CheckAction::Flag;
+  double shift_minutes = 0.0;  ///< largest, either way, > 0
+};
+
+/// Peaks of the standards. Absent limits are not checked.
+struct SuitabilityAcceptance {
+  CheckAction action = CheckAction::Flag;
+  std::optional<double> maximum_tailing;
+  std::optional<double> minimum_plates;
+  std::optional<double> minimum_resolution;
+  std::optional<double> maximum_area_rsd;  ///< percent, see repeatability.hpp
+  std::optional<double> minimum_signal_to_noise;
+};
+
+struct CarryOverAcceptance {
+  CheckAction action = CheckAction::Flag;
+  double maximum_percent = 20.0;  ///< of the lowest standard's response
+};
+
 /// `<acceptance>`: an absent child is not checked, and checks.csv says so.
 struct AcceptanceSettings {
   std::optional<CalibrationAcceptance> calibration;
+  std::optional<RecoveryAcceptance> second_source;
   std::optional<CheckStandardAcceptance> check_standard;
+  std::optional<RecoveryAcceptance> control;
+  std::optional<FortifiedAcceptance> fortified;
+  std::optional<DuplicateAcceptance> duplicate;
+  std::optional<RecoveryAcceptance> surrogate;
+  std::optional<SolventBlankAcceptance> solvent_blank;
+  std::optional<MethodBlankAcceptance> method_blank;
+  std::optional<InternalStandardAcceptance> internal_standard;
+  std::optional<RetentionTimeAcceptance> retention_time;
+  std::optional<SuitabilityAcceptance> suitability;
+  std::optional<CarryOverAcceptance> carry_over;
   std::optional<EstablishedLimitAcceptance> established_limit;
   std::optional<ConfirmationAcceptance> confirmation;
 };
@@ -111,6 +186,9 @@ struct AnalyteRules {
   bool baseline_biased = false;  ///< asymmetric least squares or snip
   NoiseMeasure noise_measure = NoiseMeasure::HalfPeakToPeak;
   std::string internal_standard;  ///< id; empty: external calibration
+  /// Makes it a surrogate: added to every prepared vial, this concentration in
+  /// the undiluted one.
+  std::optional<double> surrogate_concentration;
   CalibrationSettings calibration;
   LimitSettings limits;
   AcceptanceSettings acceptance;
