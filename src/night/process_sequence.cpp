@@ -9,6 +9,7 @@
 #include "loqsmith/judgement/judge_analyte.hpp"
 #include "loqsmith/ledger/publication.hpp"
 #include "loqsmith/night/build_info.hpp"
+#include "loqsmith/night/judge_sequence.hpp"
 #include "loqsmith/night/learn_sequence.hpp"
 #include "loqsmith/night/measure_sequence.hpp"
 #include "loqsmith/night/sequence_folder.hpp"
@@ -38,47 +39,6 @@ std::string name_of(const ProcessOptions& options) {
   return real.filename().string();
 }
 
-std::size_t place_of(const Learned& learned, const std::string& id) {
-  const auto found = std::find_if(
-      learned.targets.begin(), learned.targets.end(),
-      [&](const TargetSettings& target) { return target.id == id; });
-  return static_cast<std::size_t>(found - learned.targets.begin());
-}
-
-// What was measured of one analyte (and its internal standard) in an injection.
-MeasuredInjection measured_of(const Learned& learned,
-                              const AnalyteSettings& analyte,
-                              const Injection& row,
-                              const InjectionMeasured& measured) {
-  const std::size_t own = place_of(learned, analyte.target.id);
-  MeasuredInjection injection{&row, measured.peaks[own], std::nullopt,
-                              measured.signal_units[own]};
-  if (analyte.internal_standard.empty()) return injection;
-  const std::size_t standard = place_of(learned, analyte.internal_standard);
-  injection.internal_standard = measured.peaks[standard];
-  if (measured.signal_units[standard] != injection.signal_unit) {
-    injection.signal_unit += " / " + measured.signal_units[standard];
-  }
-  return injection;
-}
-
-AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
-                       const Measured& measured,
-                       const AnalyteSettings& analyte) {
-  std::vector<MeasuredInjection> injections;
-  const std::vector<Injection>& rows = folder.sheets.sequence.injections;
-  for (std::size_t i = 0; i < rows.size(); ++i) {
-    if (rows[i].role == Role::Conditioning) continue;
-    injections.push_back(
-        measured_of(learned, analyte, rows[i], measured.injections[i]));
-  }
-  const Outcome<WindowTemplate>& window =
-      learned.windows[place_of(learned, analyte.target.id)];
-  return judge_analyte(analyte, folder.sheets.method.units,
-                       folder.sheets.sequence, injections,
-                       window ? std::string{} : window.reason());
-}
-
 SequenceFacts facts_of(const SequenceFolder& folder, const Measured& measured) {
   SequenceFacts facts;
   facts.unlisted_files = folder.unlisted_files;
@@ -104,9 +64,7 @@ PublishedRun assemble(const SequenceFolder& folder, const Learned& learned,
     }
     run.targets.push_back(std::move(target));
   }
-  for (const AnalyteSettings& analyte : folder.sheets.method.analytes) {
-    run.analytes.push_back(judge(folder, learned, measured, analyte));
-  }
+  run.analytes = judge_sequence(folder, learned, measured);
   run.sequence_checks =
       always_checked(folder.sheets.sequence, facts_of(folder, measured));
   for (InjectionMeasured& injection : measured.injections) {
