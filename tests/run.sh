@@ -6,7 +6,7 @@ cd "$(dirname "$0")/.."
 
 sh tests/debian-packages.sh g++ cmake ninja-build libboost-dev \
   libboost-program-options-dev libeigen3-dev libssl-dev \
-  nlohmann-json3-dev libdeflate-dev libgtest-dev libxml2-utils locales
+  nlohmann-json3-dev libdeflate-dev libgtest-dev libxml2-utils locales systemd
 
 launcher=
 if command -v ccache >/dev/null; then

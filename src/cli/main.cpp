@@ -15,6 +15,8 @@ const std::vector<Verb>& verbs() {
   static const std::vector<Verb> kVerbs{
       {"process", "FOLDER... --out OUT",
        "judge a night's sequence and publish the results", process_verb},
+      {"nightly", "ROOT --out OUT",
+       "process every settled folder that is new or changed", nightly_verb},
       {"inspect", "FILE...", "show what a chromatogram file holds",
        inspect_verb},
       {"verify", "OUT", "check everything published against the ledger",
@@ -29,6 +31,7 @@ std::string general_help() {
   std::string help =
       "Examples:\n"
       "  loqsmith process well-water-0412 --out results\n"
+      "  loqsmith nightly sequences --out results\n"
       "  loqsmith inspect well-water-0412/data/inj07.mzML\n"
       "  loqsmith verify results\n\n"
       "Usage:\n  loqsmith VERB ARGUMENTS\n\nVerbs:\n";

@@ -9,6 +9,7 @@
 #include "loqsmith/judgement/judge_analyte.hpp"
 #include "loqsmith/ledger/publication.hpp"
 #include "loqsmith/night/build_info.hpp"
+#include "loqsmith/night/folder_state.hpp"
 #include "loqsmith/night/judge_sequence.hpp"
 #include "loqsmith/night/learn_sequence.hpp"
 #include "loqsmith/night/measure_sequence.hpp"
@@ -89,13 +90,26 @@ std::string sheet_hash(const SequenceFolder& folder, const std::string& name) {
 }
 
 std::vector<std::pair<std::string, std::string>> begun_detail(
-    const SequenceFolder& folder) {
+    const SequenceFolder& folder, const std::string& cause) {
   const Method& method = folder.sheets.method;
   return {{"method", method.id},
           {"revision", method.revision},
           {"method_sha256", sheet_hash(folder, "method.xml")},
           {"sequence_sha256", sheet_hash(folder, "sequence.csv")},
-          {"levels_sha256", sheet_hash(folder, "levels.csv")}};
+          {"levels_sha256", sheet_hash(folder, "levels.csv")},
+          {"state", state_of_files(folder.path, files_of(folder)).listing},
+          {"cause", cause}};
+}
+
+// Of the very bytes that were read.
+std::string contents_read(const std::vector<InputFile>& inputs) {
+  std::vector<std::pair<std::string, std::string>> hashes;
+  for (const InputFile& input : inputs) {
+    hashes.emplace_back(
+        std::filesystem::path(input.path).lexically_normal().generic_string(),
+        input.sha256);
+  }
+  return contents_of(std::move(hashes));
 }
 
 void count_results(const PublishedRun& run, ProcessOutcome& outcome) {
@@ -152,8 +166,8 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   refuse_out_inside(folder.path, options.out);
   const PublicationPlace place{options.out, options.actor, options.clock,
                                options.wait};
-  RunAtWork work =
-      RunAtWork::begin(place, name, folder.path.string(), begun_detail(folder));
+  RunAtWork work = RunAtWork::begin(place, name, folder.path.string(),
+                                    begun_detail(folder, options.cause));
   const std::string begun = options.clock();
 
   const auto start = std::chrono::steady_clock::now();
@@ -173,7 +187,8 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   run.ledger_head = describe(work.begun());
   stage_run(work.staging(), folder, run, options.report);
   const bool person = needs_a_person(run);
-  outcome.published = work.publish({{"needs_a_person", person ? "yes" : "no"}});
+  outcome.published = work.publish({{"needs_a_person", person ? "yes" : "no"},
+                                    {"contents", contents_read(run.inputs)}});
   outcome.messages = work.recovered();
   outcome.status = person ? ExitStatus::NeedsPerson : ExitStatus::Done;
   count_results(run, outcome);

@@ -20,6 +20,7 @@ struct Verb {
 const std::vector<Verb>& verbs();
 
 ExitStatus process_verb(const std::vector<std::string>& arguments);
+ExitStatus nightly_verb(const std::vector<std::string>& arguments);
 ExitStatus inspect_verb(const std::vector<std::string>& arguments);
 ExitStatus verify_verb(const std::vector<std::string>& arguments);
 

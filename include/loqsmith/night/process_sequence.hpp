@@ -15,7 +15,8 @@ namespace loqsmith {
 struct ProcessOptions {
   std::filesystem::path folder;
   std::filesystem::path out;
-  std::string as;  ///< sequence name; empty: the folder's name
+  std::string as;     ///< sequence name; empty: the folder's name
+  std::string cause;  ///< why now, for the ledger; empty: somebody asked
   unsigned jobs = 1;
   std::chrono::seconds wait{0};
   bool report = true;
