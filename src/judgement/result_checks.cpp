@@ -2,10 +2,16 @@
 
 #include <utility>
 
+#include "loqsmith/judgement/control_check.hpp"
+#include "loqsmith/judgement/second_source_check.hpp"
+
 namespace loqsmith {
 
 const std::vector<ResultCheck>& result_checks() {
-  static const std::vector<ResultCheck> checks{};
+  static const std::vector<ResultCheck> checks{
+      check_second_source,
+      check_controls,
+  };
   return checks;
 }
 

@@ -41,6 +41,10 @@ CheckStandardAcceptance check_standard_check(const Section& section) {
   return check;
 }
 
+RecoveryAcceptance recovery_check(const Section& section) {
+  return {check_action(section), percent_range(section, "recovery")};
+}
+
 EstablishedLimitAcceptance established_limit_check(const Section& section) {
   EstablishedLimitAcceptance check;
   check.action = check_action(section);
@@ -91,6 +95,12 @@ AcceptanceSettings acceptance_settings(const MethodElement* own,
   }
   if (const auto found = section("check-standard")) {
     settings.check_standard = check_standard_check(*found);
+  }
+  if (const auto found = section("second-source")) {
+    settings.second_source = recovery_check(*found);
+  }
+  if (const auto found = section("control")) {
+    settings.control = recovery_check(*found);
   }
   if (const auto found = section("established-limit")) {
     settings.established_limit = established_limit_check(*found);

@@ -55,7 +55,7 @@ std::vector<ElementRule> standard_checks() {
   return {
       calibration_check(),
       check("acceptance/second-source", "A standard of another source.",
-            {recovery()}, kWithhold, kLater),
+            {recovery()}, kWithhold, kNow),
       check("acceptance/check-standard", "Standards measured in between.",
             {recovery(),
              defaulted("governs", choice({{"both"}, {"forward"}}), "both",
@@ -76,7 +76,7 @@ std::vector<ElementRule> preparation_checks() {
                        "affected.")},
             kFlag, kLater),
       check("acceptance/control", "Laboratory control samples.", {recovery()},
-            kWithhold, kLater),
+            kWithhold, kNow),
       check(
           "acceptance/fortified", "Fortified samples.",
           {optional("recovery", pair(at_least(0.0)), "Percent, low and high."),

@@ -225,8 +225,7 @@ std::vector<MethodCase> broken_rules() {
               "estimated baselines"),
       changed("own bounds for a learned shape", "response=\"area\"",
               "response=\"template\" bounds=\"own\"",
-              {{"bounds", "since the learned shape spans it"}},
-              "own bounds"),
+              {{"bounds", "since the learned shape spans it"}}, "own bounds"),
   };
 }
 
@@ -240,9 +239,6 @@ std::vector<MethodCase> unavailable() {
   return {
       later("extracted trace", "kind=\"srm\"", "kind=\"extracted\"",
             "kind=\"extracted\"", "not available in this version"),
-      later("check of controls", "<check-standard ",
-            "<control recovery=\"70 130\"/><check-standard ", "<control",
-            "not available in this version"),
       later("surrogate", "<analyte id=\"simazine\"",
             "<analyte surrogate-concentration=\"1\" id=\"simazine\"",
             "surrogate-concentration", "not available in this version"),
