@@ -33,7 +33,7 @@ const std::vector<AcceptanceCheck>& acceptance_checks() {
        [](const Settings& s) { return s.established_limit.has_value(); }},
       {"confirmation",
        [](const Settings& s) { return s.confirmation.has_value(); }},
-      {"closeness", never},
+      {"closeness", [](const Settings& s) { return s.closeness.has_value(); }},
   };
   return checks;
 }

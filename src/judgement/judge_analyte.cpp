@@ -9,6 +9,7 @@
 #include "loqsmith/judgement/addition_sets.hpp"
 #include "loqsmith/judgement/bracketing_check.hpp"
 #include "loqsmith/judgement/calibration_sets.hpp"
+#include "loqsmith/judgement/closeness_check.hpp"
 #include "loqsmith/judgement/judge_set.hpp"
 #include "loqsmith/judgement/limit_evidence.hpp"
 #include "loqsmith/judgement/measured_analyte.hpp"
@@ -124,18 +125,22 @@ Ready make_ready(AnalyteJudgement& judgement, const MeasuredAnalyte& members,
   return {&members, &set, std::move(verdict.findings)};
 }
 
-// Twice: checks that rest on results need them first.
+// Once more after each kind of check: most rest on the numbers alone, repeats
+// are compared last, when it is known which of them are withheld.
 void judge_results(AnalyteJudgement& judgement, std::vector<Ready>& ready,
                    const MeasuredAnalyte& night,
                    std::vector<CheckEffect> effects) {
-  const std::vector<ResultRow> first = results_of(ready, effects);
-  CheckOutcome outcome = check_results({night, judgement.sets, first});
-  append(judgement.checks, std::move(outcome.rows));
-  for (CheckEffect& effect : outcome.effects) {
-    if (effect.whole_injection) judgement.for_others.push_back(effect);
-    effects.push_back(std::move(effect));
-  }
   judgement.results = results_of(ready, effects);
+  for (const ResultCheck check : {check_results, check_closeness}) {
+    CheckOutcome outcome = check({night, judgement.sets, judgement.results});
+    append(judgement.checks, std::move(outcome.rows));
+    if (outcome.effects.empty()) continue;
+    for (CheckEffect& effect : outcome.effects) {
+      if (effect.whole_injection) judgement.for_others.push_back(effect);
+      effects.push_back(std::move(effect));
+    }
+    judgement.results = results_of(ready, effects);
+  }
 }
 
 std::set<int> injections_of(const std::vector<AdditionMembers>& additions) {

@@ -8,6 +8,7 @@
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/record/record_json.hpp"
 #include "loqsmith/record/report.hpp"
+#include "loqsmith/record/reportable.hpp"
 #include "loqsmith/record/summaries.hpp"
 #include "loqsmith/record/tables.hpp"
 
@@ -47,6 +48,7 @@ void stage_run(const fs::path& staging, const SequenceFolder& folder,
     throw Halt(ExitStatus::IoFailed, error.what());
   }
   write(staging / "results.csv", run, write_results_table);
+  write(staging / "reportable.csv", run, write_reportable_table);
   write(staging / "limits.csv", run, write_limits_table);
   write(staging / "calibration.csv", run, write_calibration_table);
   write(staging / "diagnostics.csv", run, write_diagnostics_table);

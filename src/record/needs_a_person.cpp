@@ -1,6 +1,7 @@
 #include <algorithm>
 
 #include "loqsmith/record/published_run.hpp"
+#include "loqsmith/record/reportable.hpp"
 
 namespace loqsmith {
 namespace {
@@ -17,6 +18,13 @@ bool any_withheld(const std::vector<ResultRow>& results) {
   });
 }
 
+bool any_disagreement(const PublishedRun& run) {
+  const std::vector<ReportableRow> rows = reportable_of(run);
+  return std::any_of(rows.begin(), rows.end(), [](const ReportableRow& row) {
+    return row.status == Status::Withheld;
+  });
+}
+
 bool lacks_a_base(const AnalyteJudgement& analyte) {
   return std::any_of(analyte.sets.begin(), analyte.sets.end(),
                      [](const CalibrationSet& set) {
@@ -28,6 +36,7 @@ bool lacks_a_base(const AnalyteJudgement& analyte) {
 
 bool needs_a_person(const PublishedRun& run) {
   if (!run.problems.empty() || any_failed(run.sequence_checks)) return true;
+  if (any_disagreement(run)) return true;
   return std::any_of(run.analytes.begin(), run.analytes.end(),
                      [](const AnalyteJudgement& analyte) {
                        return any_withheld(analyte.results) ||

@@ -3,6 +3,7 @@
 #include <ostream>
 
 #include "loqsmith/record/record_sections.hpp"
+#include "loqsmith/record/reportable.hpp"
 
 namespace loqsmith {
 
@@ -30,6 +31,7 @@ void write_record(std::ostream& out, const PublishedRun& run) {
   record_templates(json, run);
   record_noise(json, run);
   record_analytes(json, run);
+  record_reportable(json, run);
   record_checks(json, run);
   json.end_object();
   out << '\n';

@@ -4,6 +4,7 @@
 
 #include "loqsmith/record/html.hpp"
 #include "loqsmith/record/report_parts.hpp"
+#include "loqsmith/record/reportable.hpp"
 #include "loqsmith/record/summaries.hpp"
 
 namespace loqsmith {
@@ -24,6 +25,7 @@ void write_report(std::ostream& out, const PublishedRun& run) {
   report_head(out, run);
   report_attention(out, run);
   report_grid(out, run);
+  report_reportable(out, run);
   report_summary(out, run);
   for (const AnalyteJudgement& analyte : run.analytes) {
     report_analyte(out, run, analyte);

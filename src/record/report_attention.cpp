@@ -4,6 +4,7 @@
 #include "loqsmith/base/input_error.hpp"
 #include "loqsmith/record/html.hpp"
 #include "loqsmith/record/report_parts.hpp"
+#include "loqsmith/record/reportable.hpp"
 
 namespace loqsmith {
 namespace {
@@ -103,6 +104,17 @@ void add_withheld(Items& items, const AnalyteJudgement& analyte) {
   }
 }
 
+// Samples whose injections contradict each other although each may stand.
+void add_disagreements(Items& items, const PublishedRun& run,
+                       const AnalyteJudgement& analyte) {
+  for (const ReportableRow& row : reportable_of(run, analyte)) {
+    if (row.status != Status::Withheld || !row.injections.empty()) continue;
+    items.add("repeats", html_name(analyte.analyte),
+              "injections of sample " + html_name(row.sample) +
+                  " contradict each other: nothing is reported");
+  }
+}
+
 }  // namespace
 
 void report_attention(std::ostream& out, const PublishedRun& run) {
@@ -113,6 +125,7 @@ void report_attention(std::ostream& out, const PublishedRun& run) {
     add_bases(items, analyte);
     add_checks(items, analyte.checks, analyte_id(analyte.analyte));
     add_withheld(items, analyte);
+    add_disagreements(items, run, analyte);
   }
   out << "<section id=\"attention\">\n<h2>What needs a person</h2>\n";
   if (items.empty()) {

@@ -3,6 +3,7 @@
 
 #include "loqsmith/record/html.hpp"
 #include "loqsmith/record/report_parts.hpp"
+#include "loqsmith/record/reportable.hpp"
 #include "loqsmith/record/summaries.hpp"
 
 namespace loqsmith {
@@ -36,6 +37,7 @@ std::string ledger(const PublishedRun& run) {
 void links(std::ostream& out, const PublishedRun& run) {
   out << "<nav aria-label=\"Sections\"><a href=\"#attention\">Needs a "
          "person</a> <a href=\"#results\">Results</a>";
+  if (has_repeats(run)) out << " <a href=\"#repeats\">Repeats</a>";
   if (has_groups(run)) out << " <a href=\"#groups\">Groups</a>";
   for (const AnalyteJudgement& analyte : run.analytes) {
     out << " <a href=\"#" << analyte_id(analyte.analyte) << "\">"

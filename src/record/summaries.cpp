@@ -3,7 +3,7 @@
 #include <algorithm>
 
 #include "loqsmith/judgement/summary_inputs.hpp"
-#include "loqsmith/record/limit_text.hpp"
+#include "loqsmith/record/reportable.hpp"
 
 namespace loqsmith {
 
@@ -15,14 +15,7 @@ bool has_groups(const PublishedRun& run) {
 }
 
 std::vector<SummaryRow> summaries_of(const PublishedRun& run) {
-  std::vector<SummaryInput> inputs;
-  for (const AnalyteJudgement& analyte : run.analytes) {
-    const std::vector<SummaryInput> own =
-        summary_inputs(analyte, run.sequence, run.method.units,
-                       reporting_of(run.method, analyte.analyte));
-    inputs.insert(inputs.end(), own.begin(), own.end());
-  }
-  return summarise_groups(inputs);
+  return summarise_groups(summary_inputs(reportable_of(run)));
 }
 
 }  // namespace loqsmith

@@ -62,6 +62,13 @@ ConfirmationAcceptance confirmation_check(const Section& section) {
   return check;
 }
 
+ClosenessAcceptance closeness_check(const Section& section) {
+  ClosenessAcceptance check;
+  check.action = check_action(section);
+  check.replicates = section.number("replicates");
+  return check;
+}
+
 const MethodElement* child_of(const MethodElement* element,
                               std::string_view name) {
   return element == nullptr ? nullptr : element->child(name);
@@ -107,6 +114,9 @@ AcceptanceSettings acceptance_settings(const MethodElement* own,
   }
   if (const auto found = section("confirmation")) {
     settings.confirmation = confirmation_check(*found);
+  }
+  if (const auto found = section("closeness")) {
+    settings.closeness = closeness_check(*found);
   }
   return settings;
 }

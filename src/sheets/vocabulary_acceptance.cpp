@@ -148,7 +148,7 @@ std::vector<ElementRule> limit_checks() {
       check("acceptance/closeness", "Repeats and dilutions of one sample.",
             {defaulted("replicates", number(above(0.0)), "20",
                        "Percent difference.")},
-            kWithhold, kLater),
+            kWithhold, kNow),
   };
 }
 

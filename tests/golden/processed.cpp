@@ -37,6 +37,21 @@ std::map<std::string, std::string> tables_of(const fs::path& run) {
   return tables;
 }
 
+const std::vector<std::string>& table_names() {
+  static const std::vector<std::string> names{
+      "calibration.csv", "checks.csv",    "diagnostics.csv",
+      "limits.csv",      "peaks.csv",     "reportable.csv",
+      "results.csv",     "standards.csv", "summary.csv"};
+  return names;
+}
+
+std::vector<std::string> names_of(
+    const std::map<std::string, std::string>& tables) {
+  std::vector<std::string> names;
+  for (const auto& [name, bytes] : tables) names.push_back(name);
+  return names;
+}
+
 bool holds(const std::string& text, const std::string& part) {
   return text.find(part) != std::string::npos;
 }

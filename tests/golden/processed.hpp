@@ -29,6 +29,11 @@ ProgramRun process(const std::filesystem::path& folder,
 /// The bytes of every CSV table of a published run, by file name.
 std::map<std::string, std::string> tables_of(const std::filesystem::path& run);
 
+/// The tables that every run publishes, by name.
+const std::vector<std::string>& table_names();
+std::vector<std::string> names_of(
+    const std::map<std::string, std::string>& tables);
+
 bool holds(const std::string& text, const std::string& part);
 
 }  // namespace loqsmith::test

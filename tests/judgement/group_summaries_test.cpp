@@ -1,6 +1,7 @@
 #include "loqsmith/judgement/group_summaries.hpp"
 
 #include "judgement/censored_examples.hpp"
+#include "judgement/sample_results.hpp"
 #include "loqsmith/judgement/summary_inputs.hpp"
 #include "support/tolerance.hpp"
 
@@ -10,6 +11,7 @@ namespace {
 using test::below;
 using test::measured;
 using test::same_bits;
+using test::SampleResults;
 
 TEST(GroupSummaries, GroupsStayTogetherAndUnitsApart) {
   const std::vector<SummaryInput> inputs{
@@ -37,55 +39,10 @@ TEST(GroupSummaries, GroupsStayTogetherAndUnitsApart) {
   EXPECT_EQ(rows[2].summary.advice, "nothing-measured");
 }
 
-/// Results of one analyte, put together by hand: the range ends at 100 in the
-/// vial, limits at 1 and 3.
-class Results {
- public:
-  Results() {
-    judgement.analyte = "zinol";
-    Calibration line;
-    line.accepted_highest = 100.0;
-    CalibrationSet set;
-    set.set = "1";
-    set.calibration = line;
-    judgement.sets.push_back(set);
-  }
-
-  void add(const std::string& sample, Status status, double result,
-           double dilution = 1.0, Role role = Role::Sample,
-           const std::string& group = "wells") {
-    Injection injection;
-    injection.number = static_cast<int>(sequence.injections.size()) + 1;
-    injection.sample = sample;
-    injection.role = role;
-    injection.group = group;
-    injection.dilution = dilution;
-    sequence.injections.push_back(injection);
-    ResultRow row;
-    row.injection = injection.number;
-    row.sample = sample;
-    row.role = role;
-    row.analyte = "zinol";
-    row.set = "1";
-    row.unit = "ug/L";
-    row.dilution = dilution;
-    row.status = status;
-    row.result = result;
-    row.detection_limit = dilution;
-    row.quantitation_limit = 3.0 * dilution;
-    judgement.results.push_back(row);
-  }
-
-  std::vector<SummaryInput> inputs(const ReportingSettings& settings = {}) {
-    UnitSettings units;
-    units.concentration = "ug/L";
-    units.result = "ug/L";
-    return summary_inputs(judgement, sequence, units, settings);
-  }
-
-  AnalyteJudgement judgement;
-  Sequence sequence;
-};
+std::vector<SummaryInput> inputs_of(const SampleResults& night,
+                                    const ReportingSettings& settings = {}) {
+  return summary_inputs(night.reportable(settings));
+}
 
 void expect_value(const SummaryInput& input, double value, Censoring kind) {
   ASSERT_TRUE(input.value);
@@ -94,13 +51,13 @@ void expect_value(const SummaryInput& input, double value, Censoring kind) {
 }
 
 TEST(SummaryInputs, EachStatusByWhatIsPrinted) {
-  Results night;
+  SampleResults night;
   night.add("a", Status::Reportable, 12.0);
   night.add("b", Status::Estimated, 2.0);
   night.add("c", Status::NotDetected, 0.4, 2.0);
   night.add("d", Status::AboveRange, 900.0, 5.0);
   night.add("e", Status::Withheld, 7.0);
-  std::vector<SummaryInput> found = night.inputs();
+  std::vector<SummaryInput> found = inputs_of(night);
   ASSERT_EQ(found.size(), 5U);
   expect_value(found[0], 12.0, Censoring::Measured);
   expect_value(found[1], 2.0, Censoring::Measured);
@@ -111,26 +68,26 @@ TEST(SummaryInputs, EachStatusByWhatIsPrinted) {
   ReportingSettings settings;
   settings.below_detection = ReportingSettings::BelowDetection::Quantitation;
   settings.below_quantitation = ReportingSettings::BelowQuantitation::Limit;
-  found = night.inputs(settings);
+  found = inputs_of(night, settings);
   expect_value(found[1], 3.0, Censoring::Below);
   expect_value(found[2], 6.0, Censoring::Below);
   settings = {};
   settings.reporting_limit = 15.0;
-  found = night.inputs(settings);
+  found = inputs_of(night, settings);
   expect_value(found[0], 15.0, Censoring::Below);
   expect_value(found[2], 15.0, Censoring::Below);
 }
 
 TEST(SummaryInputs, SamplesOfAGroupOnly) {
-  Results night;
+  SampleResults night;
   night.add("blank", Status::NotDetected, 0.0, 1.0, Role::MethodBlank);
   night.add("check", Status::Reportable, 9.0, 1.0, Role::CheckStandard);
   night.add("a", Status::Reportable, 9.0, 1.0, Role::Sample, "");
-  EXPECT_TRUE(night.inputs().empty());
+  EXPECT_TRUE(inputs_of(night).empty());
 }
 
 TEST(SummaryInputs, OneValueASample) {
-  Results night;
+  SampleResults night;
   // In range only when diluted, twice injected there, once more beyond.
   night.add("a", Status::AboveRange, 180.0);
   night.add("a", Status::Reportable, 190.0, 10.0);
@@ -148,7 +105,7 @@ TEST(SummaryInputs, OneValueASample) {
   // They contradict each other.
   night.add("e", Status::AboveRange, 200.0);
   night.add("e", Status::NotDetected, 0.0, 10.0);
-  const std::vector<SummaryInput> found = night.inputs();
+  const std::vector<SummaryInput> found = inputs_of(night);
   ASSERT_EQ(found.size(), 5U);
   expect_value(found[0], 193.0, Censoring::Measured);
   expect_value(found[1], 1000.0, Censoring::Above);

@@ -6,6 +6,7 @@
 
 #include "loqsmith/record/record_json.hpp"
 #include "loqsmith/record/report.hpp"
+#include "loqsmith/record/reportable.hpp"
 #include "loqsmith/record/summaries.hpp"
 #include "loqsmith/record/tables.hpp"
 #include "record/example_run.hpp"
@@ -32,6 +33,7 @@ std::string everything() {
   write_standards_table(out, run);
   write_peaks_table(out, run);
   write_summary_table(out, run);
+  write_reportable_table(out, run);
   write_checks_table(out, run);
   write_record(out, run);
   write_report(out, run);

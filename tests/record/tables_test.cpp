@@ -5,6 +5,7 @@
 #include <sstream>
 
 #include "loqsmith/base/csv.hpp"
+#include "loqsmith/record/reportable.hpp"
 #include "record/example_run.hpp"
 
 namespace loqsmith {
@@ -128,7 +129,8 @@ TEST(Tables, ChecksOfTheSequenceComeFirst) {
 
 constexpr Writer kAllTables[] = {write_results_table,     write_limits_table,
                                  write_calibration_table, write_standards_table,
-                                 write_peaks_table,       write_checks_table};
+                                 write_peaks_table,       write_checks_table,
+                                 write_reportable_table};
 
 TEST(Tables, AllRowsAreAsLongAsTheHead) {
   for (const Writer write : kAllTables) {

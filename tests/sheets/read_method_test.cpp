@@ -118,6 +118,25 @@ TEST(ReadMethod, SetsOfStandards) {
   }
 }
 
+TEST(ReadMethod, ClosenessOfRepeats) {
+  const auto closeness = [](const char* element) {
+    const Method method =
+        read_method(replaced(kExampleMethod, "<check-standard ",
+                             element + std::string("<check-standard ")),
+                    "method.xml");
+    return method.analytes[0].acceptance.closeness;
+  };
+  EXPECT_FALSE(closeness(""));
+  const auto defaults = closeness("<closeness/>");
+  ASSERT_TRUE(defaults.has_value());
+  EXPECT_EQ(defaults->action, CheckAction::Withhold);
+  EXPECT_TRUE(same_bits(defaults->replicates, 20.0));
+  const auto given = closeness("<closeness replicates=\"8\" action=\"flag\"/>");
+  ASSERT_TRUE(given.has_value());
+  EXPECT_EQ(given->action, CheckAction::Flag);
+  EXPECT_TRUE(same_bits(given->replicates, 8.0));
+}
+
 TEST(ReadMethod, ChecksOfTheLimits) {
   const Method method = read_method(
       replaced(replaced(kExampleMethod, "<calibration-residual ",

@@ -120,6 +120,12 @@ struct CarryOverAcceptance {
   double maximum_percent = 20.0;  ///< of the lowest standard's response
 };
 
+/// Repeat injections and dilutions of one sample.
+struct ClosenessAcceptance {
+  CheckAction action = CheckAction::Withhold;
+  double replicates = 20.0;  ///< largest difference in range, percent
+};
+
 /// `<acceptance>`: an absent child is not checked, and checks.csv says so.
 struct AcceptanceSettings {
   std::optional<CalibrationAcceptance> calibration;
@@ -137,6 +143,7 @@ struct AcceptanceSettings {
   std::optional<CarryOverAcceptance> carry_over;
   std::optional<EstablishedLimitAcceptance> established_limit;
   std::optional<ConfirmationAcceptance> confirmation;
+  std::optional<ClosenessAcceptance> closeness;
 };
 
 /// What may be said of a result.
