@@ -1,7 +1,6 @@
 #include "loqsmith/ledger/chain.hpp"
 
 #include "loqsmith/base/digest.hpp"
-#include "loqsmith/base/numbers.hpp"
 #include "loqsmith/base/time.hpp"
 
 namespace loqsmith {
@@ -56,16 +55,9 @@ void add_line(Chain& chain, std::string_view text) {
   chain.whole_bytes += text.size();
 }
 
-std::optional<LedgerPlace> read_head(const std::string& text) {
-  const std::size_t colon = text.find(':');
-  if (colon == std::string::npos) return std::nullopt;
-  const auto number = parse_whole(std::string_view(text).substr(0, colon));
-  if (!number || *number < 1) return std::nullopt;
-  LedgerPlace place{static_cast<std::uint64_t>(*number),
-                    text.substr(colon + 1)};
-  if (!place.sha256.empty()) place.sha256.pop_back();
-  if (!is_sha256(place.sha256) || head_text(place) != text) return std::nullopt;
-  return place;
+std::optional<LedgerPlace> read_head(std::string_view text) {
+  if (text.empty() || text.back() != '\n') return std::nullopt;
+  return read_ledger_place(text.substr(0, text.size() - 1));
 }
 
 HeadCheck damaged(std::string place, std::string what) {
@@ -122,6 +114,21 @@ HeadCheck check_head(const Chain& chain,
         Deviation{both, ends + ": lines were added, or the head is an old one"};
   }
   return check;
+}
+
+std::optional<Deviation> check_extends(const Chain& chain,
+                                       const LedgerPlace& earlier) {
+  const std::size_t count = chain.hashes.size();
+  if (earlier.number > count) {
+    return Deviation{"ledger.jsonl",
+                     "it ends with line " + std::to_string(count) +
+                         ", but line " + std::to_string(earlier.number) +
+                         " was written down elsewhere: lines were cut off"};
+  }
+  if (chain.hashes[earlier.number - 1] == earlier.sha256) return std::nullopt;
+  return Deviation{line_place(earlier.number),
+                   "its SHA-256 is not the one written down elsewhere: the "
+                   "ledger was written anew up to here, or it is another one"};
 }
 
 }  // namespace loqsmith

@@ -3,6 +3,7 @@
 #include "loqsmith/base/files.hpp"
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/ledger/manifest.hpp"
+#include "loqsmith/ledger/signers.hpp"
 
 namespace loqsmith {
 namespace {
@@ -50,6 +51,14 @@ void halt_if_damaged(const OutLayout& layout, const Chain& chain,
   if (head.damage) halt_as_damaged(*head.damage);
   const RunHistory history = collect_runs(chain.lines);
   if (!history.deviations.empty()) halt_as_damaged(history.deviations.front());
+  const SignerRegister signers = collect_signers(chain.lines);
+  if (!signers.deviations().empty()) {
+    halt_as_damaged(signers.deviations().front());
+  }
+  if (register_file(layout, signers) == RegisterFile::Damaged) {
+    halt_as_damaged(
+        {OutLayout::kSigners, "it is not what the ledger's lines make it"});
+  }
   for (const RunEvents& run : history.runs) {
     if (is_out_of_place(layout, run)) {
       check_staging(layout.staging(run.begun), run);

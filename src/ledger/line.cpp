@@ -4,6 +4,7 @@
 #include <nlohmann/json.hpp>
 #include <set>
 
+#include "loqsmith/base/numbers.hpp"
 #include "loqsmith/base/time.hpp"
 
 namespace loqsmith {
@@ -153,6 +154,17 @@ bool is_sha256(std::string_view text) {
 
 std::string describe(const LedgerPlace& place) {
   return std::to_string(place.number) + ':' + place.sha256;
+}
+
+std::optional<LedgerPlace> read_ledger_place(std::string_view text) {
+  const std::size_t colon = text.find(':');
+  if (colon == std::string_view::npos) return std::nullopt;
+  const auto number = parse_whole(text.substr(0, colon));
+  if (!number || *number < 1) return std::nullopt;
+  LedgerPlace place{static_cast<std::uint64_t>(*number),
+                    std::string(text.substr(colon + 1))};
+  if (!is_sha256(place.sha256) || describe(place) != text) return std::nullopt;
+  return place;
 }
 
 }  // namespace loqsmith

@@ -7,6 +7,7 @@
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/base/time.hpp"
 #include "loqsmith/ledger/damage.hpp"
+#include "loqsmith/ledger/signatures.hpp"
 #include "loqsmith/ledger/system_failures.hpp"
 
 namespace loqsmith {
@@ -116,7 +117,8 @@ void OpenLedger::report_torn_lines() {
   }
 }
 
-LedgerPlace OpenLedger::append(const LedgerEntry& entry) {
+LedgerPlace OpenLedger::append(const LedgerEntry& entry,
+                               const SigningKey* key) {
   const LedgerPlace last = chain_.last();
   LedgerLine line;
   line.number = last.number + 1;
@@ -131,6 +133,9 @@ LedgerPlace OpenLedger::append(const LedgerEntry& entry) {
   line.detail = entry.detail;
   line.previous = last.sha256;
   set_time(line, place_.clock(), chain_);
+  if (key != nullptr) {
+    line.detail.emplace_back(kSignature, key->sign(signed_text(line)));
+  }
   const std::string text = ledger_line_text(line);
   // What could not be read back would make the ledger damaged for ever.
   const Chain one = read_chain(text);

@@ -80,6 +80,9 @@ std::string unfit_sequence_name(const std::string& sequence) {
   if (parts.front().rfind("ledger.", 0) == 0) {
     return "the names ledger.* in OUT are the ledger's own";
   }
+  if (parts.front().rfind("signers.", 0) == 0) {
+    return "the names signers.* in OUT are the register's own";
+  }
   return {};
 }
 

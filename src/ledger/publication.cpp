@@ -12,6 +12,7 @@
 #include "loqsmith/ledger/open_ledger.hpp"
 #include "loqsmith/ledger/recovery.hpp"
 #include "loqsmith/ledger/run_history.hpp"
+#include "loqsmith/ledger/signatures.hpp"
 #include "loqsmith/ledger/system_failures.hpp"
 
 // Crash points of a publication, and what the next start makes of each.
@@ -131,6 +132,7 @@ struct RunAtWork::State {
   fs::path staging;
   FileLock owner;
   std::vector<std::string> recovered;
+  std::string signed_before;
   bool published = false;
 
   void begin(OpenLedger& ledger, const Detail& detail);
@@ -147,7 +149,9 @@ std::vector<std::string> recover(const PublicationPlace& place) {
 
 void RunAtWork::State::begin(OpenLedger& ledger, const Detail& detail) {
   check_target(layout, run);
-  begun = ledger.append({"run-begun", run, "", "", detail});
+  Detail all = detail;
+  if (!signed_before.empty()) all.emplace_back("signed_before", signed_before);
+  begun = ledger.append({"run-begun", run, "", "", all});
   staging = layout.staging(begun.number);
   if (!file_ops::make_folder(staging) ||
       !owner.try_lock(staging / OutLayout::kOwner)) {
@@ -175,6 +179,7 @@ RunAtWork RunAtWork::begin(const PublicationPlace& place,
       if (pending_run(history, sequence) != nullptr) return false;
       state->number = next_number(history, sequence);
       state->run = sequence + '/' + run_folder_name(state->number);
+      state->signed_before = describe_signed_runs(ledger.lines(), sequence);
       state->begin(ledger, all);
       return true;
     });
@@ -199,6 +204,10 @@ const std::vector<std::string>& RunAtWork::recovered() const {
   return state_->recovered;
 }
 
+const std::string& RunAtWork::signed_before() const {
+  return state_->signed_before;
+}
+
 // Somebody may have emptied OUT/.work, and a writer then recorded the run as
 // abandoned.
 void RunAtWork::State::check_still_ours(const OpenLedger& ledger) const {
@@ -213,7 +222,8 @@ void RunAtWork::State::check_still_ours(const OpenLedger& ledger) const {
   }
 }
 
-fs::path RunAtWork::publish(const Detail& detail) {
+fs::path RunAtWork::publish(const Detail& detail,
+                            const SigningKey* machine_key) {
   State& state = *state_;
   halt_on_failure([&] {
     const std::string manifest =
@@ -230,8 +240,12 @@ fs::path RunAtWork::publish(const Detail& detail) {
     check_target(state.layout, state.run);
     remove_file(state.staging / OutLayout::kOwner);
     flush_folder(state.staging);
-    ledger.append(
-        {"run-published", state.run, sha256_hex(manifest), "", detail});
+    Detail all = detail;
+    if (machine_key != nullptr) {
+      all.emplace_back("machine_key", machine_key->public_key());
+    }
+    ledger.append({"run-published", state.run, sha256_hex(manifest), "", all},
+                  machine_key);
     state.published = true;
     move_into_place(state.layout, state.begun.number, state.run);
     state.owner.release();

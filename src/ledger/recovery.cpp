@@ -5,6 +5,7 @@
 
 #include "loqsmith/ledger/damage.hpp"
 #include "loqsmith/ledger/run_history.hpp"
+#include "loqsmith/ledger/signers.hpp"
 
 namespace loqsmith {
 namespace {
@@ -74,9 +75,20 @@ void remove_leftovers(OpenLedger& ledger) {
   }
 }
 
+// As the head is: what it must hold stands in the ledger.
+void renew_register(OpenLedger& ledger) {
+  const SignerRegister signers = collect_signers(ledger.lines());
+  if (register_file(ledger.layout(), signers) != RegisterFile::OneBehind) {
+    return;
+  }
+  replace_file(ledger.layout().signers(), *signers.text());
+  ledger.say("signers.jsonl was one change behind: renewed");
+}
+
 }  // namespace
 
 void recover_runs(OpenLedger& ledger) {
+  renew_register(ledger);
   for (const RunEvents& run : collect_runs(ledger.lines()).runs) {
     if (is_out_of_place(ledger.layout(), run)) finish_published(ledger, run);
     if (run.pending()) abandon(ledger, run);

@@ -9,9 +9,12 @@
 
 #include "loqsmith/base/files.hpp"
 #include "loqsmith/ledger/chain.hpp"
+#include "loqsmith/ledger/input_check.hpp"
 #include "loqsmith/ledger/manifest.hpp"
 #include "loqsmith/ledger/out_layout.hpp"
 #include "loqsmith/ledger/run_history.hpp"
+#include "loqsmith/ledger/signatures.hpp"
+#include "loqsmith/ledger/signers.hpp"
 #include "loqsmith/ledger/system_failures.hpp"
 
 namespace loqsmith {
@@ -51,8 +54,10 @@ std::vector<std::string> files_of(const fs::path& out) {
 
 class Verification {
  public:
-  Verification(const fs::path& out, SteadyClock::time_point deadline)
-      : layout_{out}, deadline_(deadline) {}
+  Verification(const fs::path& out, const VerifyRequest& request)
+      : layout_{out},
+        request_(request),
+        deadline_(SteadyClock::now() + request.patience) {}
 
   VerifyReport take() {
     // The list comes first: a run published from here on is then in the ledger
@@ -64,6 +69,12 @@ class Verification {
     const RunHistory history = collect_runs(chain.lines);
     add(chain.deviations);
     add(history.deviations);
+    judge_register();
+    judge_signatures(chain, history);
+    if (request_.since) {
+      const auto deviation = check_extends(chain, *request_.since);
+      if (deviation) add({*deviation});
+    }
     for (const RunEvents& run : history.runs) check_run(run);
     name_unknown(files);
     note_work(history);
@@ -75,6 +86,8 @@ class Verification {
   void judge_ends(const Chain& chain, const HeadCheck& check);
   std::optional<std::string> read(const fs::path& path,
                                   const std::string& name);
+  void judge_register();
+  void judge_signatures(const Chain& chain, const RunHistory& history);
   void check_run(const RunEvents& run);
   fs::path find_run(const RunEvents& run);
   void name_unknown(const std::vector<std::string>& files);
@@ -86,6 +99,10 @@ class Verification {
   }
 
   OutLayout layout_;
+  VerifyRequest request_;
+  InputCheck inputs_;
+  SignerRegister signers_;
+  RegisterFile register_file_ = RegisterFile::Current;
   SteadyClock::time_point deadline_;
   VerifyReport report_;
   std::set<std::string> known_{"ledger.jsonl", "ledger.head"};
@@ -104,12 +121,14 @@ std::optional<std::string> Verification::read(const fs::path& path,
 }
 
 // A ledger that is read while a line is appended may end in the middle of it,
-// or its head may be behind.
+// or its head or the register may be behind: both are read first, so that they
+// are never ahead.
 Chain Verification::read_ledger() {
   Chain chain;
   HeadCheck check;
   look_until(deadline_, [&] {
     report_.deviations.clear();
+    const auto signers = read(layout_.signers(), OutLayout::kSigners);
     const auto head = read(layout_.head(), "ledger.head");
     const auto bytes = read(layout_.ledger(), "ledger.jsonl");
     if (!bytes && report_.deviations.empty()) {
@@ -117,7 +136,10 @@ Chain Verification::read_ledger() {
     }
     chain = read_chain(bytes.value_or(""));
     check = check_head(chain, head);
-    return chain.torn.empty() && !check.behind;
+    signers_ = collect_signers(chain.lines);
+    register_file_ = register_file(signers, signers_);
+    return chain.torn.empty() && !check.behind &&
+           register_file_ == RegisterFile::Current;
   });
   judge_ends(chain, check);
   return chain;
@@ -138,6 +160,30 @@ void Verification::judge_ends(const Chain& chain, const HeadCheck& check) {
               ": a writer was interrupted, or a line was added"}});
   }
   if (check.damage) add({*check.damage});
+}
+
+void Verification::judge_register() {
+  known_.insert(OutLayout::kSigners);
+  add(signers_.deviations());
+  if (register_file_ == RegisterFile::Current) return;
+  add({{OutLayout::kSigners,
+        register_file_ == RegisterFile::OneBehind
+            ? "the last change that the ledger knows is missing: its writer "
+              "was interrupted, the next start renews it"
+            : "it is not what the lines of the ledger make it"}});
+}
+
+void Verification::judge_signatures(const Chain& chain,
+                                    const RunHistory& history) {
+  add(check_signatures(chain.lines, history));
+  report_.signatures = collect_signatures(chain.lines).size();
+  if (request_.machine_key.empty()) return;
+  std::uint64_t not_signed = 0;
+  add(check_machine_key(chain.lines, request_.machine_key, not_signed));
+  if (not_signed == 0) return;
+  report_.notes.push_back(std::to_string(not_signed) +
+                          (not_signed == 1 ? " run was" : " runs were") +
+                          " published before the first signed one");
 }
 
 // The folder that holds a published run: staging between the two last steps of
@@ -175,6 +221,10 @@ void Verification::check_run(const RunEvents& run) {
   }
   if (!check.manifest_trusted) unchecked_.insert(run.object + '/');
   report_.files += check.files.size() + (check.manifest_trusted ? 1 : 0);
+  // A changed record is named above; what it says of the inputs is worthless.
+  if (request_.inputs && check.deviations.empty()) {
+    inputs_.check_run(folder, run, report_);
+  }
 }
 
 void Verification::name_unknown(const std::vector<std::string>& files) {
@@ -186,10 +236,10 @@ void Verification::name_unknown(const std::vector<std::string>& files) {
                       return file.compare(0, run.size(), run) == 0;
                     });
     if (excused) continue;
-    // The name under which the head is written before it is renamed.
-    if (file == "ledger.head.new") {
-      report_.notes.push_back(
-          "ledger.head.new: a writer is at work or was interrupted");
+    // The names under which head and register are written before a rename.
+    if (file == "ledger.head.new" || file == "signers.jsonl.new") {
+      report_.notes.push_back(file +
+                              ": a writer is at work or was interrupted");
       continue;
     }
     add({{file, "no manifest names this file"}});
@@ -221,10 +271,15 @@ void Verification::note_work(const RunHistory& history) {
 
 }  // namespace
 
+VerifyReport verify_out(const fs::path& out, const VerifyRequest& request) {
+  return halt_on_failure([&] { return Verification(out, request).take(); });
+}
+
 VerifyReport verify_out(const fs::path& out,
                         std::chrono::milliseconds patience) {
-  return halt_on_failure(
-      [&] { return Verification(out, SteadyClock::now() + patience).take(); });
+  VerifyRequest request;
+  request.patience = patience;
+  return verify_out(out, request);
 }
 
 }  // namespace loqsmith

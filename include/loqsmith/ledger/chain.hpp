@@ -43,4 +43,11 @@ std::string head_text(const LedgerPlace& last);
 HeadCheck check_head(const Chain& chain,
                      const std::optional<std::string>& head);
 
+/// What shows that the ledger does not extend a place written down elsewhere;
+/// nothing where it does. As each line holds the hash of the one above, one
+/// place stands for all lines up to it.
+/// @param earlier  its number is at least 1
+std::optional<Deviation> check_extends(const Chain& chain,
+                                       const LedgerPlace& earlier);
+
 }  // namespace loqsmith

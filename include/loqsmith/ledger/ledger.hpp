@@ -3,7 +3,9 @@
 #include <cstdint>
 #include <filesystem>
 #include <functional>
+#include <optional>
 #include <string>
+#include <string_view>
 #include <utility>
 #include <vector>
 
@@ -38,5 +40,8 @@ struct LedgerPlace {
 
 /// Names a line and its hash as "12:ab34...": what people write down.
 std::string describe(const LedgerPlace& place);
+
+/// Reads what describe() gives; nothing for any other text.
+std::optional<LedgerPlace> read_ledger_place(std::string_view text);
 
 }  // namespace loqsmith

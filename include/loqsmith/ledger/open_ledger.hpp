@@ -4,6 +4,7 @@
 #include <string>
 #include <vector>
 
+#include "loqsmith/base/ed25519.hpp"
 #include "loqsmith/base/files.hpp"
 #include "loqsmith/ledger/chain.hpp"
 #include "loqsmith/ledger/ledger.hpp"
@@ -28,7 +29,8 @@ class OpenLedger {
   const PublicationPlace& place() const { return place_; }
 
   /// Writes and flushes one line, then the head.
-  LedgerPlace append(const LedgerEntry& entry);
+  /// @param key  signs the line (signatures.hpp); null: no signature
+  LedgerPlace append(const LedgerEntry& entry, const SigningKey* key = nullptr);
 
   /// What was found and mended, one sentence each.
   const std::vector<std::string>& found() const { return found_; }

@@ -13,6 +13,8 @@ struct OutLayout {
 
   std::filesystem::path ledger() const { return out / "ledger.jsonl"; }
   std::filesystem::path head() const { return out / "ledger.head"; }
+  /// The register of signers; there is none before the first is added.
+  std::filesystem::path signers() const { return out / kSigners; }
   std::filesystem::path work() const { return out / kWork; }
   std::filesystem::path lock() const { return work() / "lock"; }
   /// The staging folder of the run whose `run-begun` line has this number: such
@@ -21,6 +23,7 @@ struct OutLayout {
   /// The number in a staging folder's name; nothing for other names.
   static std::optional<std::uint64_t> staging_number(const std::string& name);
 
+  static constexpr const char* kSigners = "signers.jsonl";
   static constexpr const char* kWork = ".work";
   static constexpr const char* kOwner = "owner";
   static constexpr const char* kManifest = "manifest.json";

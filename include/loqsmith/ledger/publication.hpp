@@ -7,6 +7,7 @@
 #include <utility>
 #include <vector>
 
+#include "loqsmith/base/ed25519.hpp"
 #include "loqsmith/ledger/ledger.hpp"
 
 namespace loqsmith {
@@ -50,12 +51,17 @@ class RunAtWork {
   const LedgerPlace& begun() const;  ///< its run-begun line
   const std::filesystem::path& staging() const;
   const std::vector<std::string>& recovered() const;
+  /// Which earlier runs of the sequence persons have signed
+  /// (describe_signed_runs()); empty: none. Its run-begun line says it too.
+  const std::string& signed_before() const;
 
   /// Steps 3 and 4: writes manifest.json over everything in staging, flushes
   /// all files and folders, appends `run-published`, renames into place.
+  /// @param machine_key  signs the line; null: it is not signed
   /// @return the published folder.
   std::filesystem::path publish(
-      const std::vector<std::pair<std::string, std::string>>& detail);
+      const std::vector<std::pair<std::string, std::string>>& detail,
+      const SigningKey* machine_key = nullptr);
 
  private:
   struct State;

@@ -5,6 +5,7 @@
 namespace loqsmith {
 
 /// Second half of recovery, after OpenLedger has mended the ledger itself:
+/// - a register of signers that is one change behind: renewed;
 /// - published without its folder (its staging was found whole, otherwise the
 ///   ledger would not have opened): line `recovery`, moved into place;
 /// - begun, not published, and nobody holds its staging: line `run-abandoned`,
