@@ -3,6 +3,8 @@
 #include <utility>
 
 #include "loqsmith/judgement/control_check.hpp"
+#include "loqsmith/judgement/duplicate_check.hpp"
+#include "loqsmith/judgement/fortified_check.hpp"
 #include "loqsmith/judgement/second_source_check.hpp"
 
 namespace loqsmith {
@@ -11,6 +13,8 @@ const std::vector<ResultCheck>& result_checks() {
   static const std::vector<ResultCheck> checks{
       check_second_source,
       check_controls,
+      check_fortified,
+      check_duplicates,
   };
   return checks;
 }

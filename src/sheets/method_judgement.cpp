@@ -45,6 +45,17 @@ RecoveryAcceptance recovery_check(const Section& section) {
   return {check_action(section), percent_range(section, "recovery")};
 }
 
+FortifiedAcceptance fortified_check(const Section& section) {
+  FortifiedAcceptance check;
+  check.action = check_action(section);
+  if (section.text("recovery")) {
+    check.recovery = percent_range(section, "recovery");
+  }
+  check.relative_difference = section.optional_number("relative-difference");
+  check.native_ratio = section.number("native-ratio");
+  return check;
+}
+
 EstablishedLimitAcceptance established_limit_check(const Section& section) {
   EstablishedLimitAcceptance check;
   check.action = check_action(section);
@@ -108,6 +119,13 @@ AcceptanceSettings acceptance_settings(const MethodElement* own,
   }
   if (const auto found = section("control")) {
     settings.control = recovery_check(*found);
+  }
+  if (const auto found = section("fortified")) {
+    settings.fortified = fortified_check(*found);
+  }
+  if (const auto found = section("duplicate")) {
+    settings.duplicate = {check_action(*found),
+                          found->number("relative-difference")};
   }
   if (const auto found = section("established-limit")) {
     settings.established_limit = established_limit_check(*found);

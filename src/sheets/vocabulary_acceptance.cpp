@@ -84,10 +84,10 @@ std::vector<ElementRule> preparation_checks() {
            defaulted("native-ratio", number(above(0.0)), "4",
                      "Native over added amount beyond which it is not "
                      "judged.")},
-          kFlag, kLater),
+          kFlag, kNow),
       check("acceptance/duplicate", "Duplicates of samples.",
             {required("relative-difference", number(above(0.0)), "Percent.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/surrogate", "Recovery of the surrogates.", {recovery()},
             kWithhold, kLater),
   };

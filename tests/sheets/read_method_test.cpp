@@ -137,6 +137,29 @@ TEST(ReadMethod, ClosenessOfRepeats) {
   EXPECT_TRUE(same_bits(given->replicates, 8.0));
 }
 
+TEST(ReadMethod, ChecksOfKnownAmounts) {
+  const Method method = read_method(
+      replaced(kExampleMethod, "<check-standard ",
+               "<second-source recovery=\"70 130\" action=\"flag\"/>"
+               "<control recovery=\"80 120\"/>"
+               "<fortified relative-difference=\"20\" native-ratio=\"3\"/>"
+               "<duplicate relative-difference=\"25\"/><check-standard "),
+      "method.xml");
+  const AcceptanceSettings& accept = method.analytes[0].acceptance;
+  ASSERT_TRUE(accept.second_source && accept.control && accept.fortified &&
+              accept.duplicate);
+  EXPECT_EQ(accept.second_source->action, CheckAction::Flag);
+  EXPECT_TRUE(same_bits(accept.second_source->recovery.high, 130.0));
+  EXPECT_EQ(accept.control->action, CheckAction::Withhold);
+  EXPECT_TRUE(same_bits(accept.control->recovery.low, 80.0));
+  EXPECT_EQ(accept.fortified->action, CheckAction::Flag);
+  EXPECT_FALSE(accept.fortified->recovery.has_value());
+  EXPECT_TRUE(same_bits(accept.fortified->relative_difference.value(), 20.0));
+  EXPECT_TRUE(same_bits(accept.fortified->native_ratio, 3.0));
+  EXPECT_EQ(accept.duplicate->action, CheckAction::Flag);
+  EXPECT_TRUE(same_bits(accept.duplicate->relative_difference, 25.0));
+}
+
 TEST(ReadMethod, ChecksOfTheLimits) {
   const Method method = read_method(
       replaced(replaced(kExampleMethod, "<calibration-residual ",
