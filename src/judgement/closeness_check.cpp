@@ -48,33 +48,40 @@ std::optional<CheckRow> compare(const SampleRepeats& sample, CheckRow row,
   return row;
 }
 
+CheckOutcome not_checked(CheckRow row, const std::string& why) {
+  row.note = "not checked: " + why;
+  return {{std::move(row)}, {}};
+}
+
+void withhold_or_flag(CheckOutcome& outcome, const SampleRepeats& sample,
+                      CheckAction action) {
+  for (const Repeat& one : sample.repeats) {
+    outcome.effects.push_back(
+        {one.row->injection, kDilutionsDisagree, action, false});
+  }
+}
+
 }  // namespace
 
 CheckOutcome check_closeness(const FirstResults& results) {
-  CheckOutcome outcome;
   const AnalyteRules& settings = *results.night.settings;
-  if (!settings.acceptance.closeness) return outcome;
+  if (!settings.acceptance.closeness) return {};
   const ClosenessAcceptance& accept = *settings.acceptance.closeness;
+  const CheckRow blank = blank_row(settings, accept);
+  if (settings.surrogate_concentration) {
+    return not_checked(blank, "a surrogate is no part of samples");
+  }
+  CheckOutcome outcome;
   for (const SampleRepeats& sample :
        repeats_of_samples(results.results, results.sets,
                           *results.night.sequence, *results.night.units)) {
-    std::optional<CheckRow> row =
-        compare(sample, blank_row(settings, accept), accept.replicates);
+    std::optional<CheckRow> row = compare(sample, blank, accept.replicates);
     if (!row) continue;
-    if (row->passed == false) {
-      for (const Repeat& one : sample.repeats) {
-        outcome.effects.push_back(
-            {one.row->injection, kDilutionsDisagree, accept.action, false});
-      }
-    }
+    if (row->passed == false) withhold_or_flag(outcome, sample, accept.action);
     outcome.rows.push_back(*std::move(row));
   }
-  if (outcome.rows.empty()) {
-    outcome.rows.push_back(blank_row(settings, accept));
-    outcome.rows.back().note =
-        "not checked: no sample has two results in range";
-  }
-  return outcome;
+  if (!outcome.rows.empty()) return outcome;
+  return not_checked(blank, "no sample has two results in range");
 }
 
 }  // namespace loqsmith

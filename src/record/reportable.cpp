@@ -10,8 +10,21 @@
 
 namespace loqsmith {
 
+namespace {
+
+bool is_surrogate(const Method& method, const std::string& analyte) {
+  return std::any_of(method.analytes.begin(), method.analytes.end(),
+                     [&](const AnalyteSettings& settings) {
+                       return settings.target.id == analyte &&
+                              settings.surrogate_concentration.has_value();
+                     });
+}
+
+}  // namespace
+
 std::vector<ReportableRow> reportable_of(const PublishedRun& run,
                                          const AnalyteJudgement& analyte) {
+  if (is_surrogate(run.method, analyte.analyte)) return {};
   return reportable_results(analyte, run.sequence, run.method.units,
                             reporting_of(run.method, analyte.analyte));
 }

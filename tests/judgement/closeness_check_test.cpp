@@ -138,6 +138,15 @@ TEST_F(Closeness, AContradictionFailsWithoutADifference) {
   }
 }
 
+TEST_F(Closeness, SurrogatesAreNotCompared) {
+  night_.settings.surrogate_concentration = 10.0;
+  sample({{10.0, 1}, {10.0, 5}});
+  const auto rows = rows_of(judge().checks, "closeness");
+  ASSERT_EQ(rows.size(), 1U);
+  EXPECT_FALSE(rows[0].passed);
+  EXPECT_EQ(results_of("W-1").front()->status, Status::Reportable);
+}
+
 TEST_F(Closeness, NothingToCompare) {
   sample({{140.0, 1}, {20.0, 10}, {2.0, 100}});
   night_.rows[15].injection.sample = "W-3";

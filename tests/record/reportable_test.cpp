@@ -85,6 +85,12 @@ TEST(ReportableTable, AContradictionNeedsAPerson) {
             std::string::npos);
 }
 
+TEST(ReportableTable, SurrogatesAreNobodysResult) {
+  PublishedRun run = clean_run();
+  run.method.analytes[0].surrogate_concentration = 10.0;
+  EXPECT_EQ(text_of(write_reportable_table, run), kHead);
+}
+
 TEST(ReportableTable, OneRowForEachSampleAndAnalyteInRunOrder) {
   const PublishedRun run = test::example_run();
   const std::string text = text_of(write_reportable_table, run);

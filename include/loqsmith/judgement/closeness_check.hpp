@@ -11,6 +11,8 @@ namespace loqsmith {
 /// where there is none, one row says so. A failure affects every injection of
 /// the sample.
 ///
+/// Surrogates are added to vials and differ with their dilution: not checked.
+///
 /// `results` have been through all other checks: withheld ones never count.
 /// Gives nothing where the method does not ask for it.
 CheckOutcome check_closeness(const FirstResults& results);

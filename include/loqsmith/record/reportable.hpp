@@ -10,7 +10,7 @@
 namespace loqsmith {
 
 /// One row a sample and analyte, analytes in the method's order, in each the
-/// samples by their first injection.
+/// samples by their first injection. Surrogates are nobody's result: none.
 std::vector<ReportableRow> reportable_of(const PublishedRun& run);
 std::vector<ReportableRow> reportable_of(const PublishedRun& run,
                                          const AnalyteJudgement& analyte);
