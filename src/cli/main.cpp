@@ -21,6 +21,10 @@ const std::vector<Verb>& verbs() {
        inspect_verb},
       {"verify", "OUT", "check everything published against the ledger",
        verify_verb},
+      {"signers", "add|remove|list",
+       "keep the register of those who may sign", signers_verb},
+      {"sign", "OUT/SEQUENCE/run-N", "sign a published run with your own key",
+       sign_verb},
   };
   return kVerbs;
 }
@@ -33,7 +37,9 @@ std::string general_help() {
       "  loqsmith process well-water-0412 --out results\n"
       "  loqsmith nightly sequences --out results\n"
       "  loqsmith inspect well-water-0412/data/inj07.mzML\n"
-      "  loqsmith verify results\n\n"
+      "  loqsmith verify results\n"
+      "  loqsmith sign results/well-water-0412/run-0001 --key ada.key "
+      "--meaning approved\n\n"
       "Usage:\n  loqsmith VERB ARGUMENTS\n\nVerbs:\n";
   for (const Verb& verb : verbs()) {
     std::string left =

@@ -22,6 +22,7 @@ const std::vector<OptionRow>& option_rows() {
       {"jobs", "N", "files at work side by side (1)"},
       {"wait", "SECONDS", "how long to wait for another process's lock (0)"},
       {"operator", "NAME", "who asks for the runs, for the ledger"},
+      {"key", "FILE", "sign published runs: PEM, Ed25519, mode 0600"},
       {"no-report", "", "publish the tables without report.html"},
       {"help", "", "this text"},
   };
@@ -53,6 +54,9 @@ NightlyOptions nightly_options(const ParsedOptions& parsed) {
   options.jobs = static_cast<unsigned>(parsed.whole("jobs", 1, 1));
   options.wait = std::chrono::seconds(parsed.whole("wait", 0, 0));
   options.report = !parsed.has("no-report");
+  if (const auto file = parsed.value("key")) {
+    options.machine_key = std::make_shared<SigningKey>(SigningKey::read(*file));
+  }
   options.actor = current_actor(parsed.value("operator").value_or(""));
   options.clock = now_utc;
   options.interrupted = [] { return stop_asked != 0; };

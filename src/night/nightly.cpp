@@ -135,6 +135,7 @@ class Night {
     options.jobs = options_.jobs;
     options.wait = options_.wait;
     options.report = options_.report;
+    options.machine_key = options_.machine_key;
     options.actor = options_.actor;
     options.clock = options_.clock;
     options.progress = [&](std::size_t done, std::size_t all) {

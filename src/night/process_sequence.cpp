@@ -188,8 +188,13 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   stage_run(work.staging(), folder, run, options.report);
   const bool person = needs_a_person(run);
   outcome.published = work.publish({{"needs_a_person", person ? "yes" : "no"},
-                                    {"contents", contents_read(run.inputs)}});
+                                    {"contents", contents_read(run.inputs)}},
+                                   options.machine_key.get());
   outcome.messages = work.recovered();
+  if (!work.signed_before().empty()) {
+    outcome.messages.push_back("an earlier run of this sequence is signed: " +
+                               work.signed_before());
+  }
   outcome.status = person ? ExitStatus::NeedsPerson : ExitStatus::Done;
   count_results(run, outcome);
   describe_problems(run, outcome);

@@ -22,6 +22,8 @@ const std::vector<Verb>& verbs();
 ExitStatus process_verb(const std::vector<std::string>& arguments);
 ExitStatus nightly_verb(const std::vector<std::string>& arguments);
 ExitStatus inspect_verb(const std::vector<std::string>& arguments);
+ExitStatus sign_verb(const std::vector<std::string>& arguments);
+ExitStatus signers_verb(const std::vector<std::string>& arguments);
 ExitStatus verify_verb(const std::vector<std::string>& arguments);
 
 }  // namespace loqsmith

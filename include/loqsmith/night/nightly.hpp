@@ -4,9 +4,11 @@
 #include <cstddef>
 #include <filesystem>
 #include <functional>
+#include <memory>
 #include <string>
 #include <vector>
 
+#include "loqsmith/base/ed25519.hpp"
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/ledger/ledger.hpp"
 
@@ -23,6 +25,7 @@ struct NightlyOptions {
   unsigned jobs = 1;
   std::chrono::seconds wait{0};
   bool report = true;
+  std::shared_ptr<const SigningKey> machine_key;  ///< as in ProcessOptions
   LedgerActor actor;
   Clock clock;
   /// Asked before each sequence; true: end here.

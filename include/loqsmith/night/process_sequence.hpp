@@ -4,9 +4,11 @@
 #include <filesystem>
 #include <functional>
 #include <map>
+#include <memory>
 #include <string>
 #include <vector>
 
+#include "loqsmith/base/ed25519.hpp"
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/ledger/ledger.hpp"
 
@@ -20,6 +22,8 @@ struct ProcessOptions {
   unsigned jobs = 1;
   std::chrono::seconds wait{0};
   bool report = true;
+  /// Signs the line of the published run; null: it is not signed.
+  std::shared_ptr<const SigningKey> machine_key;
   LedgerActor actor;
   Clock clock;
   /// Called with files done and files in all, from any thread, one at a time.
