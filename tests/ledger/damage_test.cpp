@@ -6,6 +6,7 @@
 
 #include "ledger_fixture.hpp"
 #include "loqsmith/base/text.hpp"
+#include "loqsmith/ledger/signers.hpp"
 
 namespace loqsmith {
 namespace {
@@ -93,6 +94,13 @@ TEST_F(Damage, OfAnyByteOfManifestsAndPublishedFilesShows) {
     try_every_byte("a/run-0001/" + file);
   }
   EXPECT_GT(changes_, 6 * 300);
+}
+
+TEST_F(Damage, OfAnyByteOfTheRegisterShows) {
+  add_signer(place_at(out_), "Ada Quill", std::string(64, '1'));
+  add_signer(place_at(out_), "Ben Moor", std::string(64, '2'));
+  try_every_byte("signers.jsonl");
+  EXPECT_GT(changes_, 6 * 200);
 }
 
 TEST_F(Damage, BySwappingLeavingOutOrRepeatingLinesShows) {

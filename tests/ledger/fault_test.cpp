@@ -1,4 +1,5 @@
-// Makes every file operation of a publication fail once.
+// Makes every file operation of a publication, and of a change of the register
+// of signers, fail once.
 
 #include <gtest/gtest.h>
 
@@ -10,6 +11,7 @@
 #include "loqsmith/base/file_ops.hpp"
 #include "loqsmith/base/halt.hpp"
 #include "loqsmith/base/text.hpp"
+#include "loqsmith/ledger/signers.hpp"
 
 namespace loqsmith {
 namespace {
@@ -84,6 +86,35 @@ TEST_P(Faults, StopWithIoFailedAndLeaveAnOutThatGoesOn) {
     fs::remove_all(out);
   }
   EXPECT_GT(n, 50);
+}
+
+// A signer is registered after the fault, or by whoever comes next.
+TEST_P(Faults, OfTheRegisterAreMendedByTheNextWriter) {
+  const TempFolder folder(TempFolder::kept_in_memory());
+  publish_run(place_at(folder / "first"), "a");
+  add_signer(place_at(folder / "first"), "Ada Quill", std::string(64, '1'));
+  int n = 1;
+  for (bool met = true; met; ++n) {
+    const fs::path out = folder / "out";
+    fs::copy(folder / "first", out, fs::copy_options::recursive);
+    {
+      const OneFault fault(n, GetParam());
+      try {
+        add_signer(place_at(out), "Ben Moor", std::string(64, '2'));
+      } catch (const Halt& halt) {
+        EXPECT_EQ(halt.status(), ExitStatus::IoFailed) << n;
+      }
+      met = fault.met();
+    }
+    const std::string when = "fault at operation " + std::to_string(n);
+    add_signer(place_at(out), "Cleo Ash", std::string(64, '3'));
+    const VerifyReport report = verify_out(out, std::chrono::milliseconds{0});
+    EXPECT_EQ(deviations_of(report), "") << when;
+    EXPECT_EQ(join(report.notes, "\n"), "") << when;
+    EXPECT_EQ(list_signers(out).back().name, "Cleo Ash") << when;
+    fs::remove_all(out);
+  }
+  EXPECT_GT(n, 15);
 }
 
 INSTANTIATE_TEST_SUITE_P(DiskFullAndIoError, Faults,
