@@ -19,6 +19,8 @@ const std::vector<Verb>& verbs() {
        "process every settled folder that is new or changed", nightly_verb},
       {"inspect", "FILE...", "show what a chromatogram file holds",
        inspect_verb},
+      {"explain", "OUT/SEQUENCE/run-N",
+       "derive one published result, step by step", explain_verb},
       {"verify", "OUT", "check everything published against the ledger",
        verify_verb},
       {"signers", "add|remove|list",
@@ -37,6 +39,8 @@ std::string general_help() {
       "  loqsmith process well-water-0412 --out results\n"
       "  loqsmith nightly sequences --out results\n"
       "  loqsmith inspect well-water-0412/data/inj07.mzML\n"
+      "  loqsmith explain results/well-water-0412/run-0001 --sample W-108 "
+      "--analyte simazine\n"
       "  loqsmith verify results\n"
       "  loqsmith sign results/well-water-0412/run-0001 --key ada.key "
       "--meaning approved\n\n"

@@ -23,7 +23,10 @@ ResultRow describe_injection(const InjectionResponse& one,
   row.set = set.set;
   row.dilution = one.injection->dilution;
   row.unit = result_unit(*one.injection, *analyte.units);
-  if (one.response) row.response = one.response->value;
+  if (one.response) {
+    row.response = one.response->value;
+    row.response_divisor = one.response->divisor;
+  }
   if (!one.peak) return row;
   row.found = one.peak->found;
   // Without a peak the place is only the expected one: nothing was retained.
@@ -197,12 +200,13 @@ ResultRow judge_result(const InjectionResponse& one,
   Verdict verdict = reach_verdict(facts);
   row.status = verdict.status;
   row.reasons = std::move(verdict.reasons);
+  row.rule = verdict.rule;
   row.qualifier = qualifier_letter(row.status, analyte.settings->reporting);
-  ReportedNumbers numbers{row.result, row.detection_limit,
-                          row.quantitation_limit, std::nullopt};
   if (set.calibration && set.calibration->accepted_highest) {
-    numbers.highest = in_sample(end_of_range(set), factor);
+    row.range_end = in_sample(end_of_range(set), factor);
   }
+  const ReportedNumbers numbers{row.result, row.detection_limit,
+                                row.quantitation_limit, row.range_end};
   row.reported = reported_text(row.status, numbers,
                                reporting_of(*one.injection, *analyte.units,
                                             analyte.settings->reporting));

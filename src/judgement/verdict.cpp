@@ -64,7 +64,10 @@ Verdict reach_verdict(const VerdictFacts& facts) {
   std::vector<std::string> words = facts.careful;
   for (const VerdictRule& rule : verdict_rules()) {
     if (!rule.holds(facts)) continue;
-    if (!decided) verdict.status = rule.status;
+    if (!decided) {
+      verdict.status = rule.status;
+      verdict.rule = rule.when;
+    }
     decided = true;
     words.emplace_back(rule.reason);
   }

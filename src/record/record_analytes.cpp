@@ -1,4 +1,5 @@
 #include "loqsmith/record/record_sections.hpp"
+#include "loqsmith/record/result_derivation.hpp"
 #include "loqsmith/record/words.hpp"
 
 namespace loqsmith {
@@ -144,7 +145,8 @@ void record_limits(JsonWriter& json, const LimitsOfAnalyte& limits) {
 }
 
 // The decision and what it was made from; the peak itself is in peaks.csv.
-void record_decision(JsonWriter& json, const ResultRow& row) {
+void record_decision(JsonWriter& json, const PublishedRun& run,
+                     const AnalyteJudgement& analyte, const ResultRow& row) {
   json.begin_object();
   member_whole(json, "injection", row.injection);
   json.member("sample", row.sample);
@@ -162,10 +164,16 @@ void record_decision(JsonWriter& json, const ResultRow& row) {
   json.member("reported", row.reported);
   json.member("qualifier", row.qualifier);
   member_words(json, "reasons", row.reasons);
+  for (const CalibrationSet& set : analyte.sets) {
+    if (set.set != row.set) continue;
+    record_derivation(json, derivation_of(run, set, row));
+    break;
+  }
   json.end_object();
 }
 
-void record_analyte(JsonWriter& json, const AnalyteJudgement& analyte) {
+void record_analyte(JsonWriter& json, const PublishedRun& run,
+                    const AnalyteJudgement& analyte) {
   json.begin_object();
   json.member("analyte", analyte.analyte);
   json.member("concentration_unit", analyte.concentration_unit);
@@ -182,7 +190,9 @@ void record_analyte(JsonWriter& json, const AnalyteJudgement& analyte) {
   }
   json.end_array();
   json.begin_array("decisions");
-  for (const ResultRow& row : analyte.results) record_decision(json, row);
+  for (const ResultRow& row : analyte.results) {
+    record_decision(json, run, analyte, row);
+  }
   json.end_array();
   json.end_object();
 }
@@ -192,7 +202,7 @@ void record_analyte(JsonWriter& json, const AnalyteJudgement& analyte) {
 void record_analytes(JsonWriter& json, const PublishedRun& run) {
   json.begin_array("analytes");
   for (const AnalyteJudgement& analyte : run.analytes) {
-    record_analyte(json, analyte);
+    record_analyte(json, run, analyte);
   }
   json.end_array();
 }

@@ -19,8 +19,8 @@ TEST(CommandLine, HelpGoesToStandardOutputWithExamplesFirst) {
   EXPECT_EQ(help.status, 0);
   EXPECT_TRUE(help.out.starts_with("Examples:")) << help.out;
   EXPECT_TRUE(help.err.empty());
-  for (const char* verb :
-       {"process", "nightly", "inspect", "verify", "signers", "sign"}) {
+  for (const char* verb : {"process", "nightly", "inspect", "explain", "verify",
+                           "signers", "sign"}) {
     EXPECT_TRUE(holds(help.out, verb)) << verb;
     const ProgramRun own = run({verb, "--help"});
     EXPECT_EQ(own.status, 0);
@@ -60,6 +60,9 @@ TEST(CommandLine, WrongUseIsSaidWithTheNearestName) {
       {{"process", "x", "--out", "y", "-q"}, "unknown option"},
       {{"inspect"}, "a file is missing"},
       {{"inspect", "f", "--time-unit", "hour"}, "minute or second"},
+      {{"explain", "--sample", "s", "--analyte", "a"}, "OUT/SEQUENCE/run-N"},
+      {{"explain", "x", "--analyte", "a"}, "--sample S is missing"},
+      {{"explain", "x", "--sample", "s"}, "--analyte A is missing"},
       {{"verify"}, "OUT"},
   };
   for (const Case& wrong : cases) {

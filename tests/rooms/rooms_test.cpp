@@ -50,7 +50,8 @@ const std::vector<std::pair<std::string, Names>>& guarded_headers() {
       {"Eigen/", {"numerics"}},
       {"boost/math/", {"numerics"}},
       {"boost/program_options", {"cli"}},
-      {"nlohmann/", {"ledger"}},
+      // record reads published runs back, ledger its lines and manifests.
+      {"nlohmann/", {"ledger", "record"}},
       {"openssl/", {"base"}},
       {"libdeflate", {"formats"}},
   };

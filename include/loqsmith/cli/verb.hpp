@@ -24,6 +24,7 @@ ExitStatus nightly_verb(const std::vector<std::string>& arguments);
 ExitStatus inspect_verb(const std::vector<std::string>& arguments);
 ExitStatus sign_verb(const std::vector<std::string>& arguments);
 ExitStatus signers_verb(const std::vector<std::string>& arguments);
+ExitStatus explain_verb(const std::vector<std::string>& arguments);
 ExitStatus verify_verb(const std::vector<std::string>& arguments);
 
 }  // namespace loqsmith

@@ -42,6 +42,9 @@ struct ResultRow {
   std::vector<std::string> reasons;  ///< most serious first
   /// Both ends of the inverse prediction's 95 % interval, in the sample.
   std::optional<ConcentrationInterval> calibration_interval;
+  double response_divisor = 1.0;  ///< what the peak's response was divided by
+  std::optional<double> range_end = {};  ///< in the sample
+  std::string rule = {};  ///< the verdict rule that decided, in words
 };
 
 /// One row of checks.csv.

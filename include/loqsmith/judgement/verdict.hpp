@@ -46,6 +46,7 @@ const std::vector<VerdictRule>& verdict_rules();
 struct Verdict {
   Status status = Status::Withheld;
   std::vector<std::string> reasons;  ///< all that apply, most serious first
+  std::string_view rule = {};        ///< `when` of the rule that decided
 };
 Verdict reach_verdict(const VerdictFacts& facts);
 
