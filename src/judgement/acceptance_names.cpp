@@ -23,7 +23,7 @@ const std::vector<AcceptanceCheck>& acceptance_checks() {
       {"control", [](const Settings& s) { return s.control.has_value(); }},
       {"fortified", [](const Settings& s) { return s.fortified.has_value(); }},
       {"duplicate", [](const Settings& s) { return s.duplicate.has_value(); }},
-      {"surrogate", never},
+      {"surrogate", [](const Settings& s) { return s.surrogate.has_value(); }},
       {"internal-standard", never},
       {"retention-time", never},
       {"suitability", never},

@@ -3,13 +3,10 @@
 #include "loqsmith/judgement/calibration_sets.hpp"
 
 namespace loqsmith {
-namespace {
 
-bool is_prepared(Role role) {
+bool is_prepared_role(Role role) {
   return ends_a_block(role) || role == Role::MethodBlank;
 }
-
-}  // namespace
 
 Affected whole_analyte(const FirstResults& first) {
   Affected affected;
@@ -27,7 +24,7 @@ Affected batch_of(const FirstResults& first, const Injection& injection) {
                        : "batch " + injection.prep;
   for (const KnownResult& one : all_results(first)) {
     const Injection& member = one.injection();
-    if (is_prepared(member.role) && member.prep == injection.prep) {
+    if (is_prepared_role(member.role) && member.prep == injection.prep) {
       affected.injections.push_back(member.number);
     }
   }

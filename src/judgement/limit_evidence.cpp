@@ -16,7 +16,16 @@ bool has(const std::vector<std::string>& words, const char* word) {
   return std::find(words.begin(), words.end(), word) != words.end();
 }
 
-std::optional<BlankKind> blank_kind(const InjectionResponse& one) {
+// A method blank holds a surrogate like everything that was prepared.
+bool holds_surrogate(const InjectionResponse& one,
+                     const MeasuredAnalyte& analyte) {
+  return analyte.settings->surrogate_concentration &&
+         one.injection->role == Role::MethodBlank;
+}
+
+std::optional<BlankKind> blank_kind(const InjectionResponse& one,
+                                    const MeasuredAnalyte& analyte) {
+  if (holds_surrogate(one, analyte)) return std::nullopt;
   switch (one.injection->role) {
     case Role::SolventBlank:
       return BlankKind::Solvent;
@@ -114,8 +123,8 @@ void add_predicted_noise(const InjectionResponse& one, BlankKind kind,
   }
 }
 
-bool is_blank(const InjectionResponse& one) {
-  return blank_kind(one) && one.peak && one.response;
+bool is_blank(const InjectionResponse& one, const MeasuredAnalyte& analyte) {
+  return blank_kind(one, analyte) && one.peak && one.response;
 }
 
 // Mean over the blanks of what their noise predicts.
@@ -124,7 +133,7 @@ std::optional<PredictedBias> predicted_bias(const MeasuredAnalyte& analyte) {
   double ratios = 0.0;
   double n = 0.0;
   for (const InjectionResponse& one : analyte.injections) {
-    if (!is_blank(one) || !one.peak->baseline_bias) continue;
+    if (!is_blank(one, analyte) || !one.peak->baseline_bias) continue;
     const BaselineBias& bias = *one.peak->baseline_bias;
     if (!(bias.blank_sd > 0.0)) continue;
     const double divisor = one.response->divisor;
@@ -183,7 +192,7 @@ LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
   LimitEvidence evidence;
   for (const InjectionResponse& one : analyte.injections) {
     const int number = one.injection->number;
-    const std::optional<BlankKind> kind = blank_kind(one);
+    const std::optional<BlankKind> kind = blank_kind(one, analyte);
     if (kind && one.response) {
       evidence.blanks.push_back({number, *kind, one.response->value,
                                  follows_high(analyte, number, calibration),

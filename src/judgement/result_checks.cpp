@@ -6,15 +6,19 @@
 #include "loqsmith/judgement/duplicate_check.hpp"
 #include "loqsmith/judgement/fortified_check.hpp"
 #include "loqsmith/judgement/second_source_check.hpp"
+#include "loqsmith/judgement/surrogate_check.hpp"
 
 namespace loqsmith {
 
 const std::vector<ResultCheck>& result_checks() {
   static const std::vector<ResultCheck> checks{
+      // clang-format off
       check_second_source,
       check_controls,
       check_fortified,
       check_duplicates,
+      check_surrogate,
+      // clang-format on
   };
   return checks;
 }

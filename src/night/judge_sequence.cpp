@@ -5,6 +5,7 @@
 #include <string>
 
 #include "loqsmith/judgement/judge_analyte.hpp"
+#include "loqsmith/judgement/surrogate_check.hpp"
 
 namespace loqsmith {
 namespace {
@@ -34,8 +35,8 @@ MeasuredInjection measured_of(const Learned& learned,
 }
 
 AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
-                       const Measured& measured,
-                       const AnalyteSettings& analyte) {
+                       const Measured& measured, const AnalyteSettings& analyte,
+                       const std::vector<CheckEffect>& from_others) {
   std::vector<MeasuredInjection> injections;
   const std::vector<Injection>& rows = folder.sheets.sequence.injections;
   for (std::size_t i = 0; i < rows.size(); ++i) {
@@ -47,7 +48,7 @@ AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
       learned.windows[place_of(learned, analyte.target.id)];
   return judge_analyte(analyte, folder.sheets.method.units,
                        folder.sheets.sequence, injections,
-                       window ? std::string{} : window.reason());
+                       window ? std::string{} : window.reason(), from_others);
 }
 
 }  // namespace
@@ -55,11 +56,16 @@ AnalyteJudgement judge(const SequenceFolder& folder, const Learned& learned,
 std::vector<AnalyteJudgement> judge_sequence(const SequenceFolder& folder,
                                              const Learned& learned,
                                              const Measured& measured) {
-  std::vector<AnalyteJudgement> judgements;
-  for (const AnalyteSettings& analyte : folder.sheets.method.analytes) {
-    judgements.push_back(judge(folder, learned, measured, analyte));
+  const std::vector<AnalyteSettings>& analytes = folder.sheets.method.analytes;
+  std::vector<bool> is_surrogate;
+  for (const AnalyteSettings& analyte : analytes) {
+    is_surrogate.push_back(analyte.surrogate_concentration.has_value());
   }
-  return judgements;
+  return judge_surrogates_first(
+      is_surrogate,
+      [&](std::size_t i, const std::vector<CheckEffect>& from_others) {
+        return judge(folder, learned, measured, analytes[i], from_others);
+      });
 }
 
 }  // namespace loqsmith

@@ -127,6 +127,9 @@ AcceptanceSettings acceptance_settings(const MethodElement* own,
     settings.duplicate = {check_action(*found),
                           found->number("relative-difference")};
   }
+  if (const auto found = section("surrogate")) {
+    settings.surrogate = recovery_check(*found);
+  }
   if (const auto found = section("established-limit")) {
     settings.established_limit = established_limit_check(*found);
   }

@@ -89,8 +89,10 @@ AnalyteSettings analyte_settings(const MethodElement& analyte,
   AnalyteSettings settings;
   settings.target = target_settings(analyte, method, &analyte);
   tell_judgement(settings);
-  settings.internal_standard =
-      Section(*analyte.rule, &analyte).text("internal-standard").value_or("");
+  const Section section(*analyte.rule, &analyte);
+  settings.internal_standard = section.text("internal-standard").value_or("");
+  settings.surrogate_concentration =
+      section.optional_number("surrogate-concentration");
   settings.calibration = calibration_settings(analyte.child("calibration"),
                                               method.child("calibration"));
   const MethodElement* limits = analyte.child("limits");

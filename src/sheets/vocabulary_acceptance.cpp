@@ -89,7 +89,7 @@ std::vector<ElementRule> preparation_checks() {
             {required("relative-difference", number(above(0.0)), "Percent.")},
             kFlag, kNow),
       check("acceptance/surrogate", "Recovery of the surrogates.", {recovery()},
-            kWithhold, kLater),
+            kWithhold, kNow),
   };
 }
 

@@ -126,9 +126,8 @@ std::vector<ElementRule> analyte_elements() {
                   "How far its peak may be off, minutes."),
         optional("internal-standard", name(), "Id of its internal standard."),
         optional("surrogate-concentration", number(above(0.0)),
-                 "Makes it a surrogate: added to every vial, judged by "
-                 "recovery.",
-                 kLater)},
+                 "Makes it a surrogate: added to every prepared vial, this "
+                 "much in the undiluted one, judged by recovery.")},
        {{"integration"},
         {"noise"},
         {"calibration"},

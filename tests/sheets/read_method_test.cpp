@@ -143,7 +143,8 @@ TEST(ReadMethod, ChecksOfKnownAmounts) {
                "<second-source recovery=\"70 130\" action=\"flag\"/>"
                "<control recovery=\"80 120\"/>"
                "<fortified relative-difference=\"20\" native-ratio=\"3\"/>"
-               "<duplicate relative-difference=\"25\"/><check-standard "),
+               "<duplicate relative-difference=\"25\"/>"
+               "<surrogate recovery=\"60 140\"/><check-standard "),
       "method.xml");
   const AcceptanceSettings& accept = method.analytes[0].acceptance;
   ASSERT_TRUE(accept.second_source && accept.control && accept.fortified &&
@@ -158,6 +159,19 @@ TEST(ReadMethod, ChecksOfKnownAmounts) {
   EXPECT_TRUE(same_bits(accept.fortified->native_ratio, 3.0));
   EXPECT_EQ(accept.duplicate->action, CheckAction::Flag);
   EXPECT_TRUE(same_bits(accept.duplicate->relative_difference, 25.0));
+  ASSERT_TRUE(accept.surrogate);
+  EXPECT_EQ(accept.surrogate->action, CheckAction::Withhold);
+  EXPECT_TRUE(same_bits(accept.surrogate->recovery.low, 60.0));
+}
+
+TEST(ReadMethod, ASurrogateStatesItsConcentration) {
+  const Method method = read_method(
+      replaced(kExampleMethod, "<analyte id=\"simazine\"",
+               "<analyte surrogate-concentration=\"25\" id=\"simazine\""),
+      "method.xml");
+  EXPECT_TRUE(
+      same_bits(method.analytes[0].surrogate_concentration.value(), 25.0));
+  EXPECT_FALSE(method.analytes[1].surrogate_concentration);
 }
 
 TEST(ReadMethod, ChecksOfTheLimits) {

@@ -13,6 +13,10 @@ struct Affected {
   std::string words;
 };
 
+/// Whether an injection of this role went through a sample's preparation:
+/// samples and what stands for them (see ends_a_block()), and method blanks.
+bool is_prepared_role(Role role);
+
 /// Every result of the analyte.
 Affected whole_analyte(const FirstResults& first);
 
