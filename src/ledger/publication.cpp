@@ -9,6 +9,7 @@
 #include "loqsmith/base/input_error.hpp"
 #include "loqsmith/base/text.hpp"
 #include "loqsmith/ledger/manifest.hpp"
+#include "loqsmith/ledger/method_seen.hpp"
 #include "loqsmith/ledger/open_ledger.hpp"
 #include "loqsmith/ledger/recovery.hpp"
 #include "loqsmith/ledger/run_history.hpp"
@@ -161,7 +162,8 @@ void RunAtWork::State::begin(OpenLedger& ledger, const Detail& detail) {
 
 RunAtWork RunAtWork::begin(const PublicationPlace& place,
                            const std::string& sequence,
-                           const std::string& folder, const Detail& detail) {
+                           const std::string& folder, const Detail& detail,
+                           const MethodSeen* method) {
   check_name(sequence);
   const auto deadline = std::chrono::steady_clock::now() + place.wait;
   auto state = std::make_unique<State>();
@@ -181,6 +183,7 @@ RunAtWork RunAtWork::begin(const PublicationPlace& place,
       state->run = sequence + '/' + run_folder_name(state->number);
       state->signed_before = describe_signed_runs(ledger.lines(), sequence);
       state->begin(ledger, all);
+      if (method != nullptr) note_method(ledger, state->run, *method);
       return true;
     });
     if (begun) return RunAtWork(std::move(state));

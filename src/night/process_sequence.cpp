@@ -7,6 +7,7 @@
 
 #include "loqsmith/base/input_error.hpp"
 #include "loqsmith/judgement/judge_analyte.hpp"
+#include "loqsmith/ledger/method_seen.hpp"
 #include "loqsmith/ledger/publication.hpp"
 #include "loqsmith/night/build_info.hpp"
 #include "loqsmith/night/folder_state.hpp"
@@ -166,8 +167,12 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   refuse_out_inside(folder.path, options.out);
   const PublicationPlace place{options.out, options.actor, options.clock,
                                options.wait};
-  RunAtWork work = RunAtWork::begin(place, name, folder.path.string(),
-                                    begun_detail(folder, options.cause));
+  const MethodSeen method{folder.sheets.method.id,
+                          folder.sheets.method.revision,
+                          folder.texts.method_xml};
+  RunAtWork work =
+      RunAtWork::begin(place, name, folder.path.string(),
+                       begun_detail(folder, options.cause), &method);
   const std::string begun = options.clock();
 
   const auto start = std::chrono::steady_clock::now();

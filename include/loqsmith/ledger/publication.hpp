@@ -12,6 +12,8 @@
 
 namespace loqsmith {
 
+struct MethodSeen;
+
 /// OUT, opened for writing: creates the folder where needed (Halt 73), takes
 /// the lock for each step, runs recovery first. All failures are Halt: 74 for
 /// input, output and a damaged ledger, 75 for locks not to be had in time.
@@ -35,11 +37,14 @@ class RunAtWork {
   /// `sequence` may hold '/' (a path below ROOT).
   /// @param folder  where the sequence lies; a name already used for another
   ///                folder is refused: InputError.
+  /// @param method  noted after the run-begun line where it is new to OUT or
+  ///                has changed (method_seen.hpp); null: nothing is noted
   /// @throws Halt 75 when the same sequence is at work elsewhere.
   static RunAtWork begin(
       const PublicationPlace& place, const std::string& sequence,
       const std::string& folder,
-      const std::vector<std::pair<std::string, std::string>>& detail);
+      const std::vector<std::pair<std::string, std::string>>& detail,
+      const MethodSeen* method = nullptr);
 
   RunAtWork(RunAtWork&&) noexcept;
   RunAtWork& operator=(RunAtWork&&) noexcept;
