@@ -175,6 +175,18 @@ TEST_F(Signatures, ForgedOnesShowInAChainWrittenAnew) {
          "it signs b/run-0001, which was not published before");
 }
 
+TEST_F(Signatures, DoNotFitAnotherRun) {
+  publish("b");
+  sign();
+  std::vector<LedgerLine> forged = lines();
+  forged.back().object = "b/run-0001";
+  forged.back().manifest =
+      sha256_hex(read_file(out_ / "b/run-0001/manifest.json"));
+  forge(forged);
+  EXPECT_EQ(deviations(),
+            "ledger.jsonl line 6: its signature is not that of Ada Quill\n");
+}
+
 TEST_F(Signatures, ALaterRunOfTheSequenceSaysSo) {
   EXPECT_EQ(signed_before_, "");
   const RunSignature signature = sign();
