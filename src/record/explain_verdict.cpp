@@ -8,11 +8,12 @@
 namespace loqsmith {
 namespace {
 
-// Checks of single files and traces: those of other injections say nothing.
+// Checks of one injection each: those of other injections say nothing.
 bool is_of_one_injection(const std::string& check) {
   static const std::set<std::string> kOwn{
-      "file-refused", "file-warning", "order-differs",   "name-differs",
-      "time-differs", "saturation",   "same-data-twice", "trace-missing"};
+      "file-refused", "file-warning",   "order-differs",     "name-differs",
+      "time-differs", "saturation",     "same-data-twice",   "trace-missing",
+      "surrogate",    "retention-time", "internal-standard", "second-trace"};
   return kOwn.contains(check);
 }
 
@@ -27,6 +28,15 @@ bool may_concern(const CheckRow& check, const ResultRow& row) {
   if (of_other_set(check, row.set)) return false;
   return !check.injection || *check.injection == row.injection ||
          !is_of_one_injection(check.check);
+}
+
+// A failed check that the result's reasons name, wherever it was made. Of check
+// standards only the nearest ones govern.
+bool is_a_reason(const CheckRow& check, const ResultRow& row) {
+  if (check.passed != false || check.check == "check-standard") return false;
+  const bool named = std::find(row.reasons.begin(), row.reasons.end(),
+                               check.check + "-failed") != row.reasons.end();
+  return named && (check.injection == row.injection || may_concern(check, row));
 }
 
 // Of checks made on injections of their own the nearest before and the nearest
@@ -48,6 +58,10 @@ std::vector<const CheckRow*> concerning(const std::vector<CheckRow>& checks,
   }
   std::vector<const CheckRow*> found;
   for (const CheckRow& check : checks) {
+    if (is_a_reason(check, row)) {
+      found.push_back(&check);
+      continue;
+    }
     if (!may_concern(check, row)) continue;
     const bool near = !check.injection || *check.injection == row.injection ||
                       before[check.check] == *check.injection ||

@@ -250,5 +250,30 @@ TEST(Explanation, NamesTheChecksThatStandAroundTheResult) {
             "failed, withhold");
 }
 
+// A surrogate is an analyte of its own, a control may stand far away.
+TEST(Explanation, NamesEachFailedCheckThatIsAReason) {
+  PublishedRecord record;
+  for (const int injection : {3, 5, 7}) {
+    record.checks.push_back(check_standard(injection, injection != 3));
+    record.checks.back().check = "control";
+  }
+  for (const int injection : {10, 11}) {
+    record.checks.push_back(check_standard(injection, false));
+    record.checks.back().check = "surrogate";
+    record.checks.back().analyte = "s";
+  }
+  PublishedResult result;
+  result.row.analyte = "a";
+  result.row.set = "1";
+  result.row.injection = 11;
+  EXPECT_EQ(explain_checks(record, result).lines.size(), 1U);
+  result.row.reasons = {"control-failed", "surrogate-failed"};
+  const ExplanationSection told = explain_checks(record, result);
+  ASSERT_EQ(told.lines.size(), 3U);
+  EXPECT_TRUE(says(told, "control, injection 3: 80.25 %"));
+  EXPECT_TRUE(says(told, "control, injection 7: 100.5 %"));
+  EXPECT_TRUE(says(told, "surrogate, injection 11: 80.25 %"));
+}
+
 }  // namespace
 }  // namespace loqsmith::test

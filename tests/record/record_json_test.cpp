@@ -100,6 +100,9 @@ TEST(RecordJson, NumbersReadBackAsTheSameBits) {
     for (std::size_t j = 0; j < decisions.size(); ++j) {
       const ResultRow& row = run.analytes[i].results[j];
       EXPECT_EQ(decisions[j]["sample"], row.sample);
+      const auto& derivation = decisions[j]["derivation"];
+      EXPECT_EQ(derivation["dilution"].get<double>(), row.dilution);
+      EXPECT_EQ(derivation["rule"], row.rule);
       if (row.result) {
         EXPECT_EQ(decisions[j]["result"].get<double>(), *row.result);
       } else {
