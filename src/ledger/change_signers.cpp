@@ -99,13 +99,16 @@ LedgerPlace remove_signer(const PublicationPlace& place,
   });
 }
 
+// The file is read first, so that a writer at work leaves it at most behind.
 std::vector<Signer> list_signers(const std::filesystem::path& out) {
   return halt_on_failure([&] {
     const OutLayout layout{out};
+    std::optional<std::string> file;
+    if (is_there(layout.signers())) file = read_file(layout.signers());
     const Chain chain = read_chain(read_file(layout.ledger()));
     const SignerRegister signers = collect_signers(chain.lines);
     if (!chain.deviations.empty() || !signers.deviations().empty() ||
-        register_file(layout, signers) != RegisterFile::Current) {
+        register_file(file, signers) == RegisterFile::Damaged) {
       throw Halt(ExitStatus::IoFailed,
                  "the register and the ledger do not agree: see loqsmith "
                  "verify " +

@@ -7,6 +7,7 @@
 #include "child_process.hpp"
 #include "ledger_fixture.hpp"
 #include "loqsmith/ledger/chain.hpp"
+#include "loqsmith/ledger/signers.hpp"
 
 namespace loqsmith {
 namespace {
@@ -68,7 +69,11 @@ TEST(SideBySide, VerifyMayLookWhileOthersWrite) {
   const fs::path out = folder / "out";
   publish_run(place_at(out), "a");
   const pid_t child = start_child([&] {
-    for (int run = 0; run < 40; ++run) publish_run(place_at(out), "a");
+    for (int run = 0; run < 20; ++run) {
+      publish_run(place_at(out), "a");
+      add_signer(place_at(out), "Ada Quill", std::string(64, '1'));
+      remove_signer(place_at(out), "Ada Quill", "left");
+    }
   });
   for (int look = 0; look < 40; ++look) {
     ASSERT_EQ(deviations_of(verify_out(out, std::chrono::seconds{10})), "");
