@@ -2,9 +2,9 @@
 
 #include <algorithm>
 #include <cstddef>
-#include <iterator>
 
 #include "loqsmith/calibration/inverse.hpp"
+#include "loqsmith/judgement/carry_over_check.hpp"
 #include "loqsmith/judgement/sample_units.hpp"
 
 namespace loqsmith {
@@ -23,32 +23,6 @@ bool holds_surrogate(const InjectionResponse& one,
          one.injection->role == Role::MethodBlank;
 }
 
-std::optional<BlankKind> blank_kind(const InjectionResponse& one,
-                                    const MeasuredAnalyte& analyte) {
-  if (holds_surrogate(one, analyte)) return std::nullopt;
-  switch (one.injection->role) {
-    case Role::SolventBlank:
-      return BlankKind::Solvent;
-    case Role::MethodBlank:
-      return BlankKind::Method;
-    case Role::Standard:
-      if (one.nominal && *one.nominal == 0.0) return BlankKind::ZeroStandard;
-      return std::nullopt;
-    case Role::Conditioning:
-    case Role::SecondSource:
-    case Role::CheckStandard:
-    case Role::LowSpike:
-    case Role::Control:
-    case Role::Fortified:
-    case Role::FortifiedDuplicate:
-    case Role::Duplicate:
-    case Role::AddedStandard:
-    case Role::Sample:
-      return std::nullopt;
-  }
-  return std::nullopt;
-}
-
 bool level_is_in_the_vial(Role role) {
   return role == Role::Standard || role == Role::SecondSource ||
          role == Role::CheckStandard;
@@ -65,26 +39,10 @@ bool is_high(const InjectionResponse& one, const Calibration& calibration) {
          one.response->value > response_from_concentration(calibration, half);
 }
 
-/// The injection right before it in the sequence, whatever its role.
-const Injection* injection_before(const Sequence& sequence, int number) {
-  const auto here = std::lower_bound(
-      sequence.injections.begin(), sequence.injections.end(), number,
-      [](const Injection& one, int wanted) { return one.number < wanted; });
-  return here == sequence.injections.begin() ? nullptr : &*std::prev(here);
-}
-
 bool follows_high(const MeasuredAnalyte& analyte, int number,
                   const Calibration& calibration) {
-  const Injection* before = injection_before(*analyte.sequence, number);
-  if (before == nullptr) return false;
-  const auto previous = std::lower_bound(
-      analyte.injections.begin(), analyte.injections.end(), before->number,
-      [](const InjectionResponse& one, int wanted) {
-        return one.injection->number < wanted;
-      });
-  return previous != analyte.injections.end() &&
-         previous->injection->number == before->number &&
-         is_high(*previous, calibration);
+  const InjectionResponse* before = right_before(analyte, number);
+  return before != nullptr && is_high(*before, calibration);
 }
 
 std::optional<SpikeResult> spike_result(const InjectionResponse& one,
@@ -187,6 +145,32 @@ bool rests_on_blanks(const LimitRow& row) {
 
 }  // namespace
 
+std::optional<BlankKind> blank_kind(const InjectionResponse& one,
+                                    const MeasuredAnalyte& analyte) {
+  if (holds_surrogate(one, analyte)) return std::nullopt;
+  switch (one.injection->role) {
+    case Role::SolventBlank:
+      return BlankKind::Solvent;
+    case Role::MethodBlank:
+      return BlankKind::Method;
+    case Role::Standard:
+      if (one.nominal && *one.nominal == 0.0) return BlankKind::ZeroStandard;
+      return std::nullopt;
+    case Role::Conditioning:
+    case Role::SecondSource:
+    case Role::CheckStandard:
+    case Role::LowSpike:
+    case Role::Control:
+    case Role::Fortified:
+    case Role::FortifiedDuplicate:
+    case Role::Duplicate:
+    case Role::AddedStandard:
+    case Role::Sample:
+      return std::nullopt;
+  }
+  return std::nullopt;
+}
+
 LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
                                     const Calibration& calibration) {
   LimitEvidence evidence;
@@ -211,6 +195,7 @@ LimitEvidence gather_limit_evidence(const MeasuredAnalyte& analyte,
   evidence.bounds_own = analyte.settings->bounds_own;
   evidence.baseline_biased = analyte.settings->baseline_biased;
   evidence.predicted_bias = predicted_bias(analyte);
+  evidence.carry_over_passed = carry_over_passes(analyte, calibration);
   return evidence;
 }
 

@@ -1,6 +1,7 @@
 #include "loqsmith/judgement/measured_analyte.hpp"
 
 #include <algorithm>
+#include <iterator>
 
 #include "loqsmith/judgement/signal_unit.hpp"
 
@@ -16,7 +17,28 @@ std::optional<double> nominal_of(const Injection& injection,
   return entry->concentration;
 }
 
+const Injection* injection_before(const Sequence& sequence, int number) {
+  const auto here = std::lower_bound(
+      sequence.injections.begin(), sequence.injections.end(), number,
+      [](const Injection& one, int wanted) { return one.number < wanted; });
+  return here == sequence.injections.begin() ? nullptr : &*std::prev(here);
+}
+
 }  // namespace
+
+const InjectionResponse* right_before(const MeasuredAnalyte& night,
+                                      int number) {
+  const Injection* before = injection_before(*night.sequence, number);
+  if (before == nullptr) return nullptr;
+  const auto found = std::lower_bound(
+      night.injections.begin(), night.injections.end(), before->number,
+      [](const InjectionResponse& one, int wanted) {
+        return one.injection->number < wanted;
+      });
+  const bool measured = found != night.injections.end() &&
+                        found->injection->number == before->number;
+  return measured ? &*found : nullptr;
+}
 
 MeasuredAnalyte collect_responses(
     const AnalyteRules& settings, const UnitSettings& units,
@@ -29,10 +51,13 @@ MeasuredAnalyte collect_responses(
     const std::string refused =
         unit && measured.peak ? why_unit_differs(measured, *unit) : "";
     InjectionResponse one{
-        measured.injection, measured.peak,
+        measured.injection,
+        measured.peak,
         refused.empty() ? response_of(measured, rule)
                         : Outcome<Response>(NotApplicable{refused}),
-        nominal_of(*measured.injection, sequence, settings.analyte)};
+        nominal_of(*measured.injection, sequence, settings.analyte),
+        measured.expected_minutes,
+        undiluted_internal_standard(measured, ResponseKind::Area)};
     analyte.injections.push_back(std::move(one));
   }
   std::stable_sort(analyte.injections.begin(), analyte.injections.end(),

@@ -25,20 +25,6 @@ std::optional<double> peak_response(const Peak& peak, ResponseKind measure) {
   return std::nullopt;
 }
 
-/// A_is d; nothing where no internal standard was seen.
-std::optional<double> undiluted_internal_standard(
-    const MeasuredInjection& measured, ResponseKind measure) {
-  if (!measured.internal_standard || !*measured.internal_standard) {
-    return std::nullopt;
-  }
-  const Peak& peak = measured.internal_standard->value();
-  std::optional<double> response = peak_response(peak, measure);
-  // One that is measured by area itself is so in every injection.
-  if (!response && measure == ResponseKind::Template) response = peak.area;
-  if (!peak.found || !response || !(*response > 0.0)) return std::nullopt;
-  return *response * measured.injection->internal_standard_dilution;
-}
-
 bool carried_over(double internal_standard, const ResponseRule& rule) {
   return rule.mean_internal_standard &&
          internal_standard < kCarriedOver * *rule.mean_internal_standard;
@@ -79,6 +65,19 @@ Outcome<Response> ratio(Response response, const MeasuredInjection& measured,
 }
 
 }  // namespace
+
+std::optional<double> undiluted_internal_standard(
+    const MeasuredInjection& measured, ResponseKind measure) {
+  if (!measured.internal_standard || !*measured.internal_standard) {
+    return std::nullopt;
+  }
+  const Peak& peak = measured.internal_standard->value();
+  std::optional<double> response = peak_response(peak, measure);
+  // One that is measured by area itself is so in every injection.
+  if (!response && measure == ResponseKind::Template) response = peak.area;
+  if (!peak.found || !response || !(*response > 0.0)) return std::nullopt;
+  return *response * measured.injection->internal_standard_dilution;
+}
 
 ResponseRule response_rule(const AnalyteRules& settings,
                            const std::vector<MeasuredInjection>& injections) {

@@ -198,10 +198,10 @@ ResultRow judge_result(const InjectionResponse& one,
   place(facts, row, set, factor);
 
   Verdict verdict = reach_verdict(facts);
+  row.qualifier = qualifier_letter(verdict, analyte.settings->reporting);
   row.status = verdict.status;
   row.reasons = std::move(verdict.reasons);
   row.rule = verdict.rule;
-  row.qualifier = qualifier_letter(row.status, analyte.settings->reporting);
   if (set.calibration && set.calibration->accepted_highest) {
     row.range_end = in_sample(end_of_range(set), factor);
   }

@@ -70,6 +70,7 @@ SetEvidence evidence_of_set(const MeasuredAnalyte& night,
   const auto minimum =
       static_cast<std::size_t>(night.settings->limits.minimum_blanks);
   const Kinds kinds = divide_kinds(all.blanks, numbers, minimum);
+  set.evidence.carry_over_passed = all.carry_over_passed;
   set.evidence.blanks = of_set(all.blanks, numbers, kinds);
   set.evidence.predicted_noise = of_set(all.predicted_noise, numbers, kinds);
   if (!kinds.borrowed.empty()) {

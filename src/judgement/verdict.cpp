@@ -1,5 +1,8 @@
 #include "loqsmith/judgement/verdict.hpp"
 
+#include <algorithm>
+
+#include "loqsmith/judgement/method_blank_check.hpp"
 #include "loqsmith/judgement/reasons.hpp"
 
 namespace loqsmith {
@@ -96,6 +99,17 @@ std::string qualifier_letter(Status status, const ReportingSettings& settings) {
       return "R";
   }
   return {};
+}
+
+std::string qualifier_letter(const Verdict& verdict,
+                             const ReportingSettings& settings) {
+  const bool has_number = verdict.status == Status::Estimated ||
+                          verdict.status == Status::Reportable;
+  const bool in_blank =
+      std::find(verdict.reasons.begin(), verdict.reasons.end(),
+                kMethodBlankFailed) != verdict.reasons.end();
+  return has_number && in_blank ? "B"
+                                : qualifier_letter(verdict.status, settings);
 }
 
 }  // namespace loqsmith

@@ -25,6 +25,7 @@ MeasuredInjection measured_of(const Learned& learned,
   const std::size_t own = place_of(learned, analyte.target.id);
   MeasuredInjection injection{&row, measured.peaks[own], std::nullopt,
                               measured.signal_units[own]};
+  injection.expected_minutes = measured.expected_minutes[own];
   if (analyte.internal_standard.empty()) return injection;
   const std::size_t standard = place_of(learned, analyte.internal_standard);
   injection.internal_standard = measured.peaks[standard];

@@ -105,6 +105,7 @@ class InjectionAtWork {
     }
     for (std::size_t i = 0; i < learned_.targets.size(); ++i) {
       result_.signal_units.emplace_back();
+      result_.expected_minutes.emplace_back();
       result_.peaks.push_back(measure_target(i));
     }
     result_.fact.data_hash = any_trace_ ? hash_.finish_hex() : std::string{};
@@ -140,6 +141,7 @@ class InjectionAtWork {
     if (!window) return NotApplicable{"not-learned: " + window.reason()};
     const double expected =
         expected_minutes(*window, injection_.number) + shift_for(target.id);
+    result_.expected_minutes.back() = expected;
     const NoiseFor noise =
         noise_for(learned_, index, *trace, injection_.number, expected);
     Outcome<Peak> peak = measure_peak(*trace, target, *window, expected,

@@ -1,21 +1,11 @@
 #include <tuple>
 
+#include "loqsmith/sheets/method_run_checks.hpp"
 #include "loqsmith/sheets/method_section.hpp"
 #include "loqsmith/sheets/method_settings.hpp"
 
 namespace loqsmith {
 namespace {
-
-CheckAction check_action(const Section& section) {
-  return section.pick<CheckAction>(
-      "action",
-      {{"withhold", CheckAction::Withhold}, {"flag", CheckAction::Flag}});
-}
-
-PercentRange percent_range(const Section& section, std::string_view name) {
-  const auto [low, high] = pair_of(section.value(name));
-  return {low, high};
-}
 
 CalibrationAcceptance calibration_check(const Section& section) {
   CalibrationAcceptance check;
@@ -139,6 +129,7 @@ AcceptanceSettings acceptance_settings(const MethodElement* own,
   if (const auto found = section("closeness")) {
     settings.closeness = closeness_check(*found);
   }
+  read_run_checks(section, settings);
   return settings;
 }
 

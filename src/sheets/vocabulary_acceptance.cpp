@@ -68,13 +68,13 @@ std::vector<ElementRule> standard_checks() {
 std::vector<ElementRule> preparation_checks() {
   return {
       check("acceptance/solvent-blank", "What solvent blanks contain.",
-            {blank_maximum()}, kFlag, kLater),
+            {blank_maximum()}, kFlag, kNow),
       check("acceptance/method-blank", "What method blanks contain.",
             {blank_maximum(),
              defaulted("sample-ratio", number(above(0.0)), "10",
                        "Results above this many times the blank are not "
                        "affected.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/control", "Laboratory control samples.", {recovery()},
             kWithhold, kNow),
       check(
@@ -98,11 +98,11 @@ std::vector<ElementRule> injection_checks() {
       check("acceptance/internal-standard", "Area of the internal standard.",
             {defaulted("area", pair(at_least(0.0)), "50 200",
                        "Percent of the calibration's mean.")},
-            kWithhold, kLater),
+            kWithhold, kNow),
       check("acceptance/retention-time", "Where the peak stands.",
             {required("shift", number(above(0.0)),
                       "Minutes from the expectation.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/suitability", "Peaks of the standards.",
             {optional("tailing", number(above(0.0)), "Largest tailing."),
              optional("plates", number(above(0.0)), "Least plate number."),
@@ -110,11 +110,11 @@ std::vector<ElementRule> injection_checks() {
              percent("area-rsd", "Largest relative standard deviation."),
              optional("signal-to-noise", number(above(0.0)),
                       "Least signal-to-noise.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/carry-over", "The blank after the highest standard.",
             {defaulted("maximum", number(above(0.0)), "20",
                        "Percent of the lowest standard's response.")},
-            kFlag, kLater),
+            kFlag, kNow),
       check("acceptance/second-trace", "The ratio of the two traces.", {},
             kWithhold, kLater),
   };

@@ -26,6 +26,7 @@ struct NightRow {
   Outcome<Peak> peak = NotApplicable{"not measured"};
   std::optional<Outcome<Peak>> internal_standard;
   std::string signal_unit = {};
+  std::optional<double> expected_minutes = {};
 };
 
 /// One analyte "zinol" of a night, put together by hand. The detector gives an
@@ -73,7 +74,8 @@ class NightBuilder {
     for (std::size_t i = 0; i < rows.size(); ++i) {
       if (rows[i].injection.role == Role::Conditioning) continue;
       measured_.push_back({&sequence.injections[i], rows[i].peak,
-                           rows[i].internal_standard, rows[i].signal_unit});
+                           rows[i].internal_standard, rows[i].signal_unit,
+                           rows[i].expected_minutes});
     }
     return measured_;
   }

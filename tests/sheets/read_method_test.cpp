@@ -212,6 +212,38 @@ TEST(ReadMethod, ChecksOfTheLimits) {
   EXPECT_TRUE(same_bits(procedures[3].acceptance_low, 70.0));
 }
 
+TEST(ReadMethod, ChecksOfTheRun) {
+  const Method method =
+      read_method(replaced(kExampleMethod, "<check-standard ",
+                           "<solvent-blank/>"
+                           "<method-blank maximum=\"0.5\" sample-ratio=\"5\" "
+                           "action=\"withhold\"/>"
+                           "<internal-standard area=\"60 140\"/>"
+                           "<retention-time shift=\"0.05\"/>"
+                           "<suitability tailing=\"1.8\" area-rsd=\"2\"/>"
+                           "<carry-over/>"
+                           "<check-standard "),
+                  "method.xml");
+  const AcceptanceSettings& checks = method.analytes[0].acceptance;
+  ASSERT_TRUE(checks.solvent_blank && checks.method_blank &&
+              checks.internal_standard && checks.retention_time &&
+              checks.suitability && checks.carry_over);
+  using Kind = BlankMaximum::Kind;
+  EXPECT_EQ(checks.solvent_blank->maximum.kind, Kind::DetectionLimit);
+  EXPECT_EQ(checks.solvent_blank->action, CheckAction::Flag);
+  EXPECT_EQ(checks.method_blank->maximum.kind, Kind::Number);
+  EXPECT_TRUE(same_bits(checks.method_blank->maximum.number, 0.5));
+  EXPECT_TRUE(same_bits(checks.method_blank->sample_ratio, 5.0));
+  EXPECT_EQ(checks.method_blank->action, CheckAction::Withhold);
+  EXPECT_TRUE(same_bits(checks.internal_standard->area.high, 140.0));
+  EXPECT_EQ(checks.internal_standard->action, CheckAction::Withhold);
+  EXPECT_TRUE(same_bits(checks.retention_time->shift_minutes, 0.05));
+  EXPECT_TRUE(same_bits(checks.suitability->maximum_tailing.value(), 1.8));
+  EXPECT_TRUE(same_bits(checks.suitability->maximum_area_rsd.value(), 2.0));
+  EXPECT_FALSE(checks.suitability->minimum_plates.has_value());
+  EXPECT_TRUE(same_bits(checks.carry_over->maximum_percent, 20.0));
+}
+
 TEST(ReadMethod, SignificantDigitsOfAnAnalyteDisplaceDecimals) {
   const Method method = read_method(
       replaced(replaced(kExampleMethod, R"(significant-digits="3" )",

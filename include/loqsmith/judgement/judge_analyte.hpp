@@ -23,6 +23,8 @@ struct MeasuredInjection {
   std::optional<Outcome<Peak>> internal_standard;
   /// Unit of the response as the file states it; empty: not stated.
   std::string signal_unit = {};
+  /// Where the peak was expected, corrected for drift; nothing: not known.
+  std::optional<double> expected_minutes = {};
 };
 
 /// From responses to verdicts: responses (area, height or ratio to the

@@ -17,6 +17,11 @@ struct InjectionResponse {
   /// What the level states for the analyte, in the vial or in the sample as
   /// the role has it; nothing: no level, or the analyte is not in it.
   std::optional<double> nominal;
+  /// Where the peak was expected, corrected for drift; nothing: not known.
+  std::optional<double> expected_minutes = {};
+  /// Area of the internal standard, referred to the undiluted one; nothing: no
+  /// internal standard, or no peak of it above zero.
+  std::optional<double> internal_standard_area = {};
 };
 
 /// One analyte of the night, before anything is judged. In run order.
@@ -26,6 +31,10 @@ struct MeasuredAnalyte {
   const Sequence* sequence = nullptr;
   std::vector<InjectionResponse> injections;
 };
+
+/// What was measured right before an injection in the sequence; null where that
+/// is nothing, or conditioning.
+const InjectionResponse* right_before(const MeasuredAnalyte& night, int number);
 
 /// The arguments must outlive what is returned.
 MeasuredAnalyte collect_responses(

@@ -31,6 +31,11 @@ struct ResponseRule {
   std::optional<double> mean_internal_standard;
 };
 
+/// Response of the injection's internal standard, referred to the undiluted
+/// one (see response_of()); nothing where no peak of it stands above zero.
+std::optional<double> undiluted_internal_standard(
+    const MeasuredInjection& measured, ResponseKind measure);
+
 ResponseRule response_rule(const AnalyteRules& settings,
                            const std::vector<MeasuredInjection>& injections);
 

@@ -2,6 +2,8 @@
 
 #include <cstddef>
 #include <functional>
+#include <optional>
+#include <string>
 #include <utility>
 #include <vector>
 
@@ -18,6 +20,8 @@ struct InjectionMeasured {
   std::vector<Outcome<Peak>>
       peaks;  ///< one a target of Learned; conditioning: none
   std::vector<std::string> signal_units;  ///< one a peak; empty: not stated
+  /// Where each peak was expected; one a peak, nothing: not known.
+  std::vector<std::optional<double>> expected_minutes;
   SequenceFacts::FileFact fact;
   std::vector<InputProblem> problems;
   std::vector<FigureCurve> curves;
