@@ -19,7 +19,7 @@ std::string document(const SmallNight& night, const SmallInjection& injection,
   SimulatedTrace wanted;
   wanted.end_minutes = 6.0;
   wanted.white_noise = night.noise_sd;
-  wanted.peaks = {{3.0, 0.05, injection.area},
+  wanted.peaks = {{3.0 + injection.shift_minutes, 0.05, injection.area},
                   {4.5, 0.05, injection.internal_standard_area}};
   const Trace simulated = simulate_trace(wanted, name);
   MzmlTrace trace;

@@ -20,6 +20,7 @@ struct SmallInjection {
   double internal_standard_area = 0.0;
   double internal_standard_dilution = 1.0;
   std::string prep = {};
+  double shift_minutes = 0.0;  ///< of the analyte's peak alone
 };
 
 struct SmallNight {
