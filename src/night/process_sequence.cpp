@@ -190,6 +190,7 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
   run.begun = begun;
   run.finished = options.clock();
   run.ledger_head = describe(work.begun());
+  run.signed_before = work.signed_before();
   stage_run(work.staging(), folder, run, options.report);
   const bool person = needs_a_person(run);
   outcome.published = work.publish({{"needs_a_person", person ? "yes" : "no"},

@@ -64,6 +64,9 @@ void report_head(std::ostream& out, const PublishedRun& run) {
   fact(out, "Injections", std::to_string(run.sequence.injections.size()));
   fact(out, "Inputs", inputs(run));
   fact(out, "Ledger", ledger(run));
+  if (!run.signed_before.empty()) {
+    fact(out, "Earlier runs signed", html_text(run.signed_before));
+  }
   out << "</dl>\n";
   links(out, run);
   out << "</header>\n";

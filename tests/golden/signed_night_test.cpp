@@ -55,6 +55,10 @@ TEST(SignedNight, IsPublishedSignedAndPublishedAgain) {
       << second.err;
   EXPECT_TRUE(holds(read_file(out + "/ledger.jsonl"),
                     "\"signed_before\":\"run-0001 reviewed by Ada Quill"));
+  const std::string earlier = "<dt>Earlier runs signed</dt>";
+  const std::string later = out + "/" + kTabletCoating + "/run-0002";
+  EXPECT_FALSE(holds(read_file(run + "/report.html"), earlier));
+  EXPECT_TRUE(holds(read_file(later + "/report.html"), earlier));
   const ProgramRun good = loqsmith(verify);
   EXPECT_EQ(good.status, 0) << good.out;
   EXPECT_TRUE(holds(good.out, "inputs unchanged, 1 signature")) << good.out;

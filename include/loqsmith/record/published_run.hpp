@@ -62,6 +62,7 @@ struct PublishedRun {
   std::string begun;            ///< RFC 3339 UTC
   std::string finished;
   std::string ledger_head;        ///< "12:sha256" of this run's run-begun line
+  std::string signed_before;      ///< earlier runs that persons signed
   std::vector<InputFile> inputs;  ///< sheets first, then files by path
   std::vector<std::pair<int, InputProblem>> problems;  ///< injection, problem
   std::vector<TargetRecord> targets;
