@@ -35,8 +35,8 @@ void name_set(CheckRow& row, const CalibrationSet& set) {
 
 bool is_detected(const ResultRow& result) {
   if (result.status == Status::NotDetected) return false;
-  if (!result.result || !result.detection_limit) return true;
-  return *result.result >= *result.detection_limit;
+  if (!result.result) return result.status == Status::AboveRange;
+  return !result.detection_limit || *result.result >= *result.detection_limit;
 }
 
 void InjectionRows::passed(int injection, double value, double distance) {

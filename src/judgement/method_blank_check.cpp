@@ -27,7 +27,7 @@ std::string words_of(const std::string& prep) {
 }
 
 bool lies_above(const ResultRow& result, const ResultRow& blank, double ratio) {
-  if (!result.result) return result.status == Status::AboveRange;
+  if (!result.result) return true;  // beyond the curve
   if (result.unit == blank.unit) {
     return *result.result > ratio * *blank.result;
   }

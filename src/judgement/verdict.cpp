@@ -103,13 +103,12 @@ std::string qualifier_letter(Status status, const ReportingSettings& settings) {
 
 std::string qualifier_letter(const Verdict& verdict,
                              const ReportingSettings& settings) {
-  const bool has_number = verdict.status == Status::Estimated ||
-                          verdict.status == Status::Reportable;
+  const std::string own = qualifier_letter(verdict.status, settings);
+  if (verdict.status == Status::Withheld) return own;
   const bool in_blank =
       std::find(verdict.reasons.begin(), verdict.reasons.end(),
                 kMethodBlankFailed) != verdict.reasons.end();
-  return has_number && in_blank ? "B"
-                                : qualifier_letter(verdict.status, settings);
+  return in_blank ? own + "B" : own;
 }
 
 }  // namespace loqsmith

@@ -44,12 +44,13 @@ TEST(SolventBlank, Passes) {
 // It reaches back to the last blank that passed and on to the next.
 TEST(SolventBlank, FlagsWhatWasDetectedAroundAFailedOne) {
   NightBuilder night = with_solvent_blanks();
-  sample(night, 5.0);                   // 15
-  night.add(Role::SolventBlank, 0.6);   // 16
-  sample(night, 5.0);                   // 17
-  sample(night, 0.1);                   // 18: nothing detected
-  night.add(Role::SolventBlank, 0.02);  // 19
-  sample(night, 5.0);                   // 20
+  sample(night, 5.0);                  // 15
+  night.add(Role::SolventBlank, 0.6);  // 16
+  sample(night, 5.0);                  // 17
+  sample(night, 0.1);                  // 18: nothing detected
+  sample(night, 5.0).peak = NotApplicable{"file-refused: cut off"};  // 19
+  night.add(Role::SolventBlank, 0.02);                               // 20
+  sample(night, 5.0);                                                // 21
   const AnalyteJudgement judgement = night.judge();
   EXPECT_EQ(outcomes(judgement, "solvent-blank"), "+++++++-+");
   EXPECT_EQ(marked(judgement, "solvent-blank-failed"), "15 17");
@@ -135,7 +136,7 @@ TEST(MethodBlank, FlagsItsPrepUpToTheRatioWithB) {
   EXPECT_EQ(result_of(judgement, 16).status, Status::Reportable);
   EXPECT_EQ(result_of(judgement, 17).qualifier, "");
   EXPECT_EQ(result_of(judgement, 18).status, Status::Estimated);
-  EXPECT_EQ(result_of(judgement, 18).qualifier, "B");
+  EXPECT_EQ(result_of(judgement, 18).qualifier, "JB");
   EXPECT_EQ(result_of(judgement, 19).qualifier, "U");
   EXPECT_EQ(result_of(judgement, 21).qualifier, "E");
 }

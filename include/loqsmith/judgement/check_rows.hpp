@@ -25,8 +25,9 @@ void append(CheckOutcome& all, CheckOutcome more);
 /// Names the calibration set in a row, where the analyte has others.
 void name_set(CheckRow& row, const CalibrationSet& set);
 
-/// Whether a result says that something is there: not below the detection
-/// limit. One without a number counts as seen, unless it is not detected.
+/// Whether a result says that something is there: a number that is not below
+/// the detection limit (where none governs, any), or a response beyond the
+/// curve. Of an injection that gave no number nothing is said.
 bool is_detected(const ResultRow& result);
 
 /// Rows of a check that looks at every injection: one for each failure, and

@@ -53,9 +53,8 @@ Verdict reach_verdict(const VerdictFacts& facts);
 /// U, J, E, R, or none for a reportable result; replaced by the method's.
 std::string qualifier_letter(Status status, const ReportingSettings& settings);
 
-/// The one letter of a result: that of its status, but B ("found in the blank")
-/// for an estimated or reportable one that a failed method blank flags. Of two
-/// letters the first of R, E, B, J, U stands; the reasons keep all.
+/// The letters of a result: that of its status and behind it, where a failed
+/// method blank flags what was detected, B ("found in the blank"): "JB".
 std::string qualifier_letter(const Verdict& verdict,
                              const ReportingSettings& settings);
 
