@@ -64,8 +64,8 @@ std::optional<SpikeResult> spike_result(const InjectionResponse& one,
 }
 
 bool shows_a_height(const InjectionResponse& one) {
-  return one.injection->role == Role::Standard && one.nominal &&
-         *one.nominal > 0.0 && one.peak && one.peak->found &&
+  return !one.excluded && one.injection->role == Role::Standard &&
+         one.nominal && *one.nominal > 0.0 && one.peak && one.peak->found &&
          !has(one.peak->reasons, "saturated");
 }
 
@@ -147,6 +147,7 @@ bool rests_on_blanks(const LimitRow& row) {
 
 std::optional<BlankKind> blank_kind(const InjectionResponse& one,
                                     const MeasuredAnalyte& analyte) {
+  if (one.excluded) return std::nullopt;
   if (holds_surrogate(one, analyte)) return std::nullopt;
   switch (one.injection->role) {
     case Role::SolventBlank:

@@ -24,6 +24,17 @@ const Injection* injection_before(const Sequence& sequence, int number) {
   return here == sequence.injections.begin() ? nullptr : &*std::prev(here);
 }
 
+// None of the peaks of an injection that people call invalid was measured.
+std::vector<MeasuredInjection> without_invalid(
+    std::vector<MeasuredInjection> injections, const std::set<int>& invalid) {
+  for (MeasuredInjection& one : injections) {
+    if (!invalid.contains(one.injection->number)) continue;
+    one.peak = NotApplicable{"invalid-injection: by an amendment"};
+    if (one.internal_standard) one.internal_standard = one.peak;
+  }
+  return injections;
+}
+
 }  // namespace
 
 const InjectionResponse* right_before(const MeasuredAnalyte& night,
@@ -43,7 +54,10 @@ const InjectionResponse* right_before(const MeasuredAnalyte& night,
 MeasuredAnalyte collect_responses(
     const AnalyteRules& settings, const UnitSettings& units,
     const Sequence& sequence,
-    const std::vector<MeasuredInjection>& injections) {
+    const std::vector<MeasuredInjection>& all_injections) {
+  const ManualDecisions& decisions = settings.decisions;
+  const std::vector<MeasuredInjection> injections =
+      without_invalid(all_injections, decisions.invalid_injections);
   const ResponseRule rule = response_rule(settings, injections);
   MeasuredAnalyte analyte{&settings, &units, &sequence, {}};
   const Outcome<std::string> unit = common_signal_unit(injections);
@@ -57,7 +71,8 @@ MeasuredAnalyte collect_responses(
                         : Outcome<Response>(NotApplicable{refused}),
         nominal_of(*measured.injection, sequence, settings.analyte),
         measured.expected_minutes,
-        undiluted_internal_standard(measured, ResponseKind::Area)};
+        undiluted_internal_standard(measured, ResponseKind::Area),
+        decisions.excluded_standards.contains(measured.injection->number)};
     analyte.injections.push_back(std::move(one));
   }
   std::stable_sort(analyte.injections.begin(), analyte.injections.end(),

@@ -11,6 +11,7 @@ namespace {
 // not be used, then why to be careful with it.
 constexpr auto kDoubtful = std::to_array<std::string_view>({
     "peak-not-found",
+    "invalid-injection",
     "file-refused",
     "trace-missing",
     "not-learned",
@@ -46,6 +47,9 @@ constexpr auto kDoubtful = std::to_array<std::string_view>({
     "confirmation-failed",
     "dilutions-disagree",
     "response-without-peak",
+    "status-overridden",
+    "override-not-possible",
+    "amended-unsigned",
     "saturated",
     "internal-standard-saturated",
     "above-range",
@@ -56,6 +60,8 @@ constexpr auto kDoubtful = std::to_array<std::string_view>({
     "brackets-differ",
     "no-opening-standards",
     "no-closing-standards",
+    "excluded-by-amendment",
+    "manual-bounds",
     "window-cut-short",
     "several-peaks",
     "overlapped",

@@ -180,6 +180,23 @@ VerdictFacts facts_before_placing(const InjectionResponse& one,
   return facts;
 }
 
+// The number stays. A status that nothing can be printed for (a number where
+// there is none) is not taken.
+void override_status(ResultRow& row, Status wanted,
+                     const ReportedNumbers& numbers,
+                     const ReportingSettings& reporting) {
+  const ReportedValue value = reported_value(wanted, numbers, reporting);
+  const bool possible =
+      wanted == Status::Withheld || value.kind != ReportedValue::Kind::Withheld;
+  row.reasons.insert(row.reasons.begin(),
+                     possible ? "status-overridden" : "override-not-possible");
+  if (!possible) return;
+  row.status = wanted;
+  row.rule = "a person chose the status, in amendments.csv";
+  row.qualifier = qualifier_letter(wanted, reporting);
+  row.reported = reported_text(wanted, numbers, reporting);
+}
+
 }  // namespace
 
 bool is_quantified(Role role) {
@@ -210,6 +227,13 @@ ResultRow judge_result(const InjectionResponse& one,
   row.reported = reported_text(row.status, numbers,
                                reporting_of(*one.injection, *analyte.units,
                                             analyte.settings->reporting));
+  const auto& statuses = analyte.settings->decisions.statuses;
+  const auto chosen = statuses.find(row.injection);
+  if (chosen != statuses.end()) {
+    override_status(row, chosen->second, numbers,
+                    reporting_of(*one.injection, *analyte.units,
+                                 analyte.settings->reporting));
+  }
   return row;
 }
 

@@ -13,6 +13,7 @@ bool has(const std::vector<std::string>& words, const char* word) {
 }
 
 std::string why_not_used(const InjectionResponse& standard) {
+  if (standard.excluded) return "excluded-by-amendment";
   const std::vector<std::string>& reasons = standard.response->reasons;
   for (const char* word : {"saturated", "internal-standard-saturated"}) {
     if (has(reasons, word)) return word;

@@ -46,6 +46,7 @@ constexpr seconds kLeastPatience{2};
 constexpr seconds kPatienceToPublish{60};
 
 using Detail = std::vector<std::pair<std::string, std::string>>;
+using Consider = std::function<void(const std::vector<RunEvents>&)>;
 
 void refuse(const std::string& shown, const std::string& found,
             const std::string& expected, const std::string& mend) {
@@ -90,6 +91,15 @@ const RunEvents* pending_run(const RunHistory& history,
     if (run.sequence == sequence && run.pending()) return &run;
   }
   return nullptr;
+}
+
+std::vector<RunEvents> published_runs(const RunHistory& history,
+                                      const std::string& sequence) {
+  std::vector<RunEvents> runs;
+  for (const RunEvents& run : history.runs) {
+    if (run.sequence == sequence && run.published != 0) runs.push_back(run);
+  }
+  return runs;
 }
 
 int next_number(const RunHistory& history, const std::string& sequence) {
@@ -163,7 +173,7 @@ void RunAtWork::State::begin(OpenLedger& ledger, const Detail& detail) {
 RunAtWork RunAtWork::begin(const PublicationPlace& place,
                            const std::string& sequence,
                            const std::string& folder, const Detail& detail,
-                           const MethodSeen* method) {
+                           const MethodSeen* method, const Consider& consider) {
   check_name(sequence);
   const auto deadline = std::chrono::steady_clock::now() + place.wait;
   auto state = std::make_unique<State>();
@@ -179,6 +189,7 @@ RunAtWork RunAtWork::begin(const PublicationPlace& place,
       const RunHistory history = collect_runs(ledger.lines());
       check_folder(history, sequence, all.front().second);
       if (pending_run(history, sequence) != nullptr) return false;
+      if (consider) consider(published_runs(history, sequence));
       state->number = next_number(history, sequence);
       state->run = sequence + '/' + run_folder_name(state->number);
       state->signed_before = describe_signed_runs(ledger.lines(), sequence);

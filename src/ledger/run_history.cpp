@@ -32,6 +32,7 @@ class Collector {
     }
     run.number = *number;
     run.folder = detail_of(line, "folder");
+    run.amendments_sha256 = detail_of(line, "amendments_sha256");
     run.host = line.host;
     run.begun_time = line.time;
     run.begun = line.number;

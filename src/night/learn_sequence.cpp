@@ -19,10 +19,18 @@ bool may_teach(Role role) {
          role == Role::Control;
 }
 
+bool is_kept_from_teaching(const Method& method, const Injection& injection,
+                           const std::string& target) {
+  const auto decisions = method.decisions.find(target);
+  return decisions != method.decisions.end() &&
+         decisions->second.never_teach.contains(injection.number);
+}
+
 // An injection teaches an analyte only where its level holds some of it;
 // internal standards are in every one of them.
 bool holds_target(const Sheets& sheets, const Injection& injection,
                   const std::string& target) {
+  if (is_kept_from_teaching(sheets.method, injection, target)) return false;
   if (sheets.method.internal_standard(target) != nullptr) return true;
   const LevelEntry* entry =
       sheets.sequence.level_entry(injection.level, target);

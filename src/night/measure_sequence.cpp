@@ -144,8 +144,9 @@ class InjectionAtWork {
     result_.expected_minutes.back() = expected;
     const NoiseFor noise =
         noise_for(learned_, index, *trace, injection_.number, expected);
-    Outcome<Peak> peak = measure_peak(*trace, target, *window, expected,
-                                      noise.noise, noise.source);
+    Outcome<Peak> peak =
+        measure_peak(*trace, target, *window, expected, noise.noise,
+                     noise.source, bounds_by_hand(target.id));
     if (peak) {
       note_shift(target.id, *peak, expected);
       draw(index, *trace, expected, noise, *peak);
@@ -187,6 +188,15 @@ class InjectionAtWork {
     any_trace_ = true;
   }
 
+  std::optional<ManualBounds> bounds_by_hand(const std::string& target) const {
+    const auto& decisions = folder_.sheets.method.decisions;
+    const auto own = decisions.find(target);
+    if (own == decisions.end()) return std::nullopt;
+    const auto bounds = own->second.bounds.find(injection_.number);
+    if (bounds == own->second.bounds.end()) return std::nullopt;
+    return bounds->second;
+  }
+
   // The shift of this injection's own internal standard, for its analytes.
   double shift_for(const std::string& target) const {
     for (const AnalyteSettings& analyte : folder_.sheets.method.analytes) {
@@ -218,8 +228,9 @@ class InjectionAtWork {
     }
     if (caption.empty()) return;
     const WindowTemplate& window = *learned_.windows[index];
-    const WorkedPeak worked = measure_peak_with_working(
-        trace, target, window, expected, noise.noise, noise.source);
+    const WorkedPeak worked =
+        measure_peak_with_working(trace, target, window, expected, noise.noise,
+                                  noise.source, bounds_by_hand(target.id));
     if (!worked.peak) return;
     PeakCurve curve = peak_curve(*worked.peak, worked.working, window,
                                  shown_widths(target.noise));

@@ -9,7 +9,9 @@
 #include "loqsmith/judgement/judge_analyte.hpp"
 #include "loqsmith/ledger/method_seen.hpp"
 #include "loqsmith/ledger/publication.hpp"
+#include "loqsmith/night/automatic_results.hpp"
 #include "loqsmith/night/build_info.hpp"
+#include "loqsmith/night/earlier_runs.hpp"
 #include "loqsmith/night/folder_state.hpp"
 #include "loqsmith/night/judge_sequence.hpp"
 #include "loqsmith/night/learn_sequence.hpp"
@@ -21,6 +23,7 @@ namespace loqsmith {
 namespace {
 
 namespace fs = std::filesystem;
+using Detail = std::vector<std::pair<std::string, std::string>>;
 
 // The sequence folder is read only, so OUT may not lie in it.
 void refuse_out_inside(const fs::path& folder, const fs::path& out) {
@@ -52,8 +55,10 @@ SequenceFacts facts_of(const SequenceFolder& folder, const Measured& measured) {
 
 // Everything that was found, in the shape in which it is published.
 PublishedRun assemble(const SequenceFolder& folder, const Learned& learned,
-                      Measured measured) {
+                      Measured measured,
+                      std::vector<AnalyteJudgement> analytes) {
   PublishedRun run;
+  run.amendments = folder.sheets.amendments;
   run.sequence = folder.sheets.sequence;
   run.method = folder.sheets.method;
   run.inputs = folder.sheet_files;
@@ -66,7 +71,7 @@ PublishedRun assemble(const SequenceFolder& folder, const Learned& learned,
     }
     run.targets.push_back(std::move(target));
   }
-  run.analytes = judge_sequence(folder, learned, measured);
+  run.analytes = std::move(analytes);
   run.sequence_checks =
       always_checked(folder.sheets.sequence, facts_of(folder, measured));
   for (InjectionMeasured& injection : measured.injections) {
@@ -90,16 +95,23 @@ std::string sheet_hash(const SequenceFolder& folder, const std::string& name) {
   return {};
 }
 
-std::vector<std::pair<std::string, std::string>> begun_detail(
-    const SequenceFolder& folder, const std::string& cause) {
+Detail begun_detail(const SequenceFolder& folder, const std::string& cause) {
   const Method& method = folder.sheets.method;
-  return {{"method", method.id},
-          {"revision", method.revision},
-          {"method_sha256", sheet_hash(folder, "method.xml")},
-          {"sequence_sha256", sheet_hash(folder, "sequence.csv")},
-          {"levels_sha256", sheet_hash(folder, "levels.csv")},
-          {"state", state_of_files(folder.path, files_of(folder)).listing},
-          {"cause", cause}};
+  Detail detail{
+      {"method", method.id},
+      {"revision", method.revision},
+      {"method_sha256", sheet_hash(folder, "method.xml")},
+      {"sequence_sha256", sheet_hash(folder, "sequence.csv")},
+      {"levels_sha256", sheet_hash(folder, "levels.csv")},
+      {"state", state_of_files(folder.path, files_of(folder)).listing},
+      {"cause", cause}};
+  if (folder.texts.amendments_csv) {
+    detail.emplace_back("amendments",
+                        std::to_string(folder.sheets.amendments.size()));
+    detail.emplace_back("amendments_sha256",
+                        sheet_hash(folder, "amendments.csv"));
+  }
+  return detail;
 }
 
 // Of the very bytes that were read.
@@ -163,16 +175,22 @@ void describe_problems(const PublishedRun& run, ProcessOutcome& outcome) {
 ProcessOutcome process_sequence(const ProcessOptions& options) {
   ProcessOutcome outcome;
   const std::string name = name_of(options);
-  const SequenceFolder folder = open_sequence_folder(options.folder, name);
+  const SequenceFolder unamended = open_sequence_folder(options.folder, name);
+  const SequenceFolder folder = with_amendments(unamended);
   refuse_out_inside(folder.path, options.out);
   const PublicationPlace place{options.out, options.actor, options.clock,
                                options.wait};
+  std::vector<RunEvents> earlier;
+  const auto consider = [&](const std::vector<RunEvents>& runs) {
+    require_earlier_amendments(options.out, runs, folder.sheets.amendments);
+    earlier = runs;
+  };
   const MethodSeen method{folder.sheets.method.id,
                           folder.sheets.method.revision,
                           folder.texts.method_xml};
   RunAtWork work =
       RunAtWork::begin(place, name, folder.path.string(),
-                       begun_detail(folder, options.cause), &method);
+                       begun_detail(folder, options.cause), &method, consider);
   const std::string begun = options.clock();
 
   const auto start = std::chrono::steady_clock::now();
@@ -182,7 +200,12 @@ ProcessOutcome process_sequence(const ProcessOptions& options) {
       measure_sequence(folder, learned, options.jobs, options.progress);
   const auto measured_at = std::chrono::steady_clock::now();
 
-  PublishedRun run = assemble(folder, learned, std::move(measured));
+  std::vector<AnalyteJudgement> analytes =
+      judge_sequence(folder, learned, measured);
+  mark_automatic_results(unamended, learned, measured, options.jobs, analytes);
+  PublishedRun run =
+      assemble(folder, learned, std::move(measured), std::move(analytes));
+  compare_with_earlier(options.out, earlier, run);
   run.run_number = work.run_number();
   run.program_version = program_version();
   run.build = build_description();

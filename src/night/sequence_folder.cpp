@@ -15,6 +15,8 @@ namespace {
 
 namespace fs = std::filesystem;
 
+constexpr const char* kAmendments = "amendments.csv";
+constexpr const char* kSignature = "amendments.csv.sig";
 constexpr std::uint64_t kMostSheetBytes = std::uint64_t{64} << 20U;
 
 fs::path real_folder(const fs::path& folder) {
@@ -84,7 +86,7 @@ void check_paths(const SequenceFolder& folder, Problems& problems) {
 
 std::vector<std::string> unlisted(const SequenceFolder& folder) {
   std::set<std::string> known{"sequence.csv", "levels.csv", "method.xml",
-                              "amendments.csv"};
+                              kAmendments};
   for (const Injection& injection : folder.sheets.sequence.injections) {
     known.insert(fs::path(injection.file).lexically_normal().generic_string());
   }
@@ -108,12 +110,15 @@ SequenceFolder open_sequence_folder(const fs::path& folder,
   read("sequence.csv", opened.texts.sequence_csv);
   read("levels.csv", opened.texts.levels_csv);
   read("method.xml", opened.texts.method_xml);
-  if (fs::exists(opened.path / "amendments.csv")) {
-    problems.add({.file = "amendments.csv",
-                  .found = "manual decisions",
-                  .expected = "none: amendments are not available in this "
+  if (is_there(opened.path / kAmendments)) {
+    read(kAmendments, opened.texts.amendments_csv.emplace());
+  }
+  if (is_there(opened.path / kSignature)) {
+    problems.add({.file = kSignature,
+                  .found = "a signature",
+                  .expected = "none: signatures are not available in this "
                               "version",
-                  .mend = "take the sheet out of the folder"});
+                  .mend = "take it out of the folder"});
   }
   problems.throw_any();
   opened.sheets = read_sheets(opened.texts, name);

@@ -36,6 +36,9 @@ void keep_sheets(const fs::path& staging, const SheetTexts& texts) {
   write_new_file(inputs / "sequence.csv", texts.sequence_csv);
   write_new_file(inputs / "levels.csv", texts.levels_csv);
   write_new_file(inputs / "method.xml", texts.method_xml);
+  if (texts.amendments_csv) {
+    write_new_file(inputs / "amendments.csv", *texts.amendments_csv);
+  }
 }
 
 }  // namespace

@@ -169,6 +169,11 @@ void record_decision(JsonWriter& json, const PublishedRun& run,
     record_derivation(json, derivation_of(run, set, row));
     break;
   }
+  if (row.automatic) {
+    json.member("automatic_result", row.automatic->result);
+    json.member("automatic_status", status_name(row.automatic->status));
+    json.member("automatic_reported", row.automatic->reported);
+  }
   json.end_object();
 }
 

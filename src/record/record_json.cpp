@@ -26,7 +26,9 @@ void write_record(std::ostream& out, const PublishedRun& run) {
   JsonWriter json(out, 1);
   json.begin_object();
   member_whole(json, "record_version", 1);
+  record_amendments(json, run);
   record_provenance(json, run);
+  record_earlier_runs(json, run);
   json.member("needs_a_person", needs_a_person(run));
   record_templates(json, run);
   record_noise(json, run);

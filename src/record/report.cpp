@@ -23,6 +23,7 @@ void write_report(std::ostream& out, const PublishedRun& run) {
       << kFigureStyle << "</style>\n</head>\n<body>\n"
       << kReportMarks << "<main>\n";
   report_head(out, run);
+  report_amendments(out, run);
   report_attention(out, run);
   report_grid(out, run);
   report_reportable(out, run);
@@ -30,6 +31,7 @@ void write_report(std::ostream& out, const PublishedRun& run) {
   for (const AnalyteJudgement& analyte : run.analytes) {
     report_analyte(out, run, analyte);
   }
+  report_earlier_runs(out, run);
   report_files(out, run);
   report_cautions(out, run);
   out << "</main>\n</body>\n</html>\n";

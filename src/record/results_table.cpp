@@ -34,19 +34,30 @@ const std::vector<std::string> kHead = {"injection",
                                         "automatic_status"};
 
 std::vector<std::string> cells_of(const ResultRow& row) {
-  return {
-      injection_cell(row.injection), text_cell(row.sample), role_name(row.role),
-      text_cell(row.analyte), text_cell(row.set), yes_no_cell(row.found),
-      number_cell(row.retention_minutes), number_cell(row.response),
-      number_cell(row.signal_to_noise), number_cell(row.vial_concentration),
-      number_cell(row.dilution), number_cell(row.result), text_cell(row.unit),
-      number_cell(row.calibration_uncertainty),
-      number_cell(row.detection_limit), number_cell(row.quantitation_limit),
-      text_cell(row.detection_procedure), text_cell(row.quantitation_procedure),
-      status_name(row.status), text_cell(row.reported),
-      text_cell(row.qualifier), words_cell(row.reasons),
-      // Filled where an amendment changed the row; nothing amends yet.
-      std::string{}, std::string{}};
+  return {injection_cell(row.injection),
+          text_cell(row.sample),
+          role_name(row.role),
+          text_cell(row.analyte),
+          text_cell(row.set),
+          yes_no_cell(row.found),
+          number_cell(row.retention_minutes),
+          number_cell(row.response),
+          number_cell(row.signal_to_noise),
+          number_cell(row.vial_concentration),
+          number_cell(row.dilution),
+          number_cell(row.result),
+          text_cell(row.unit),
+          number_cell(row.calibration_uncertainty),
+          number_cell(row.detection_limit),
+          number_cell(row.quantitation_limit),
+          text_cell(row.detection_procedure),
+          text_cell(row.quantitation_procedure),
+          status_name(row.status),
+          text_cell(row.reported),
+          text_cell(row.qualifier),
+          words_cell(row.reasons),
+          row.automatic ? number_cell(row.automatic->result) : std::string{},
+          row.automatic ? status_name(row.automatic->status) : std::string{}};
 }
 
 }  // namespace

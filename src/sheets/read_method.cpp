@@ -127,6 +127,9 @@ Method build_method(const MethodElement& root) {
   for (const MethodElement* analyte : root.at_path("analytes/analyte")) {
     method.analytes.push_back(analyte_settings(*analyte, root));
   }
+  method.unsigned_amendments_accepted =
+      Section(element_rule("amendments"), root.child("amendments"))
+          .value("unsigned") == "accepted";
   method.defaults_used = defaults_used(root);
   return method;
 }

@@ -4,6 +4,7 @@
 #include <utility>
 
 #include "loqsmith/base/input_error.hpp"
+#include "loqsmith/sheets/amendments_sheet.hpp"
 #include "loqsmith/sheets/cross_check.hpp"
 #include "loqsmith/sheets/levels_sheet.hpp"
 #include "loqsmith/sheets/method_reading.hpp"
@@ -24,6 +25,24 @@ std::vector<Injection> in_run_order(const SequenceSheet& sheet) {
               return a.number < b.number;
             });
   return injections;
+}
+
+// `whole`: the other sheets are right, so that rows can be held against them.
+AmendmentsSheet read_amendments(std::string_view csv, const Sheets& sheets,
+                                bool whole) {
+  AmendmentsSheet sheet = read_amendments_sheet(csv, "amendments.csv");
+  if (sheet.problems.empty()) settle_amendments(sheet);
+  if (!whole) return sheet;
+  if (!sheet.entries.empty() && !sheets.method.unsigned_amendments_accepted) {
+    sheet.problems.add(
+        1, 1, "unsigned amendments", "none, since the method refuses them",
+        "give the method <amendments unsigned=\"accepted\"/>, or "
+        "take the sheet out of the folder");
+  }
+  if (sheet.problems.empty()) {
+    check_amendments(sheet, sheets.sequence, sheets.method);
+  }
+  return sheet;
 }
 
 }  // namespace
@@ -55,9 +74,20 @@ Sheets read_sheets(const SheetTexts& texts, const std::string& name) {
     const auto sorted = sheet->sorted();
     problems.insert(problems.end(), sorted.begin(), sorted.end());
   }
+  Sheets sheets;
+  if (problems.empty()) {
+    sheets.sequence = {name, in_run_order(sequence), std::move(levels.entries)};
+    sheets.method = std::move(*method.method);
+  }
+  if (texts.amendments_csv) {
+    AmendmentsSheet amendments =
+        read_amendments(*texts.amendments_csv, sheets, problems.empty());
+    const auto sorted = amendments.problems.sorted();
+    problems.insert(problems.end(), sorted.begin(), sorted.end());
+    sheets.amendments = std::move(amendments.entries);
+  }
   if (!problems.empty()) throw InputError(std::move(problems));
-  return {{name, in_run_order(sequence), std::move(levels.entries)},
-          std::move(*method.method)};
+  return sheets;
 }
 
 }  // namespace loqsmith

@@ -41,8 +41,8 @@ std::vector<ElementRule> method_elements() {
        "amendments",
        "Whether manual decisions need a signature.",
        Content::Empty,
-       {defaulted("unsigned", choice({{"refused"}, {"accepted", kLater}}),
-                  "refused", "What becomes of unsigned amendments.")},
+       {defaulted("unsigned", choice({{"refused"}, {"accepted"}}), "refused",
+                  "What becomes of unsigned amendments.")},
        {}},
   };
 }

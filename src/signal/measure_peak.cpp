@@ -7,6 +7,7 @@
 #include "loqsmith/signal/estimated_baseline.hpp"
 #include "loqsmith/signal/fit_template.hpp"
 #include "loqsmith/signal/integrate.hpp"
+#include "loqsmith/signal/manual_bounds.hpp"
 #include "loqsmith/signal/own_feet.hpp"
 #include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/peak_shape.hpp"
@@ -40,8 +41,13 @@ class Measurement {
  public:
   Measurement(const Trace& trace, const TargetSettings& target,
               const WindowTemplate& window, double expected,
-              const Outcome<NoiseEstimate>& noise)
-      : target_(target), window_(window), expected_(expected), noise_(noise) {
+              const Outcome<NoiseEstimate>& noise,
+              const std::optional<ManualBounds>& manual)
+      : target_(target),
+        window_(window),
+        expected_(expected),
+        noise_(noise),
+        manual_(manual) {
     const Trace near = surroundings(trace, target, window, expected);
     model_ = noise_of_this_trace(near, noise);
     point_noise_ = model_.standard_deviation();
@@ -55,14 +61,14 @@ class Measurement {
       return NotApplicable{"window-not-covered: the trace has no points there"};
     }
     chosen_ = choose_apex(stretch_, target_, window_, expected_, model_);
-    if (chosen_.cut) {
+    if (chosen_.cut && !manual_) {
       return NotApplicable{"peak-cut: the trace does not hold both its feet"};
     }
     if (target_.integration.bounds == IntegrationSettings::Bounds::Own) {
       take_own_feet();
     }
     const Outcome<PlacedWindow> placed =
-        place(chosen_.minutes.value_or(expected_));
+        place_own(chosen_.minutes.value_or(expected_));
     if (!placed) return NotApplicable{placed.reason()};
     placed_ = *placed;
     const std::size_t points = points_in_window(stretch_, placed_);
@@ -78,6 +84,7 @@ class Measurement {
           "window-not-covered: no peak in what the trace holds of the window"};
     }
     if (!whole) add_reason("window-cut-short");
+    if (manual_) add_reason("manual-bounds");
     state_response();
     if (by(IntegrationSettings::Response::Template)) state_template();
     if (peak_.found) state_shape();
@@ -93,6 +100,12 @@ class Measurement {
   }
 
  private:
+  Outcome<PlacedWindow> place_own(double apex) const {
+    return manual_ ? place_by_hand(stretch_, *manual_,
+                                   window_.width_half_minutes, point_noise_)
+                   : place(apex);
+  }
+
   Outcome<PlacedWindow> place(double apex) const {
     return place_window_above(stretch_, chosen_.neighbours,
                               {apex, feet().left_minutes, feet().right_minutes,
@@ -117,11 +130,12 @@ class Measurement {
 
   void state_response() {
     peak_.found = chosen_.minutes.has_value();
+    peak_.manual = manual_.has_value();
     double apex = chosen_.minutes.value_or(expected_);
     if (peak_.found && is_sharp()) {
       apex = sharpened_apex(stretch_, apex, window_.width_half_minutes,
                             point_noise_ / chosen_.height);
-      const Outcome<PlacedWindow> again = place(apex);
+      const Outcome<PlacedWindow> again = place_own(apex);
       if (again) placed_ = *again;
     }
     peak_.baseline = baseline_name(target_.integration.baseline);
@@ -318,6 +332,7 @@ class Measurement {
   const WindowTemplate& window_;
   double expected_;
   const Outcome<NoiseEstimate>& noise_;
+  std::optional<ManualBounds> manual_;
   NoiseModel model_;
   double point_noise_ = 0.0;
   SmoothedStretch stretch_;
@@ -343,26 +358,32 @@ std::string refusal(const Trace& trace, const TargetSettings& target) {
 Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
                            const WindowTemplate& window, double expected,
                            const Outcome<NoiseEstimate>& noise,
-                           const std::string& noise_source) {
-  const std::string reason = refusal(trace, target);
-  if (!reason.empty()) return NotApplicable{reason};
-  Outcome<Peak> peak =
-      Measurement(trace, target, window, expected, noise).measure();
-  if (peak && noise) peak.value().noise_source = noise_source;
-  return peak;
+                           const std::string& noise_source,
+                           const std::optional<ManualBounds>& manual) {
+  return measure_peak_with_working(trace, target, window, expected, noise,
+                                   noise_source, manual)
+      .peak;
 }
 
-WorkedPeak measure_peak_with_working(const Trace& trace,
-                                     const TargetSettings& target,
-                                     const WindowTemplate& window,
-                                     double expected,
-                                     const Outcome<NoiseEstimate>& noise,
-                                     const std::string& noise_source) {
+WorkedPeak measure_peak_with_working(
+    const Trace& trace, const TargetSettings& target,
+    const WindowTemplate& window, double expected,
+    const Outcome<NoiseEstimate>& noise, const std::string& noise_source,
+    const std::optional<ManualBounds>& manual) {
   const std::string reason = refusal(trace, target);
   if (!reason.empty()) return {NotApplicable{reason}, {}};
-  Measurement measurement(trace, target, window, expected, noise);
+  const TargetSettings meant =
+      manual ? between_bounds(target, *manual) : target;
+  Measurement measurement(trace, meant, window,
+                          manual ? manual->middle() : expected, noise, manual);
   WorkedPeak worked{measurement.measure(), {}};
-  if (worked.peak && noise) worked.peak.value().noise_source = noise_source;
+  if (worked.peak) {
+    Peak& peak = worked.peak.value();
+    if (noise) peak.noise_source = noise_source;
+    peak.area_instead =
+        peak.area_instead ||
+        (manual && target.integration.response != meant.integration.response);
+  }
   worked.working = measurement.hand_over();
   return worked;
 }

@@ -239,9 +239,6 @@ std::vector<MethodCase> unavailable() {
   return {
       later("extracted trace", "kind=\"srm\"", "kind=\"extracted\"",
             "kind=\"extracted\"", "not available in this version"),
-      later("unsigned amendments", "<limits ",
-            "<amendments unsigned=\"accepted\"/><limits ", "unsigned",
-            "not available in this version"),
   };
 }
 

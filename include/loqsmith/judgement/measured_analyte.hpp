@@ -22,6 +22,7 @@ struct InjectionResponse {
   /// Area of the internal standard, referred to the undiluted one; nothing: no
   /// internal standard, or no peak of it above zero.
   std::optional<double> internal_standard_area = {};
+  bool excluded = false;  ///< a standard that people left out of the fit
 };
 
 /// One analyte of the night, before anything is judged. In run order.

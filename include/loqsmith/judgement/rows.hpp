@@ -16,6 +16,13 @@
 
 namespace loqsmith {
 
+/// What the program says of a result without any amendment.
+struct AutomaticResult {
+  std::optional<double> result;
+  Status status = Status::Withheld;
+  std::string reported;
+};
+
 /// One row of results.csv. Limits are this sample's own.
 struct ResultRow {
   int injection = 0;
@@ -45,6 +52,7 @@ struct ResultRow {
   double response_divisor = 1.0;  ///< what the peak's response was divided by
   std::optional<double> range_end = {};  ///< in the sample
   std::string rule = {};  ///< the verdict rule that decided, in words
+  std::optional<AutomaticResult> automatic;  ///< where an amendment touched it
 };
 
 /// One row of checks.csv.

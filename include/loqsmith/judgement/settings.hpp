@@ -2,6 +2,7 @@
 
 #include <map>
 #include <optional>
+#include <set>
 #include <string>
 
 #include "loqsmith/calibration/settings.hpp"
@@ -184,6 +185,14 @@ struct UnitSettings {
 /// What of a peak the response is.
 enum class ResponseKind { Area, Height, Template };
 
+/// What people decided about one analyte's results, otherwise than the method
+/// and the program would have. By injection.
+struct ManualDecisions {
+  std::set<int> excluded_standards;  ///< not in the fit
+  std::set<int> invalid_injections;  ///< as if they had not been measured
+  std::map<int, Status> statuses;
+};
+
 /// Everything that judging one analyte needs of the method, the analyte's own
 /// settings already merged over the method's.
 struct AnalyteRules {
@@ -200,6 +209,7 @@ struct AnalyteRules {
   LimitSettings limits;
   AcceptanceSettings acceptance;
   ReportingSettings reporting;
+  ManualDecisions decisions = {};
 };
 
 }  // namespace loqsmith

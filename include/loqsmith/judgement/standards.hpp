@@ -17,6 +17,7 @@ struct OfferedStandards {
 /// whose level does not contain the analyte is not one of its standards.
 ///
 /// Not used in the fit, with the reason as first word of the note:
+/// - "excluded-by-amendment": people left it out;
 /// - "saturated", "internal-standard-saturated": the response is too small;
 /// - "peak-not-found" above concentration zero: what nobody can see in a
 ///   standard must not count as the lowest level, for the quantitation limit

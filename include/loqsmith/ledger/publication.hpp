@@ -2,6 +2,7 @@
 
 #include <chrono>
 #include <filesystem>
+#include <functional>
 #include <memory>
 #include <string>
 #include <utility>
@@ -9,6 +10,7 @@
 
 #include "loqsmith/base/ed25519.hpp"
 #include "loqsmith/ledger/ledger.hpp"
+#include "loqsmith/ledger/run_history.hpp"
 
 namespace loqsmith {
 
@@ -39,12 +41,15 @@ class RunAtWork {
   ///                folder is refused: InputError.
   /// @param method  noted after the run-begun line where it is new to OUT or
   ///                has changed (method_seen.hpp); null: nothing is noted
+  /// @param consider  called before anything is written, with the published
+  ///                  runs of the sequence; what it throws ends the matter.
   /// @throws Halt 75 when the same sequence is at work elsewhere.
   static RunAtWork begin(
       const PublicationPlace& place, const std::string& sequence,
       const std::string& folder,
       const std::vector<std::pair<std::string, std::string>>& detail,
-      const MethodSeen* method = nullptr);
+      const MethodSeen* method = nullptr,
+      const std::function<void(const std::vector<RunEvents>&)>& consider = {});
 
   RunAtWork(RunAtWork&&) noexcept;
   RunAtWork& operator=(RunAtWork&&) noexcept;

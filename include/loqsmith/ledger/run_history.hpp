@@ -22,6 +22,7 @@ struct RunEvents {
   std::uint64_t published = 0;
   std::uint64_t abandoned = 0;
   std::string manifest;
+  std::string amendments_sha256;  ///< of its amendments.csv; empty: had none
 
   bool pending() const { return published == 0 && abandoned == 0; }
 };

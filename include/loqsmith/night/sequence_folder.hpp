@@ -18,7 +18,8 @@ struct SequenceFolder {
   std::vector<std::string> unlisted_files;  ///< in no row, no sheet; sorted
 };
 
-/// Reads sequence.csv, levels.csv and method.xml and checks that no path of
+/// Reads sequence.csv, levels.csv, method.xml and, where it is there,
+/// amendments.csv (not yet worked into the method) and checks that no path of
 /// the sequence sheet leaves the folder.
 ///
 /// @throws InputError with all problems of all sheets: the sequence cannot be

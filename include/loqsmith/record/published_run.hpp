@@ -10,6 +10,7 @@
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/peak.hpp"
 #include "loqsmith/chromatogram/sequence.hpp"
+#include "loqsmith/judgement/amendment.hpp"
 #include "loqsmith/judgement/rows.hpp"
 #include "loqsmith/sheets/method.hpp"
 #include "loqsmith/signal/learn.hpp"
@@ -51,6 +52,21 @@ struct FigureCurve {
   std::string signal_unit = {};  ///< empty: not stated
 };
 
+/// An earlier published run of the same sequence.
+struct EarlierRun {
+  std::string run;    ///< "well-water-0412/run-0001"
+  std::string begun;  ///< RFC 3339 UTC
+  bool amended = false;
+};
+
+/// A result that is reported otherwise than in the last run. Empty: none.
+struct ReportedChange {
+  int injection = 0;
+  std::string analyte;
+  std::string was;
+  std::string is;
+};
+
 /// Everything one published run says.
 struct PublishedRun {
   Sequence sequence;
@@ -70,6 +86,11 @@ struct PublishedRun {
   std::vector<AnalyteJudgement> analytes;
   std::vector<CheckRow> sequence_checks;
   std::vector<FigureCurve> curves;
+  std::vector<Amendment> amendments;  ///< as the sheet has them
+  std::vector<EarlierRun> earlier_runs;
+  std::vector<ReportedChange> reported_changes;  ///< since the last of them
+  std::string
+      not_compared;  ///< why there are no changes known; empty: they are
 };
 
 /// True where something was withheld or needs a person (exit status 1).

@@ -9,6 +9,13 @@ namespace loqsmith {
 // open. A number that does not exist is null, or its object holds one member
 // `not_applicable` with the reason.
 
+/// `amendments`: what people decided, each row of the sheet.
+void record_amendments(JsonWriter& json, const PublishedRun& run);
+
+/// `earlier_runs`, `reported_changes`, and `not_compared` where those could not
+/// be found.
+void record_earlier_runs(JsonWriter& json, const PublishedRun& run);
+
 /// `program`, `sequence`, `run`, `begun`, `finished`, `ledger_head`, `method`,
 /// `inputs`, `problems`.
 void record_provenance(JsonWriter& json, const PublishedRun& run);

@@ -13,6 +13,11 @@ namespace loqsmith {
 
 /// Sequence, method, times, fingerprints, links to the sections.
 void report_head(std::ostream& out, const PublishedRun& run);
+/// What people decided, and each result that it touches, automatic and amended;
+/// nothing where nobody decided anything.
+void report_amendments(std::ostream& out, const PublishedRun& run);
+/// Earlier runs of the sequence and what is reported otherwise since the last.
+void report_earlier_runs(std::ostream& out, const PublishedRun& run);
 /// "What needs a person", each linked to its place.
 void report_attention(std::ostream& out, const PublishedRun& run);
 /// Samples by analytes, then blanks, standards and controls.

@@ -1,10 +1,13 @@
 #pragma once
 
+#include <map>
+#include <set>
 #include <string>
 #include <vector>
 
 #include "loqsmith/chromatogram/trace_selector.hpp"
 #include "loqsmith/judgement/settings.hpp"
+#include "loqsmith/signal/manual_bounds.hpp"
 #include "loqsmith/signal/settings.hpp"
 
 namespace loqsmith {
@@ -27,6 +30,12 @@ struct AnalyteSettings : AnalyteRules {
   TargetSettings target;
 };
 
+/// What people decided about one target's peaks.
+struct TargetDecisions {
+  std::set<int> never_teach;           ///< injections
+  std::map<int, ManualBounds> bounds;  ///< by injection
+};
+
 /// method.xml, whole and merged.
 struct Method {
   std::string id;
@@ -39,6 +48,9 @@ struct Method {
   std::vector<InternalStandardSettings> internal_standards;
   std::vector<AnalyteSettings> analytes;  ///< in the method's order
   std::vector<DefaultUsed> defaults_used;
+  bool unsigned_amendments_accepted = false;
+  /// Of analytes and internal standards, by id; none before amended().
+  std::map<std::string, TargetDecisions> decisions = {};
 
   const TraceSelector* trace(const std::string& trace_id) const;
   const InternalStandardSettings* internal_standard(

@@ -1,11 +1,13 @@
 #pragma once
 
 #include <filesystem>
+#include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
 
 #include "loqsmith/chromatogram/sequence.hpp"
+#include "loqsmith/judgement/amendment.hpp"
 #include "loqsmith/sheets/method.hpp"
 
 namespace loqsmith {
@@ -15,11 +17,13 @@ struct SheetTexts {
   std::string sequence_csv;
   std::string levels_csv;
   std::string method_xml;
+  std::optional<std::string> amendments_csv = {};  ///< nothing: no such sheet
 };
 
 struct Sheets {
   Sequence sequence;
-  Method method;
+  Method method;                           ///< without the amendments
+  std::vector<Amendment> amendments = {};  ///< as the rows stand
 };
 
 /// Parses and validates all sheets against each other.

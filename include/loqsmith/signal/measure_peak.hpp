@@ -1,11 +1,13 @@
 #pragma once
 
+#include <optional>
 #include <string>
 
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/peak.hpp"
 #include "loqsmith/chromatogram/trace.hpp"
 #include "loqsmith/signal/learn.hpp"
+#include "loqsmith/signal/manual_bounds.hpp"
 #include "loqsmith/signal/noise.hpp"
 #include "loqsmith/signal/settings.hpp"
 
@@ -50,6 +52,10 @@ namespace loqsmith {
 /// reason where that trace is too short; signal-to-noise is stated for found
 /// peaks only.
 ///
+/// Between bounds set by hand the area is that over exactly these (see
+/// manual_bounds.hpp), `manual` holds and the reason "manual-bounds" says so;
+/// the target is looked for between them.
+///
 /// @param noise         of the source that the settings name; may be absent
 /// @param noise_source  "blank 3" or "same trace"
 /// @return not applicable (a reason word, then words): "window-not-covered",
@@ -59,6 +65,7 @@ namespace loqsmith {
 Outcome<Peak> measure_peak(const Trace& trace, const TargetSettings& target,
                            const WindowTemplate& window, double expected,
                            const Outcome<NoiseEstimate>& noise,
-                           const std::string& noise_source);
+                           const std::string& noise_source,
+                           const std::optional<ManualBounds>& manual = {});
 
 }  // namespace loqsmith

@@ -6,6 +6,7 @@
 #include "loqsmith/base/outcome.hpp"
 #include "loqsmith/chromatogram/peak.hpp"
 #include "loqsmith/signal/fit_template.hpp"
+#include "loqsmith/signal/manual_bounds.hpp"
 #include "loqsmith/signal/parted_peak.hpp"
 #include "loqsmith/signal/place_window.hpp"
 #include "loqsmith/signal/summits.hpp"
@@ -29,11 +30,10 @@ struct WorkedPeak {
 };
 
 /// measure_peak() with its working kept.
-WorkedPeak measure_peak_with_working(const Trace& trace,
-                                     const TargetSettings& target,
-                                     const WindowTemplate& window,
-                                     double expected,
-                                     const Outcome<NoiseEstimate>& noise,
-                                     const std::string& noise_source);
+WorkedPeak measure_peak_with_working(
+    const Trace& trace, const TargetSettings& target,
+    const WindowTemplate& window, double expected,
+    const Outcome<NoiseEstimate>& noise, const std::string& noise_source,
+    const std::optional<ManualBounds>& manual = {});
 
 }  // namespace loqsmith
