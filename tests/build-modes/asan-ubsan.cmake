@@ -10,3 +10,4 @@ set(CMAKE_CXX_FLAGS_DEBUG
     "-O0 -g1 -fno-omit-frame-pointer -fsanitize=address,undefined -fno-sanitize-recover=undefined"
     CACHE STRING "")
 set(LOQSMITH_BUSY_ROOM_FLAGS "-O1" CACHE STRING "")
+set(LOQSMITH_PRECOMPILED_STANDARD ON CACHE BOOL "")
