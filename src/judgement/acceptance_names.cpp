@@ -5,9 +5,6 @@ namespace {
 
 using Settings = AcceptanceSettings;
 
-// A method that has the child is refused before it comes here.
-bool never(const Settings&) { return false; }
-
 }  // namespace
 
 const std::vector<AcceptanceCheck>& acceptance_checks() {
@@ -34,7 +31,8 @@ const std::vector<AcceptanceCheck>& acceptance_checks() {
        [](const Settings& s) { return s.suitability.has_value(); }},
       {"carry-over",
        [](const Settings& s) { return s.carry_over.has_value(); }},
-      {"second-trace", never},
+      {"second-trace",
+       [](const Settings& s) { return s.second_trace.has_value(); }},
       {"established-limit",
        [](const Settings& s) { return s.established_limit.has_value(); }},
       {"confirmation",

@@ -31,6 +31,7 @@ std::vector<MeasuredInjection> without_invalid(
     if (!invalid.contains(one.injection->number)) continue;
     one.peak = NotApplicable{"invalid-injection: by an amendment"};
     if (one.internal_standard) one.internal_standard = one.peak;
+    if (one.second_trace) one.second_trace = one.peak;
   }
   return injections;
 }
@@ -72,6 +73,7 @@ MeasuredAnalyte collect_responses(
         nominal_of(*measured.injection, sequence, settings.analyte),
         measured.expected_minutes,
         undiluted_internal_standard(measured, ResponseKind::Area),
+        measured.second_trace,
         decisions.excluded_standards.contains(measured.injection->number)};
     analyte.injections.push_back(std::move(one));
   }

@@ -38,6 +38,7 @@ constexpr auto kDoubtful = std::to_array<std::string_view>({
     "fortified-failed",
     "duplicate-failed",
     "internal-standard-failed",
+    "second-trace-failed",
     "method-blank-failed",
     "solvent-blank-failed",
     "carry-over-failed",

@@ -10,6 +10,7 @@
 #include "loqsmith/judgement/method_blank_check.hpp"
 #include "loqsmith/judgement/retention_time_check.hpp"
 #include "loqsmith/judgement/second_source_check.hpp"
+#include "loqsmith/judgement/second_trace_check.hpp"
 #include "loqsmith/judgement/solvent_blank_check.hpp"
 #include "loqsmith/judgement/suitability_check.hpp"
 #include "loqsmith/judgement/surrogate_check.hpp"
@@ -30,6 +31,7 @@ const std::vector<ResultCheck>& result_checks() {
       check_retention_times,
       check_suitability,
       check_carry_over,
+      check_second_trace,
       // clang-format on
   };
   return checks;

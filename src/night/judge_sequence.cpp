@@ -26,6 +26,10 @@ MeasuredInjection measured_of(const Learned& learned,
   MeasuredInjection injection{&row, measured.peaks[own], std::nullopt,
                               measured.signal_units[own]};
   injection.expected_minutes = measured.expected_minutes[own];
+  if (analyte.second_target) {
+    injection.second_trace =
+        measured.peaks[place_of(learned, analyte.second_target->id)];
+  }
   if (analyte.internal_standard.empty()) return injection;
   const std::size_t standard = place_of(learned, analyte.internal_standard);
   injection.internal_standard = measured.peaks[standard];

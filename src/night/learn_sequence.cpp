@@ -93,7 +93,10 @@ FileLesson learn_from_file(const SequenceFolder& folder, const FileTask& task,
       folder, task, visit, targets,
       [](const Injection& injection) { return may_teach(injection.role); },
       [&](const Injection& injection, std::size_t target, const Trace& trace) {
-        if (!holds_target(folder.sheets, injection, targets[target].id)) return;
+        if (!holds_target(folder.sheets, injection,
+                          targets[target].substance())) {
+          return;
+        }
         const Outcome<TeacherPeak> peak = observe_teacher(
             trace, targets[target], injection.number, injection.role);
         if (peak) lesson.seen.push_back({target, *peak});
@@ -248,6 +251,9 @@ std::vector<TargetSettings> method_targets(const Method& method) {
   }
   for (const AnalyteSettings& analyte : method.analytes) {
     targets.push_back(analyte.target);
+  }
+  for (const AnalyteSettings& analyte : method.analytes) {
+    if (analyte.second_target) targets.push_back(*analyte.second_target);
   }
   return targets;
 }

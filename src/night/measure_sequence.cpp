@@ -139,8 +139,8 @@ class InjectionAtWork {
     }
     const Outcome<WindowTemplate>& window = learned_.windows[index];
     if (!window) return NotApplicable{"not-learned: " + window.reason()};
-    const double expected =
-        expected_minutes(*window, injection_.number) + shift_for(target.id);
+    const double expected = expected_minutes(*window, injection_.number) +
+                            shift_for(target.substance());
     result_.expected_minutes.back() = expected;
     const NoiseFor noise =
         noise_for(learned_, index, *trace, injection_.number, expected);

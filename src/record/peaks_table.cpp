@@ -64,7 +64,7 @@ std::vector<std::string> absent_cells(int injection, const std::string& target,
   return cells;
 }
 
-// Internal standards, then analytes, both in the method's order.
+// Internal standards, analytes, second traces, each in the method's order.
 std::vector<std::string> targets_of(const Method& method) {
   std::vector<std::string> targets;
   for (const InternalStandardSettings& standard : method.internal_standards) {
@@ -72,6 +72,9 @@ std::vector<std::string> targets_of(const Method& method) {
   }
   for (const AnalyteSettings& analyte : method.analytes) {
     targets.push_back(analyte.target.id);
+  }
+  for (const AnalyteSettings& analyte : method.analytes) {
+    if (analyte.second_target) targets.push_back(analyte.second_target->id);
   }
   return targets;
 }

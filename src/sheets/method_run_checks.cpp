@@ -52,6 +52,9 @@ void read_run_checks(const AcceptanceChild& child,
   if (const auto found = child("suitability")) {
     settings.suitability = suitability_check(*found);
   }
+  if (const auto found = child("second-trace")) {
+    settings.second_trace = {check_action(*found)};
+  }
   if (const auto found = child("carry-over")) {
     settings.carry_over = {check_action(*found), found->number("maximum")};
   }

@@ -91,6 +91,15 @@ AnalyteSettings analyte_settings(const MethodElement& analyte,
   tell_judgement(settings);
   const Section section(*analyte.rule, &analyte);
   settings.internal_standard = section.text("internal-standard").value_or("");
+  if (const MethodElement* second = analyte.child("second-trace")) {
+    const Section stated(*second->rule, second);
+    settings.second_trace =
+        SecondTraceRule{stated.number("ratio"), stated.number("tolerance")};
+    settings.second_target = settings.target;
+    settings.second_target->id += " (second trace)";
+    settings.second_target->second_trace_of = settings.target.id;
+    settings.second_target->trace = stated.value("trace");
+  }
   settings.surrogate_concentration =
       section.optional_number("surrogate-concentration");
   settings.calibration = calibration_settings(analyte.child("calibration"),

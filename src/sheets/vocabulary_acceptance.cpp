@@ -116,7 +116,7 @@ std::vector<ElementRule> injection_checks() {
                        "Percent of the lowest standard's response.")},
             kFlag, kNow),
       check("acceptance/second-trace", "The ratio of the two traces.", {},
-            kWithhold, kLater),
+            kWithhold, kNow),
   };
 }
 

@@ -143,8 +143,7 @@ std::vector<ElementRule> analyte_elements() {
         required("ratio", number(above(0.0)),
                  "Response of the second trace over that of the first."),
         required("tolerance", number(above(0.0)), "Percent of the ratio.")},
-       {},
-       kLater},
+       {}},
   };
 }
 

@@ -14,6 +14,15 @@ void write_file(const std::filesystem::path& path, const std::string& text) {
   std::ofstream(path, std::ios::binary) << text;
 }
 
+MzmlTrace written(const std::string& id, const Trace& simulated) {
+  MzmlTrace trace;
+  trace.id = id;
+  trace.type = "MS:1000812";
+  trace.times = simulated.minutes;
+  trace.signal = simulated.signal;
+  return trace;
+}
+
 std::string document(const SmallNight& night, const SmallInjection& injection,
                      const std::string& name) {
   SimulatedTrace wanted;
@@ -21,13 +30,13 @@ std::string document(const SmallNight& night, const SmallInjection& injection,
   wanted.white_noise = night.noise_sd;
   wanted.peaks = {{3.0 + injection.shift_minutes, 0.05, injection.area},
                   {4.5, 0.05, injection.internal_standard_area}};
-  const Trace simulated = simulate_trace(wanted, name);
-  MzmlTrace trace;
-  trace.id = "uv";
-  trace.type = "MS:1000812";
-  trace.times = simulated.minutes;
-  trace.signal = simulated.signal;
-  return mzml_document(std::vector<MzmlTrace>{trace});
+  std::vector<MzmlTrace> traces{written("uv", simulate_trace(wanted, name))};
+  if (night.has_second_trace) {
+    wanted.peaks = {
+        {3.0 + injection.shift_minutes, 0.05, injection.second_area}};
+    traces.push_back(written("fl", simulate_trace(wanted, name + " fl")));
+  }
+  return mzml_document(traces);
 }
 
 }  // namespace

@@ -20,6 +20,7 @@ struct SmallInjection {
   double internal_standard_area = 0.0;
   double internal_standard_dilution = 1.0;
   std::string prep = {};
+  double second_area = 0.0;  ///< on the trace "fl", where there is one
   double shift_minutes = 0.0;  ///< of the analyte's peak alone
 };
 
@@ -28,6 +29,7 @@ struct SmallNight {
   double noise_sd = 0.0;  ///< of a point, white, its own in each injection
   std::vector<std::pair<std::string, double>> levels;
   std::vector<SmallInjection> injections;
+  bool has_second_trace = false;  ///< "fl" beside "uv"
 
   /// Writes the folder with its sheets and one mzML file an injection.
   void write(const std::filesystem::path& folder) const;

@@ -135,6 +135,63 @@ TEST(InternalStandard, NotCheckedWithoutOne) {
   EXPECT_EQ(outcomes(night.judge(), "internal-standard"), "?");
 }
 
+// The second trace shows half of the first, 20 % more or less allowed.
+NightBuilder with_second_trace() {
+  NightBuilder night = checked_night();
+  night.settings.second_trace = SecondTraceRule{0.5, 20.0};
+  night.settings.acceptance.second_trace.emplace();
+  for (NightRow& row : night.rows) {
+    const Peak& first = row.peak.value();
+    row.second_trace = peak_of(0.5 * first.area, first.found);
+  }
+  return night;
+}
+
+// A sample with an area of 10 in its first trace.
+void sample_with_second(NightBuilder& night, double area, bool found = true) {
+  sample(night, 5.0).second_trace = peak_of(area, found);
+}
+
+TEST(SecondTrace, WithholdsWhereTheRatioDiffers) {
+  NightBuilder night = with_second_trace();
+  sample_with_second(night, 5.0);         // 15
+  sample_with_second(night, 4.0);         // 16: at the tolerance
+  sample_with_second(night, 6.0);         // 17: at the tolerance
+  sample_with_second(night, 3.9);         // 18
+  sample_with_second(night, 6.1);         // 19
+  sample_with_second(night, 0.1, false);  // 20: no peak
+  sample(night, 5.0).second_trace = NotApplicable{"trace-missing: none"};  // 21
+  night.add(Role::Sample, 0.0, false).second_trace = peak_of(9.0);  // no peak
+  const AnalyteJudgement judgement = night.judge();
+  const std::vector<CheckRow> rows = rows_of(judgement.checks, "second-trace");
+  EXPECT_EQ(outcomes(judgement, "second-trace"), "+----");
+  EXPECT_TRUE(agrees_to_digits(rows[1].value.value(), 78.0, 12));
+  EXPECT_EQ(rows[1].low, 80.0);
+  EXPECT_EQ(rows[1].high, 120.0);
+  EXPECT_EQ(rows[3].note, "no peak in the second trace");
+  EXPECT_EQ(rows[4].note, "second trace: trace-missing: none");
+  EXPECT_EQ(marked(judgement, "second-trace-failed"), "18 19 20 21");
+  EXPECT_EQ(result_of(judgement, 17).status, Status::Reportable);
+  EXPECT_EQ(result_of(judgement, 18).status, Status::Withheld);
+}
+
+TEST(SecondTrace, GoesByHeightWhereTheResponseDoes) {
+  NightBuilder night = with_second_trace();
+  night.settings.response = ResponseKind::Height;
+  Peak second = peak_of(5.0);
+  second.height = 30.0;
+  sample(night, 5.0).second_trace = second;
+  EXPECT_EQ(outcomes(night.judge(), "second-trace"), "-");
+  night.settings.response = ResponseKind::Area;
+  EXPECT_EQ(outcomes(night.judge(), "second-trace"), "+");
+}
+
+TEST(SecondTrace, NotCheckedWithoutOne) {
+  NightBuilder night = checked_night();
+  night.settings.acceptance.second_trace.emplace();
+  EXPECT_EQ(outcomes(night.judge(), "second-trace"), "?");
+}
+
 // A sample found at 4.2 min.
 void sample_expected_at(NightBuilder& night, std::optional<double> minutes) {
   sample(night, 5.0).expected_minutes = minutes;

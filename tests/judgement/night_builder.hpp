@@ -27,6 +27,7 @@ struct NightRow {
   std::optional<Outcome<Peak>> internal_standard;
   std::string signal_unit = {};
   std::optional<double> expected_minutes = {};
+  std::optional<Outcome<Peak>> second_trace = {};
 };
 
 /// One analyte "zinol" of a night, put together by hand. The detector gives an
@@ -75,7 +76,7 @@ class NightBuilder {
       if (rows[i].injection.role == Role::Conditioning) continue;
       measured_.push_back({&sequence.injections[i], rows[i].peak,
                            rows[i].internal_standard, rows[i].signal_unit,
-                           rows[i].expected_minutes});
+                           rows[i].expected_minutes, rows[i].second_trace});
     }
     return measured_;
   }

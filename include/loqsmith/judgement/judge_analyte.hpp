@@ -25,6 +25,8 @@ struct MeasuredInjection {
   std::string signal_unit = {};
   /// Where the peak was expected, corrected for drift; nothing: not known.
   std::optional<double> expected_minutes = {};
+  /// Nothing: the analyte has no second trace.
+  std::optional<Outcome<Peak>> second_trace = {};
 };
 
 /// From responses to verdicts: responses (area, height or ratio to the

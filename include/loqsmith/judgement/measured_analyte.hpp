@@ -22,6 +22,8 @@ struct InjectionResponse {
   /// Area of the internal standard, referred to the undiluted one; nothing: no
   /// internal standard, or no peak of it above zero.
   std::optional<double> internal_standard_area = {};
+  /// Nothing: the analyte has no second trace.
+  std::optional<Outcome<Peak>> second_trace = {};
   bool excluded = false;  ///< a standard that people left out of the fit
 };
 

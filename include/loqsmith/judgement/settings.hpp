@@ -127,6 +127,16 @@ struct ClosenessAcceptance {
   double replicates = 20.0;  ///< largest difference in range, percent
 };
 
+struct SecondTraceAcceptance {
+  CheckAction action = CheckAction::Withhold;
+};
+
+/// `<second-trace>` of an analyte.
+struct SecondTraceRule {
+  double ratio = 0.0;              ///< second over first response, > 0
+  double tolerance_percent = 0.0;  ///< of the ratio, > 0
+};
+
 /// `<acceptance>`: an absent child is not checked, and checks.csv says so.
 struct AcceptanceSettings {
   std::optional<CalibrationAcceptance> calibration;
@@ -139,6 +149,7 @@ struct AcceptanceSettings {
   std::optional<SolventBlankAcceptance> solvent_blank;
   std::optional<MethodBlankAcceptance> method_blank;
   std::optional<InternalStandardAcceptance> internal_standard;
+  std::optional<SecondTraceAcceptance> second_trace;
   std::optional<RetentionTimeAcceptance> retention_time;
   std::optional<SuitabilityAcceptance> suitability;
   std::optional<CarryOverAcceptance> carry_over;
@@ -202,6 +213,7 @@ struct AnalyteRules {
   bool baseline_biased = false;  ///< asymmetric least squares or snip
   NoiseMeasure noise_measure = NoiseMeasure::HalfPeakToPeak;
   std::string internal_standard;  ///< id; empty: external calibration
+  std::optional<SecondTraceRule> second_trace;
   /// Makes it a surrogate: added to every prepared vial, this concentration in
   /// the undiluted one.
   std::optional<double> surrogate_concentration;

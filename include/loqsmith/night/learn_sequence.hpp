@@ -23,7 +23,7 @@ struct BlankNoise {
 
 /// What the first pass fixes before anything is measured.
 struct Learned {
-  /// Internal standards, then analytes, in the method's order.
+  /// Internal standards, analytes, second traces, each in the method's order.
   std::vector<TargetSettings> targets;
   std::vector<Outcome<WindowTemplate>> windows;  ///< one a target
   std::vector<std::vector<BlankNoise>>
@@ -36,7 +36,7 @@ struct Learned {
   std::map<std::string, std::string> hashes;
 };
 
-/// Internal standards first, then analytes.
+/// Internal standards first, then analytes, then their second traces.
 std::vector<TargetSettings> method_targets(const Method& method);
 
 /// The learning pass: standards, check standards and controls teach windows

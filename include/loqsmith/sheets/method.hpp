@@ -1,6 +1,7 @@
 #pragma once
 
 #include <map>
+#include <optional>
 #include <set>
 #include <string>
 #include <vector>
@@ -28,6 +29,8 @@ struct InternalStandardSettings {
 /// judged, its own settings already merged over the method's.
 struct AnalyteSettings : AnalyteRules {
   TargetSettings target;
+  /// The same peak in the second trace; there with `second_trace`.
+  std::optional<TargetSettings> second_target;
 };
 
 /// What people decided about one target's peaks.

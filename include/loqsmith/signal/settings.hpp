@@ -57,6 +57,13 @@ struct TargetSettings {
   double window_minutes = 0.2;     ///< plus or minus
   IntegrationSettings integration;
   NoiseSettings noise;
+  /// The analyte whose second trace this is; empty: none.
+  std::string second_trace_of = {};
+
+  /// What levels and amendments call it.
+  const std::string& substance() const {
+    return second_trace_of.empty() ? id : second_trace_of;
+  }
 };
 
 }  // namespace loqsmith
