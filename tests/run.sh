@@ -31,5 +31,4 @@ ctest --test-dir build/release -j 2 --output-on-failure --no-tests=error
 echo "Sanitizers: building"
 build build/asan-ubsan -C tests/build-modes/asan-ubsan.cmake
 echo "Sanitizers: testing"
-ctest --test-dir build/asan-ubsan -j 2 --output-on-failure --no-tests=error \
-  -LE slow
+ctest --test-dir build/asan-ubsan -j 2 --output-on-failure --no-tests=error
