@@ -46,7 +46,7 @@ std::string time_values(const Detector& detector, AnimlFile::Times style,
   }
   if (style == AnimlFile::Times::EncodedSeconds) {
     return "<EncodedValueSet " + index_range(length) + ">" +
-           base64(packed_doubles(times)) + "</EncodedValueSet>";
+           base64_text(packed_doubles(times)) + "</EncodedValueSet>";
   }
   std::string set = "<IndividualValueSet " + index_range(length) + ">";
   for (const double time : times) set += "<D>" + shortest(time) + "</D>";
@@ -69,7 +69,7 @@ std::string signal_series(const std::vector<double>& signal,
   std::string set;
   if (style == AnimlFile::Signal::Encoded) {
     set = "<EncodedValueSet " + index_range(signal.size()) + ">" +
-          base64(packed_floats(signal)) + "</EncodedValueSet>";
+          base64_text(packed_floats(signal)) + "</EncodedValueSet>";
   } else {
     set = "<IndividualValueSet " + index_range(signal.size()) + ">";
     for (const double value : signal) {

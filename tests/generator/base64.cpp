@@ -18,7 +18,7 @@ void append_little_endian(std::string& out, std::uint64_t bits, int width) {
 
 }  // namespace
 
-std::string base64(std::string_view bytes) {
+std::string base64_text(std::string_view bytes) {
   std::string out;
   for (std::size_t i = 0; i < bytes.size(); i += 3) {
     std::uint32_t group = 0;

@@ -57,7 +57,7 @@ std::string cv_param(const Term& term, const std::string& value = "") {
 
 std::string data_array(const std::string& packed, const Term& type,
                        const Term& kind) {
-  const std::string text = base64(deflated(packed));
+  const std::string text = base64_text(deflated(packed));
   return "          <binaryDataArray encodedLength=\"" +
          std::to_string(text.size()) + "\">\n            " + cv_param(type) +
          "            " + cv_param(kZlib) + "            " + cv_param(kind) +
